@@ -1,0 +1,62 @@
+import type { Metadata } from "next";
+import { notFound, redirect } from "next/navigation";
+import { getTranslations } from "next-intl/server";
+import { CaseLineView } from "@/components/sheet/case-line";
+import { ConditionCard } from "@/components/sheet/condition-card";
+import { EvidenceCard } from "@/components/sheet/evidence-card";
+import { FlagList } from "@/components/sheet/flag-list";
+import { LineCard } from "@/components/sheet/line-card";
+import { Record } from "@/components/sheet/record";
+import { SentNote } from "@/components/sheet/sent-note";
+import { SheetActions } from "@/components/sheet/sheet-actions";
+import { SheetHead } from "@/components/sheet/sheet-head";
+import { Talk } from "@/components/sheet/talk";
+import { VerdictCard } from "@/components/sheet/verdict-card";
+import { listColleagues } from "@/lib/claims/judging/queries";
+import { claimPath, draftStepPath } from "@/lib/claims/paths";
+import { findClaimSheet } from "@/lib/claims/reading/queries";
+import { requireSession } from "@/lib/web/session";
+import { parkAction, putBackAction, takeAction, takeOverAction, withdrawAction } from "./actions";
+
+type Props = { params: Promise<{ number: string }>; searchParams: Promise<{ sent?: string }> };
+
+export async function generateMetadata({ params }: Props): Promise<Metadata> {
+  const { number } = await params;
+  return { title: decodeURIComponent(number).slice(0, 12) };
+}
+
+/** The one page of a claim: facts, evidence, talk, money and record, each side seeing what is its own. */
+export default async function ClaimSheetPage({ params, searchParams }: Props) {
+  const [session, { number }, { sent }] = await Promise.all([requireSession(), params, searchParams]);
+  const { actor } = session;
+  const digits = number.replace(/\D/gu, "");
+  const sheet = digits.length === 8 ? await findClaimSheet(actor, digits) : null;
+  if (!sheet) notFound();
+  if (sheet.state === "draft") redirect(draftStepPath({ number: digits }, "part"));
+  const colleagues = sheet.moves.includes("decide") ? await listColleagues(actor) : [];
+  const actions = { take: takeAction, takeOver: takeOverAction, putBack: putBackAction, park: parkAction, withdraw: withdrawAction };
+  const shared = { sheet, locale: actor.locale, timeZone: actor.timeZone };
+  return (
+    <>
+      {sent && sheet.side === "workshop" ? <SentNote {...shared} /> : null}
+      <SheetHead {...shared} />
+      <SheetActions sheet={sheet} base={claimPath({ number: digits })} colleagues={colleagues} actions={actions} />
+      <FlagList {...shared} />
+      <CaseLineView {...shared} />
+      <div className="grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
+        <div className="grid min-w-0 gap-6">
+          {sheet.verdicts[0] ? <VerdictCard {...shared} verdict={sheet.verdicts[0]} /> : null}
+          {sheet.lines.map((line) => (
+            <LineCard key={line.lineNumber} line={line} {...shared} />
+          ))}
+          <EvidenceCard {...shared} />
+          <ConditionCard {...shared} />
+        </div>
+        <div className="grid min-w-0 gap-6">
+          <Talk number={sheet.number} initial={sheet.messages} locale={actor.locale} timeZone={actor.timeZone} />
+          <Record {...shared} />
+        </div>
+      </div>
+    </>
+  );
+}

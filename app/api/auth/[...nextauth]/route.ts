@@ -1,0 +1,12 @@
+import NextAuth from "next-auth";
+import type { NextRequest } from "next/server";
+import { authOptions } from "@/lib/web/auth";
+
+type Context = { params: Promise<{ nextauth: string[] }> };
+
+const handler = (request: NextRequest, context: Context): Promise<Response> => {
+  const answer: unknown = NextAuth(request, context, authOptions());
+  return answer as Promise<Response>;
+};
+
+export { handler as GET, handler as POST };

@@ -1,0 +1,162 @@
+"use client";
+
+import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
+import { useTranslations } from "next-intl";
+import { useCallback, useId, useState } from "react";
+import { useDropzone } from "react-dropzone";
+import { fetchJson } from "@/components/live/fetch-json";
+import { Button } from "@/components/ui/button";
+import { buttonStyle } from "@/components/ui/button-style";
+import { UploadRow } from "@/components/ui/upload-row";
+import type { EvidenceFileItem } from "./file-item";
+import { SentFile } from "./sent-file";
+import { faultOf, sendFile, type Upload } from "./upload";
+
+type FileRowProps = {
+  claimId: string;
+  number: string;
+  rowId: string;
+  kind: "photo" | "runLog" | "document";
+  files: readonly EvidenceFileItem[];
+};
+
+type Sending = { id: string; file: File; percent: number; fault: { sentence: string | null; canRetry: boolean } | null; upload: Upload | null };
+
+const ACCEPT = {
+  photo: "image/jpeg,image/png,image/webp",
+  runLog: ".csv,.txt,text/csv,text/plain",
+  document: "application/pdf,.pdf",
+} as const;
+
+/** The files of one row of the Evidence list: drop, choose or take a photo; each with its progress, its fault and its way out. */
+export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
+  const t = useTranslations("live.files");
+  const client = useQueryClient();
+  const inputId = useId();
+  const [sending, setSending] = useState<readonly Sending[]>([]);
+  const key = ["evidence", number];
+  const live = useQuery({
+    queryKey: key,
+    queryFn: () => fetchJson(`/api/v1/claims/${number}/evidence`),
+    select: listedFiles,
+    // Until every picture has its view copy, ask again now and then.
+    refetchInterval: (query) => (listedFiles(query.state.data).some((file) => file.viewState === "waiting") ? 2_000 : false),
+    enabled: sending.length > 0 || files.some((file) => file.viewState === "waiting"),
+  });
+  const shown = live.data ? live.data.filter((file) => file.rowId === rowId) : files;
+  const withdraw = useMutation({
+    mutationFn: (id: string) => fetchJson(`/api/v1/evidence/${id}`, { method: "DELETE" }),
+    onSuccess: () => client.invalidateQueries({ queryKey: key }),
+  });
+
+  const change = useCallback(
+    (id: string, next: Partial<Sending>) => setSending((all) => all.map((one) => (one.id === id ? { ...one, ...next } : one))),
+    [],
+  );
+  const send = (id: string, file: File) => {
+    const upload = sendFile(file, { claimId, rowId, kind }, (percent) => change(id, { percent }));
+    change(id, { upload, fault: null, percent: 0 });
+    upload.done
+      .then(async () => {
+        await client.invalidateQueries({ queryKey: key });
+        setSending((all) => all.filter((one) => one.id !== id));
+      })
+      .catch((reason: unknown) => change(id, { fault: faultOf(reason), upload: null }));
+  };
+  const take = (chosen: readonly File[]) => {
+    const added = chosen.map((file) => ({ id: crypto.randomUUID(), file, percent: 0, fault: null, upload: null }));
+    setSending((all) => [...all, ...added]);
+    for (const { id, file } of added) send(id, file);
+  };
+  const { getRootProps, isDragActive } = useDropzone({ onDrop: take, noClick: true, noKeyboard: true });
+
+  return (
+    <div {...getRootProps()} className={isDragActive ? "grid gap-2 outline-2 outline-offset-4 outline-petrol outline-dashed" : "grid gap-2"}>
+      {shown.length + sending.length > 0 ? (
+        <ul>
+          {shown.map((file) => (
+            <SentFile key={file.id} file={file} onWithdraw={() => withdraw.mutate(file.id)} />
+          ))}
+          {sending.map((one) => (
+            <UploadRow
+              key={one.id}
+              fileName={one.file.name}
+              state={one.fault ? "failed" : one.upload ? "sending" : "waiting"}
+              percent={one.percent}
+              note={one.fault ? (one.fault.sentence ?? t("interrupted")) : undefined}
+              action={
+                <RowAction
+                  sending={one}
+                  onRetry={() => send(one.id, one.file)}
+                  onDrop={() => {
+                    one.upload?.cancel();
+                    setSending((all) => all.filter(({ id }) => id !== one.id));
+                  }}
+                />
+              }
+            />
+          ))}
+        </ul>
+      ) : null}
+      <p className="flex flex-wrap gap-2">
+        {kind === "photo" ? (
+          <FilePick id={`${inputId}-camera`} label={t("takePhoto")} accept={ACCEPT.photo} isCamera onTake={take} />
+        ) : null}
+        <FilePick id={`${inputId}-files`} label={t(`choose.${kind}`)} accept={ACCEPT[kind]} onTake={take} />
+      </p>
+    </div>
+  );
+}
+
+function RowAction({ sending, onRetry, onDrop }: { sending: Sending; onRetry: () => void; onDrop: () => void }) {
+  const t = useTranslations("live.files");
+  return (
+    <span className="flex gap-2">
+      {sending.fault?.canRetry ? (
+        <Button small kind="secondary" onPress={onRetry}>
+          {t("retry")}
+        </Button>
+      ) : null}
+      <Button small kind="quiet" onPress={onDrop}>
+        {t(sending.fault ? "drop" : "cancel")}
+      </Button>
+    </span>
+  );
+}
+
+type FilePickProps = { id: string; label: string; accept: string; isCamera?: boolean; onTake: (files: readonly File[]) => void };
+
+/** A native picker under a label that looks like a button: a phone offers its camera, a desk its folders. It has no name: the form never carries the bytes. */
+function FilePick({ id, label, accept, isCamera = false, onTake }: FilePickProps) {
+  return (
+    <span className="relative">
+      <input
+        id={id}
+        type="file"
+        accept={accept}
+        multiple={!isCamera}
+        capture={isCamera ? "environment" : undefined}
+        onChange={(event) => {
+          onTake([...(event.target.files ?? [])]);
+          event.target.value = "";
+        }}
+        className="peer absolute inset-0 size-full cursor-pointer opacity-0"
+      />
+      <label
+        htmlFor={id}
+        className={`${buttonStyle({ kind: "secondary" })} peer-focus-visible:outline-3 peer-focus-visible:outline-offset-3 peer-focus-visible:outline-focus`}
+      >
+        {label}
+      </label>
+    </span>
+  );
+}
+
+const isFile = (value: unknown): value is EvidenceFileItem =>
+  typeof value === "object" && value !== null && "id" in value && "rowId" in value && "viewState" in value;
+
+/** The files in an answer of the list route; anything else is none. */
+function listedFiles(answer: unknown): EvidenceFileItem[] {
+  if (typeof answer !== "object" || answer === null || !("files" in answer) || !Array.isArray(answer.files)) return [];
+  return answer.files.filter(isFile);
+}

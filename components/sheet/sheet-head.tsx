@@ -1,0 +1,63 @@
+import { useTranslations } from "next-intl";
+import { Banner } from "@/components/ui/banner";
+import { FamilyGlyph } from "@/components/ui/family-glyph";
+import { PageHeader } from "@/components/ui/page-header";
+import { ClaimMark, LateMark } from "@/components/ui/status-mark";
+import { formatDay, formatInstant, formatMoney } from "@/lib/kernel/format";
+import { calendarDay, dayInZone, daysBetween } from "@/lib/kernel/calendar-day";
+import type { SheetProps } from "./shared";
+
+/** Which claim, what it is about, where it stands, and until when somebody owes an answer. */
+export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
+  const t = useTranslations("sheet");
+  const words = useTranslations("families");
+  const mark = sheet.state === "decided" && sheet.outcome ? sheet.outcome : sheet.state === "decided" ? "upheld" : sheet.state;
+  const title = sheet.symptom ? words(`${sheet.family}.symptoms.${sheet.symptom}`) : words(`${sheet.family}.name`);
+  const other = sheet.side === "distributor" ? sheet.workshopName : sheet.sellerName;
+  return (
+    <div className="grid gap-4">
+      <PageHeader
+        eyebrow={
+          <>
+            {t("claim")} <span className="font-mono">{sheet.number}</span> · {other}
+            {sheet.siteName ? ` · ${sheet.siteName}` : null}
+          </>
+        }
+        title={
+          <span className="inline-flex items-center gap-3">
+            <FamilyGlyph family={sheet.family} /> {title}
+          </span>
+        }
+        note={
+          <>
+            <ClaimMark state={mark} />
+            <span>{t("asked", { amount: formatMoney(sheet.asked, locale) })}</span>
+            <span>{t("revision", { revision: sheet.revision })}</span>
+            <Due sheet={sheet} locale={locale} timeZone={timeZone} />
+          </>
+        }
+      />
+      {sheet.safetyReported ? (
+        <Banner kind="caution" title={t("safetyTitle")}>
+          {t("safety", { at: sheet.incidentKnownAt ? formatInstant(new Date(sheet.incidentKnownAt), locale, timeZone) : "" })}
+        </Banner>
+      ) : null}
+      {sheet.parked ? (
+        <Banner kind="info" title={t("parkedTitle", { name: sheet.parked.withName })}>
+          {sheet.parked.question}
+        </Banner>
+      ) : null}
+    </div>
+  );
+}
+
+function Due({ sheet, locale, timeZone }: SheetProps) {
+  const t = useTranslations("sheet");
+  if (sheet.queryLapsesOn && sheet.state === "answerNeeded")
+    return <span>{t("answerUntil", { day: formatDay(calendarDay(sheet.queryLapsesOn), locale) })}</span>;
+  if (!sheet.answerDueAt || (sheet.state !== "filed" && sheet.state !== "beingJudged")) return null;
+  const due = new Date(sheet.answerDueAt);
+  const daysOver = daysBetween(dayInZone(due, timeZone), dayInZone(new Date(), timeZone));
+  if (daysOver > 0) return <LateMark daysOver={daysOver} />;
+  return <span>{t("dueBy", { at: formatInstant(due, locale, timeZone) })}</span>;
+}

@@ -1,0 +1,23 @@
+import Link from "next/link";
+import type { ComponentProps } from "react";
+import { buttonStyle, type ButtonLook } from "./button-style";
+
+/** A link that leads to the next thing to do; looks like a button, opens like a link. */
+export function LinkButton({
+  kind,
+  small,
+  wide,
+  ...props
+}: Omit<ComponentProps<typeof Link>, "className"> & ButtonLook) {
+  return <Link {...props} className={buttonStyle({ kind, small, wide })} />;
+}
+
+/** A link in running text or in a table. */
+export function TextLink(props: Omit<ComponentProps<typeof Link>, "className">) {
+  return (
+    <Link
+      {...props}
+      className="text-petrol underline decoration-edge decoration-1 underline-offset-4 hover:text-petrol-deep hover:decoration-current"
+    />
+  );
+}

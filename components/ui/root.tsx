@@ -1,0 +1,26 @@
+"use client";
+
+import { useRouter } from "next/navigation";
+import type { ReactNode } from "react";
+import { I18nProvider, RouterProvider } from "react-aria-components";
+import { ThemeProvider } from "./theme";
+
+type UiRootProps = {
+  /** BCP 47 tag; the parts in the browser speak and sort by it. */
+  locale: string;
+  nonce?: string;
+  preferredTheme?: string;
+  children: ReactNode;
+};
+
+/** What the parts in the browser share: the theme, the reader's language, and links that change pages without a reload. */
+export function UiRoot({ locale, nonce, preferredTheme, children }: UiRootProps) {
+  const router = useRouter();
+  return (
+    <ThemeProvider nonce={nonce} preferred={preferredTheme}>
+      <I18nProvider locale={locale}>
+        <RouterProvider navigate={(path) => router.push(path)}>{children}</RouterProvider>
+      </I18nProvider>
+    </ThemeProvider>
+  );
+}

@@ -1,0 +1,102 @@
+import clsx from "clsx";
+import Link from "next/link";
+import type { ComponentProps, ReactNode } from "react";
+import { Glyph } from "./glyph";
+
+// Every part names its role: in a narrow place the cells are laid out as a list of labelled lines, and a table whose
+// display was changed would otherwise stop being one for a screen reader.
+
+type TableProps = {
+  /** What the table holds; read out first. */
+  caption: ReactNode;
+  isCaptionShown?: boolean;
+  children: ReactNode;
+  /** "list": a row becomes labelled lines on a phone or in a drawer. "scroll": it stays a table in its own box, for figures to compare. */
+  onPhone?: "list" | "scroll";
+  /** Keeps the column heads in sight on a desk. */
+  isHeadSticky?: boolean;
+};
+
+/** Ruled lines, no stripes; row height follows the density. Children are TableHead, TableBody, TableFoot. */
+export function Table({
+  caption,
+  isCaptionShown = false,
+  children,
+  onPhone = "list",
+  isHeadSticky = false,
+}: TableProps) {
+  return (
+    <div className="ledger-frame">
+      <div
+        className={clsx("ledger-box", isHeadSticky && "ledger-sticky")}
+        tabIndex={onPhone === "scroll" ? 0 : undefined}
+      >
+        <table role="table" className={clsx("ledger", onPhone === "list" && "ledger-list")}>
+          <caption className={isCaptionShown ? "pb-2 text-left text-small text-ink-2" : "sr-only"}>
+            {caption}
+          </caption>
+          {children}
+        </table>
+      </div>
+    </div>
+  );
+}
+
+export const TableHead = ({ children }: { children: ReactNode }) => (
+  <thead role="rowgroup">
+    <tr role="row">{children}</tr>
+  </thead>
+);
+
+export const TableBody = ({ children }: { children: ReactNode }) => <tbody role="rowgroup">{children}</tbody>;
+
+/** Sums under a double rule. */
+export const TableFoot = ({ children }: { children: ReactNode }) => <tfoot role="rowgroup">{children}</tfoot>;
+
+/** `isCurrent` marks the row being worked on. */
+export const Row = ({ isCurrent = false, ...props }: ComponentProps<"tr"> & { isCurrent?: boolean }) => (
+  <tr role="row" aria-current={isCurrent ? "true" : undefined} {...props} />
+);
+
+type Sort = { href: ComponentProps<typeof Link>["href"]; direction?: "ascending" | "descending" };
+type ThProps = Omit<ComponentProps<"th">, "className"> & { isNumeric?: boolean; sort?: Sort };
+
+/** Head of a column. `sort` makes it a link to the same list in another order. */
+export function Th({ isNumeric = false, sort, children, ...props }: ThProps) {
+  return (
+    <th
+      role="columnheader"
+      scope="col"
+      aria-sort={sort?.direction}
+      {...props}
+      className={clsx(isNumeric && "ledger-number")}
+    >
+      {sort ? (
+        <Link
+          href={sort.href}
+          className="inline-flex items-center gap-1 align-bottom underline-offset-3 hover:underline"
+        >
+          {children}
+          {sort.direction ? <Glyph name={sort.direction} className="size-4" /> : null}
+        </Link>
+      ) : (
+        children
+      )}
+    </th>
+  );
+}
+
+type TdProps = Omit<ComponentProps<"td">, "className"> & {
+  /** The column's head in words; stands before the value on a phone. The first cell needs none: it is the row's title. */
+  label?: string;
+  isNumeric?: boolean;
+};
+
+export const Td = ({ label, isNumeric = false, ...props }: TdProps) => (
+  <td role="cell" data-label={label} {...props} className={clsx(isNumeric && "ledger-number")} />
+);
+
+/** The cell that names its row. */
+export const RowHead = (props: Omit<ComponentProps<"th">, "className">) => (
+  <th role="rowheader" scope="row" {...props} />
+);

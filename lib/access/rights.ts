@@ -1,0 +1,38 @@
+import { type Role } from "./roles";
+
+/** What a person may do besides the moves of a claim. The same table draws the navigation and guards the services. */
+export const RIGHTS = {
+  startClaim: ["technician", "workshopManager"],
+  seeOwnClaims: ["technician", "workshopManager", "accounts", "administrator"],
+  judgeClaims: ["assessor"],
+  seeReceivedClaims: ["assessor", "goodsIn", "accounts", "analyst", "administrator"],
+  importInvoiceLines: ["administrator"],
+  keepCatalogue: ["administrator"],
+  keepPeople: ["administrator"],
+  seeRuleBook: ["assessor", "administrator", "workshopManager", "technician", "analyst", "accounts", "goodsIn"],
+} as const satisfies Record<string, readonly Role[]>;
+
+export type Right = keyof typeof RIGHTS;
+
+/** Rights that only mean something to an organisation that sells, or to one that buys. */
+const SIDE: Partial<Record<Right, "sells" | "buys">> = {
+  startClaim: "buys",
+  seeOwnClaims: "buys",
+  judgeClaims: "sells",
+  seeReceivedClaims: "sells",
+  importInvoiceLines: "sells",
+  keepCatalogue: "sells",
+};
+
+export type Organisation = { readonly sells: boolean; readonly buys: boolean };
+
+/** Whether one of these roles carries the right, in an organisation of this kind. */
+export function hasRight(roles: ReadonlySet<Role>, right: Right, organisation: Organisation): boolean {
+  const side = SIDE[right];
+  if (side && !organisation[side]) return false;
+  return RIGHTS[right].some((role) => roles.has(role));
+}
+
+/** Every right of a person, for drawing the navigation. */
+export const rightsOf = (roles: ReadonlySet<Role>, organisation: Organisation): Right[] =>
+  (Object.keys(RIGHTS) as Right[]).filter((right) => hasRight(roles, right, organisation));

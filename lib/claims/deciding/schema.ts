@@ -1,0 +1,30 @@
+import { z } from "zod";
+import { VERDICT_OUTCOMES } from "../lifecycle";
+import { claimNumberInput } from "../schema";
+import { CAUSES, REASONS } from "../verdict";
+
+const REASON_CODES = Object.values(REASONS).flat();
+const share = z.string().trim().max(20).default("");
+
+const lineVerdict = z.strictObject({
+  lineId: z.uuid(),
+  outcome: z.enum(VERDICT_OUTCOMES, "outcomeMissing"),
+  shares: z.strictObject(Object.fromEntries(CAUSES.map((cause) => [cause, share])) as Record<(typeof CAUSES)[number], typeof share>),
+  reasonCode: z.enum(REASON_CODES, "reasonCodeMissing"),
+  reason: z.string().trim().min(1, "missing").max(4000, "tooLong"),
+});
+
+/** A verdict as the assessor gives it: the revision that was on the screen, each line, and the letter. */
+export const decideInput = z.strictObject({
+  number: claimNumberInput,
+  revision: z.coerce.number().int().min(1),
+  // Fields named `lines.0.outcome` come as a record by place.
+  lines: z
+    .record(z.string().regex(/^[0-7]$/u), lineVerdict)
+    .transform((byPlace) => Object.entries(byPlace).sort(([a], [b]) => Number(a) - Number(b)).map(([, line]) => line))
+    .refine((lines) => lines.length > 0),
+  letter: z.string().trim().min(1, "missing").max(4000, "tooLong"),
+  returnWaivedReason: z.string().trim().min(1, "missing").max(1000, "tooLong"),
+});
+
+export type DecideInput = z.infer<typeof decideInput>;

@@ -1,0 +1,151 @@
+import "server-only";
+import type { Actor } from "@/lib/access/actor";
+import { rows, type Work } from "@/lib/db/unit-of-work";
+import { addDays, calendarDay } from "@/lib/kernel/calendar-day";
+import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { mailClaimPeople } from "@/lib/mail/outbox";
+import { publicUrl } from "@/lib/web/settings";
+import type { Claim } from "@/models/claim";
+import { coverageOfLine, type CoveredLine } from "../cover/queries";
+import { claimFacts, type ClaimFacts } from "../facts";
+import { nameOf } from "../judging/queries";
+import { todayOf } from "../judging/service";
+import { moveClaim } from "../moves/service";
+import { printClaimNumber } from "../number";
+import { claimPath } from "../paths";
+import { creditedShare, outcomeOfLines, REASONS, type Attribution } from "../verdict";
+import type { DecideInput } from "./schema";
+
+type LineRefusal = "sharesUnread" | "sharesNotOne" | "upheldNotWhole" | "partNotShared" | "reasonOfOtherOutcome" | "linesIncomplete";
+type Seen = { facts: ClaimFacts; sha256: string };
+type LineIds = { id: string; lineNumber: number };
+
+const attributionOf = (shares: DecideInput["lines"][number]["shares"]): Attribution =>
+  Object.fromEntries(Object.entries(shares).filter(([, share]) => share !== ""));
+
+/** Every line answered once, shares that add to one, a reason that belongs to the outcome. */
+function checkLines(input: DecideInput, lines: readonly LineIds[]): Outcome<true, LineRefusal> {
+  const answered = new Set(input.lines.map((line) => line.lineId));
+  if (answered.size !== lines.length || lines.some(({ id }) => !answered.has(id))) return refuse("linesIncomplete");
+  for (const [index, line] of input.lines.entries()) {
+    const share = creditedShare(line.outcome, attributionOf(line.shares));
+    if (!share.ok) return { ...share, field: `lines.${index}.shares` };
+    const allowed: readonly string[] = REASONS[line.outcome];
+    if (!allowed.includes(line.reasonCode)) return refuse("reasonOfOtherOutcome", {}, `lines.${index}.reasonCode`);
+  }
+  return ok(true);
+}
+
+async function findSeen(work: Work, claim: Claim): Promise<Seen> {
+  const [revision] = await rows<{ facts: unknown; sha256: string }>(
+    work,
+    "select facts, sha256 from claim_revisions where claim_id = $1 and revision = $2",
+    [claim.id, claim.revision],
+  );
+  if (!revision) throw new Error(`claim ${claim.number} has no revision ${claim.revision}`);
+  return { facts: claimFacts.parse(revision.facts), sha256: revision.sha256 };
+}
+
+async function coverLine(work: Work, claim: Claim, facts: ClaimFacts, lineNumber: number): Promise<CoveredLine> {
+  const line = facts.lines.find((one) => one.lineNumber === lineNumber);
+  if (!line) throw new Error(`claim ${claim.number} has no line ${lineNumber} in its facts`);
+  return coverageOfLine(work, {
+    claimId: claim.id,
+    sellerId: claim.sellerId,
+    workshopId: claim.workshopId,
+    family: facts.family,
+    partId: line.part.id,
+    unitId: line.unit?.id ?? null,
+    serialTyped: line.serialTyped,
+    shippedOn: line.invoiceLine?.shippedOn ?? null,
+    fittedOn: line.fittedOn,
+    failedOn: calendarDay(facts.failedOn),
+    filedOn: calendarDay(facts.filedOn),
+    evidenceMissing: 0,
+  });
+}
+
+type Written = { verdictId: string; contestDays: number };
+
+/** The verdict with its lines: what was seen, what rule, what the cover was, word for word and for good. */
+async function writeVerdict(work: Work, claim: Claim, input: DecideInput, lines: readonly LineIds[], seen: Seen): Promise<Written> {
+  const parties = [claim.sellerId, claim.workshopId] as const;
+  const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
+  const [verdict] = await rows<{ id: string }>(
+    work,
+    `insert into verdicts (claim_id, seller_id, workshop_id, revision, revision_sha256, outcome, letter, decided_by_id, reverses_id)
+     values ($1, $2, $3, $4, $5, $6, $7, $8,
+       (select v.id from verdicts v where v.claim_id = $1 order by v.decided_at desc limit 1)) returning id`,
+    [claim.id, ...parties, input.revision, seen.sha256, outcome, input.letter, work.actor.userId],
+  );
+  let contestDays = 0;
+  for (const line of input.lines) {
+    const lineNumber = lines.find(({ id }) => id === line.lineId)?.lineNumber ?? 0;
+    const { coverage, terms } = await coverLine(work, claim, seen.facts, lineNumber);
+    contestDays = Math.max(contestDays, terms?.body.contestDays ?? DAYS_TO_CONTEST);
+    const attribution = JSON.stringify(attributionOf(line.shares));
+    await rows(
+      work,
+      `insert into verdict_lines (verdict_id, line_id, seller_id, workshop_id, outcome, attribution, reason_code, reason,
+         rule_version_id, coverage, return_waived_reason)
+       values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11)`,
+      [
+        verdict?.id,
+        line.lineId,
+        ...parties,
+        line.outcome,
+        attribution,
+        line.reasonCode,
+        line.reason,
+        terms?.id ?? null,
+        JSON.stringify(coverage),
+        input.returnWaivedReason,
+      ],
+    );
+    await rows(
+      work,
+      `update claim_lines set verdict = $2, attribution = $3, return_state = 'notNeeded', return_waived_reason = $4,
+         credit_state = case when $2 = 'declined' then 'none' else 'due' end where id = $1 returning id`,
+      [line.lineId, line.outcome, attribution, input.returnWaivedReason],
+    );
+  }
+  return { verdictId: verdict?.id ?? "", contestDays };
+}
+
+/** Where no terms were in force there still is a time to object. */
+const DAYS_TO_CONTEST = 14;
+
+/**
+ * Decides a claim line by line. The verdict binds to the revision that was on the screen: where the workshop has sent
+ * another since, it refuses `staleVersion` and nothing is written.
+ */
+export const decideClaim = (actor: Actor, input: DecideInput) =>
+  moveClaim<LineRefusal | "staleVersion">(actor, input.number, "decide", async (claim, work) => {
+    if (claim.revision !== input.revision) return refuse("staleVersion");
+    const lines = await rows<LineIds>(work, `select id, line_number as "lineNumber" from claim_lines where claim_id = $1 order by line_number`, [
+      claim.id,
+    ]);
+    const checked = checkLines(input, lines);
+    if (!checked.ok) return checked;
+
+    const seen = await findSeen(work, claim);
+    const { verdictId, contestDays } = await writeVerdict(work, claim, input, lines, seen);
+    const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
+    const contestUntil = addDays(todayOf(actor), contestDays);
+    await mailClaimPeople(work, claim.id, "workshop", {
+      kind: "claimDecided",
+      dedupeKey: `claimDecided:${verdictId}`,
+      params: {
+        link: publicUrl(claimPath(claim)),
+        number: printClaimNumber(input.number),
+        distributor: await nameOf(work, claim.sellerId),
+        outcome,
+        letter: input.letter,
+        contestUntil,
+      },
+    });
+    return ok({
+      changes: { outcome, decidedAt: new Date(), decidedById: actor.userId, contestUntil, holderId: null, heldUntil: null, parkedWithId: null, parkedQuestion: null },
+      detail: { outcome, revision: input.revision, contestUntil },
+    });
+  });

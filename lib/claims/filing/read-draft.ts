@@ -1,0 +1,202 @@
+import { completeness } from "@/lib/evidence/completeness";
+import { readReading } from "@/lib/evidence/reading";
+import { isAfter, isBefore, type CalendarDay } from "@/lib/kernel/calendar-day";
+import type { Locale } from "@/lib/kernel/locale";
+import { readTypedDay } from "@/lib/kernel/typed-day";
+import { readingKindOf, symptomOf, type PartFamily } from "@/lib/parts/family";
+import type { EvidenceRow } from "@/lib/rule-book/evidence-list-shape";
+import type { ClaimDraft, DraftLine } from "../draft";
+import type { ClaimFacts, FactLine } from "../facts";
+import { givenByRow, type Given } from "../given";
+import type { DraftStep } from "../paths";
+
+/** What the database knows about a line: found by the ids in the draft, never by what was typed. */
+export type FoundLine = Pick<FactLine, "part" | "unit" | "invoiceLine" | "installer"> & {
+  readonly replacementUnitId: string | null;
+};
+
+export type DraftContext = {
+  /** Today at the workshop, and the filing day in the distributor's zone. */
+  readonly today: CalendarDay;
+  readonly filedOn: CalendarDay;
+  readonly locale: Locale;
+  readonly family: PartFamily;
+  readonly rows: readonly EvidenceRow[];
+  readonly evidenceListId: string | null;
+  /** One for each line of the draft; null where no part was found. */
+  readonly lines: readonly (FoundLine | null)[];
+  readonly evidence: ClaimFacts["evidence"];
+};
+
+/** One thing that stops a claim from being sent: its field, the page it stands on, and the sentence's code. */
+export type DraftProblem = {
+  readonly step: DraftStep;
+  readonly field: string;
+  readonly code: string;
+  readonly detail: Readonly<Record<string, string | number>>;
+};
+
+type Reading = ClaimFacts["readings"][number];
+
+const QUANTITY = /^[1-9]\d{0,4}$/u;
+const NUMBER = /^\d{1,4}([.,]\d{1,2})?$/u;
+
+/** Collects every problem, not only the first, so that a person sees at once all there is to do. */
+class Problems {
+  readonly list: DraftProblem[] = [];
+
+  add(step: DraftStep, field: string, code: string, detail: DraftProblem["detail"] = {}): null {
+    this.list.push({ step, field, code, detail });
+    return null;
+  }
+}
+
+/**
+ * Reads a draft into the facts that are sent. Returns facts where nothing stops it, and in any case the whole list of
+ * problems, each at its field. Soft doubts (an odd reading) are not problems: they never stop a claim.
+ */
+export function readDraft(draft: ClaimDraft, context: DraftContext): { facts: ClaimFacts | null; problems: DraftProblem[] } {
+  const problems = new Problems();
+  const failedOn = readPastDay(draft.failedOn, "fault", "failedOn", context, problems) ?? missingDay(draft.failedOn, problems);
+  const repairedOn = readPastDay(draft.repairedOn, "part", "repairedOn", context, problems);
+  const lines = draft.lines.map((line, index) => readLine(line, index, failedOn, context, problems));
+  const readings = readReadings(draft, context, problems);
+  if (!symptomOf(context.family, draft.symptom)) problems.add("fault", "symptom", "symptomMissing");
+  if (draft.frameSerial.trim() === "") problems.add("part", "frameSerial", "frameSerialMissing");
+  if (lines.length === 0) problems.add("part", "serial", "lineMissing");
+  const given = givenIn(draft, readings, context);
+  checkRows(given, context, problems);
+
+  const read = lines.filter((line) => line !== null);
+  if (problems.list.length > 0 || failedOn === null) return { facts: null, problems: problems.list };
+  return { facts: factsOf(draft, context, { failedOn, repairedOn, lines: read, given }), problems: [] };
+}
+
+const missingDay = (typed: string, problems: Problems): null =>
+  typed.trim() === "" ? problems.add("fault", "failedOn", "failedOnMissing") : null;
+
+/** Null for an empty field and for a day that cannot be: the latter leaves a problem at the field. */
+function readPastDay(typed: string, step: DraftStep, field: string, context: DraftContext, problems: Problems): CalendarDay | null {
+  if (typed.trim() === "") return null;
+  const day = readTypedDay(typed, context.locale, context.today);
+  if (day === null) return problems.add(step, field, "dayUnread", { typed: typed.slice(0, 40) });
+  return isAfter(day, context.today) ? problems.add(step, field, "dayInFuture") : day;
+}
+
+function readLine(
+  line: DraftLine,
+  index: number,
+  failedOn: CalendarDay | null,
+  context: DraftContext,
+  problems: Problems,
+): FactLine | null {
+  const field = (name: string) => `lines.${index}.${name}`;
+  const found = context.lines[index] ?? null;
+  if (!found) return problems.add("part", field("serial"), "partMissing");
+  const fittedOn = readPastDay(line.fittedOn, "part", field("fittedOn"), context, problems);
+  const replacedOn = readPastDay(line.replacementFittedOn, "part", field("replacementFittedOn"), context, problems);
+  if (!QUANTITY.test(line.quantity.trim())) problems.add("part", field("quantity"), "quantityUnread");
+  if (fittedOn && failedOn && isBefore(failedOn, fittedOn)) problems.add("fault", "failedOn", "failedBeforeFitting");
+  const quantity = Number(line.quantity) || 1;
+  return {
+    lineNumber: index + 1,
+    part: found.part,
+    unit: found.unit,
+    serialTyped: line.serial.trim() || null,
+    invoiceLine: found.invoiceLine,
+    quantity,
+    position: line.position || "single",
+    fittedOn,
+    installer: found.installer,
+    replacement: line.replacementSerial.trim()
+      ? { serial: line.replacementSerial.trim(), unitId: found.replacementUnitId, fittedOn: replacedOn }
+      : null,
+    askedMinor: (BigInt(found.invoiceLine?.unitPriceMinor ?? "0") * BigInt(quantity)).toString(),
+  };
+}
+
+function readReadings(draft: ClaimDraft, context: DraftContext, problems: Problems): Reading[] {
+  const readings: Reading[] = [];
+  for (const row of context.rows) {
+    const typed = draft.readings[row.id];
+    const kind = row.readingKind ? readingKindOf(context.family, row.readingKind) : null;
+    if (!kind || !typed || typed.raw.trim() === "") continue;
+    const value = readReading(typed.raw, kind);
+    if (!value.ok) {
+      problems.add("evidence", `readings.${row.id}`, value.code, value.detail);
+      continue;
+    }
+    readings.push({
+      rowId: row.id,
+      kind: kind.code,
+      rawText: typed.raw,
+      unit: value.value.canonicalUnit,
+      canonicalValue: value.value.canonicalValue,
+      temperatureCelsius: readTemperature(typed.temperature, `readings.${row.id}.temperature`, problems),
+      instrument: typed.instrument.trim(),
+    });
+  }
+  return readings;
+}
+
+const TEMPERATURE = { code: "temperature", dimension: "temperature", unit: "°C", temperature: "notNeeded" } as const;
+
+function readTemperature(typed: string, field: string, problems: Problems): number | null {
+  if (typed.trim() === "") return null;
+  const read = readReading(typed, TEMPERATURE);
+  return read.ok ? read.value.canonicalValue : problems.add("evidence", field, read.code, read.detail);
+}
+
+/** A row that is required is done, or says why it cannot be. A row whose reading cannot be read has its own sentence. */
+function checkRows(given: Given, context: DraftContext, problems: Problems) {
+  for (const { id } of completeness(context.rows, givenByRow(given)).missing) {
+    const isTold = problems.list.some((problem) => problem.field.startsWith(`readings.${id}`));
+    if (!isTold) problems.add("evidence", `rows.${id}`, "rowToDo", { row: id });
+  }
+}
+
+/** The texts somebody really wrote, by the row they belong to. */
+const written = (texts: Readonly<Record<string, string>>): [id: string, text: string][] =>
+  Object.entries(texts).flatMap(([id, text]) => (text.trim() === "" ? [] : [[id, text.trim()]]));
+
+const givenIn = (draft: ClaimDraft, readings: Reading[], context: DraftContext): Given => ({
+  readings,
+  answers: written(draft.answers).map(([rowId, text]) => ({ rowId, text })),
+  cannotGet: written(draft.cannotGet).map(([rowId, reason]) => ({ rowId, reason })),
+  ruledOut: Object.entries(draft.ruledOut).map(([itemId, note]) => ({ itemId, note: note.trim() })),
+  swap: swapOf(draft),
+  evidence: context.evidence,
+});
+
+type ReadParts = { failedOn: CalendarDay; repairedOn: CalendarDay | null; lines: FactLine[]; given: Given };
+
+function factsOf(draft: ClaimDraft, context: DraftContext, read: ReadParts): ClaimFacts {
+  const { failedOn, repairedOn, lines, given } = read;
+  return {
+    shape: 1,
+    filedOn: context.filedOn,
+    family: context.family.code,
+    symptom: draft.symptom,
+    note: draft.note.trim(),
+    failedOn,
+    repairedOn,
+    vehicle: { frameSerial: draft.frameSerial.trim(), model: draft.vehicleModel.trim() },
+    lines,
+    ...given,
+    condition: Object.entries(draft.condition)
+      .filter(([, found]) => found !== "")
+      .map(([itemId, found]) => ({ itemId, found: found === "yes" })),
+    conditionNote: draft.conditionNote.trim(),
+    earlierWork: draft.earlierWork.trim(),
+    incident: draft.incident === "yes" ? { note: draft.incidentNote.trim() } : null,
+    evidenceListId: context.evidenceListId,
+  };
+}
+
+const answerOf = (typed: "" | "yes" | "no"): boolean | null => (typed === "" ? null : typed === "yes");
+
+function swapOf(draft: ClaimDraft): ClaimFacts["swap"] {
+  const minutes = NUMBER.test(draft.swapMinutes.trim()) ? Number(draft.swapMinutes.trim().replace(",", ".")) : null;
+  const [abnormalHeat, testDrive] = [answerOf(draft.swapHeat), answerOf(draft.testDrive)];
+  return minutes === null && abnormalHeat === null && testDrive === null ? null : { minutes, abnormalHeat, testDrive };
+}

@@ -1,0 +1,117 @@
+import "server-only";
+import type { Actor } from "@/lib/access/actor";
+import { rows, type Work } from "@/lib/db/unit-of-work";
+import { addDays, dayInZone, type CalendarDay } from "@/lib/kernel/calendar-day";
+import { ok, refuse } from "@/lib/kernel/outcome";
+import { mailClaimPeople } from "@/lib/mail/outbox";
+import { findRule } from "@/lib/rule-book/queries";
+import { publicUrl } from "@/lib/web/settings";
+import type { Claim } from "@/models/claim";
+import { claimForChange, moveClaim, undoing } from "../moves/service";
+import { printClaimNumber } from "../number";
+import { claimPath } from "../paths";
+import { appendToTimeline } from "../timeline/service";
+import { nameOf } from "./queries";
+
+const HOLD_MINUTES = 10;
+const holdFromNow = () => new Date(Date.now() + HOLD_MINUTES * 60_000);
+
+/** The day it is now where the actor's organisation works. */
+export const todayOf = (actor: Actor): CalendarDay => dayInZone(new Date(), actor.timeZone);
+
+/** Takes a claim from the list: from now on this assessor holds it, for ten minutes at a time. */
+export const takeClaim = (actor: Actor, { number }: { number: string }) =>
+  moveClaim<never>(actor, number, "take", () => ok({ changes: { holderId: actor.userId, heldUntil: holdFromNow() } }));
+
+/** Gives a claim back to the list, with a reason only the distributor reads. */
+export const putBackClaim = (actor: Actor, { number, reason }: { number: string; reason: string }) =>
+  moveClaim<never>(actor, number, "putBack", () =>
+    ok({
+      changes: { holderId: null, heldUntil: null, parkedWithId: null, parkedQuestion: null },
+      detail: { reason },
+    }),
+  );
+
+type HolderChange = { number: string };
+
+/** A change within "being judged": the state stays, the timeline says what happened, only the distributor sees it. */
+const whileJudging = <Code extends string>(
+  actor: Actor,
+  number: string,
+  change: (claim: Claim, work: Work) => Promise<{ kind: string; detail: Record<string, unknown> } | Code>,
+) =>
+  undoing<HolderChange, Code | "notFound" | "moveNotOpen">(actor, async (work) => {
+    const claim = await claimForChange(work, number);
+    if (!claim || claim.sellerId !== actor.organisationId) return refuse("notFound");
+    if (claim.state !== "beingJudged" || !actor.roles.has("assessor")) return refuse("moveNotOpen");
+    const made = await change(claim, work);
+    if (typeof made === "string") return refuse(made);
+    await appendToTimeline(work, claim, { ...made, onlyForId: claim.sellerId });
+    return ok({ number });
+  });
+
+/** Takes over a claim a colleague holds: a deliberate step, and it is written down. */
+export const takeOverClaim = (actor: Actor, { number }: { number: string }) =>
+  whileJudging<never>(actor, number, async (claim, { transaction }) => {
+    await claim.update({ holderId: actor.userId, heldUntil: holdFromNow() }, { transaction });
+    return { kind: "takenOver", detail: {} };
+  });
+
+/** Leaves a claim with a question to a colleague. It stays being judged; the clock of the distributor runs on. */
+export const parkClaim = (actor: Actor, input: { number: string; colleagueId: string; question: string }) =>
+  whileJudging<"notFound">(actor, input.number, async (claim, work) => {
+    const [colleague] = await rows<{ name: string }>(
+      work,
+      `select u.name from users u join membership_roles r on r.user_id = u.id and r.organisation_id = $2 and r.role = 'assessor'
+       where u.id = $1`,
+      [input.colleagueId, actor.organisationId],
+    );
+    if (!colleague) return "notFound" as const;
+    const parked = { parkedWithId: input.colleagueId, parkedQuestion: input.question };
+    await claim.update(parked, { transaction: work.transaction });
+    return { kind: "parked", detail: { colleague: colleague.name, question: input.question } };
+  });
+
+type Ask = { number: string; question: string; rowIds: readonly string[] };
+
+/** Days the workshop has before a query lapses; the terms of the filing day say so, and 30 where there are none. */
+const DAYS_TO_ANSWER = 30;
+
+const nextRound = async (work: Work, claimId: string): Promise<number> => {
+  const [last] = await rows<{ round: number }>(work, "select coalesce(max(round), 0) + 1 as round from claim_queries where claim_id = $1", [
+    claimId,
+  ]);
+  return Number(last?.round ?? 1);
+};
+
+/** Asks the workshop once for all that is missing. Its clock starts, the distributor's stops, a mail goes out. */
+export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
+  moveClaim<never>(actor, number, "ask", async (claim, work) => {
+    const round = await nextRound(work, claim.id);
+    const terms = await findRule(work, "terms", { sellerId: claim.sellerId, family: claim.family, on: todayOf(actor) });
+    const lapsesOn = addDays(todayOf(actor), terms?.body.queryLapseDays ?? DAYS_TO_ANSWER);
+    await rows(
+      work,
+      `insert into claim_queries (claim_id, seller_id, workshop_id, round, items, question, asked_by_id)
+       values ($1, $2, $3, $4, $5, $6, $7)`,
+      [claim.id, claim.sellerId, claim.workshopId, round, JSON.stringify(rowIds), question, actor.userId],
+    );
+    await mailClaimPeople(work, claim.id, "workshop", {
+      kind: "queryAsked",
+      dedupeKey: `queryAsked:${claim.id}:${round}`,
+      params: {
+        link: publicUrl(claimPath(claim)),
+        number: printClaimNumber(number),
+        distributor: await nameOf(work, claim.sellerId),
+        question,
+        family: claim.family ?? "",
+        rowIds: [...rowIds],
+        answerBy: lapsesOn,
+      },
+    });
+    return ok({
+      changes: { clockStoppedAt: new Date(), queryLapsesOn: lapsesOn },
+      detail: { round, question, rowIds, answerBy: lapsesOn },
+    });
+  });
+

@@ -1,0 +1,133 @@
+import "server-only";
+import type { Actor } from "@/lib/access/actor";
+import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { normaliseSerial } from "@/lib/labels/serial";
+import type { ClaimState, VerdictOutcome } from "../lifecycle";
+import { PAGE_SIZE, type ListOrder, type ListQuery, type ListView } from "./schema";
+
+export type ListedClaim = {
+  number: string;
+  state: ClaimState;
+  outcome: VerdictOutcome | null;
+  partName: string | null;
+  partNumber: string | null;
+  serial: string | null;
+  family: string | null;
+  symptom: string | null;
+  otherParty: string;
+  lineCount: number;
+  askedMinor: string;
+  currency: string;
+  filedAt: Date | null;
+  updatedAt: Date;
+  answerDueAt: Date | null;
+  clockStoppedAt: Date | null;
+  safetyReported: boolean;
+  holderName: string | null;
+  isHeldByMe: boolean;
+  isParkedWithMe: boolean;
+  /** Doubts on record; only ever more than 0 for the distributor. */
+  flagCount: number;
+};
+
+export type ClaimList = { claims: ListedClaim[]; total: number; counts: Partial<Record<ListView, number>> };
+
+// Conditions of the views. $1 is the organisation, $2 the person. Every one begins with an indexed state.
+const JUDGING: Readonly<Partial<Record<ListView, string>>> = {
+  toJudge: `c.state in ('filed', 'contested')`,
+  held: `c.state = 'beingJudged' and c.holder_id = $2`,
+  parked: `c.state = 'beingJudged' and c.parked_with_id = $2`,
+  waiting: `c.state = 'answerNeeded'`,
+  decided: `c.state = 'decided'`,
+  all: `c.state not in ('draft', 'discarded')`,
+};
+
+const OWN: Readonly<Partial<Record<ListView, string>>> = {
+  onUs: `c.state in ('draft', 'answerNeeded')`,
+  onThem: `c.state in ('filed', 'beingJudged', 'contested')`,
+  decided: `c.state = 'decided'`,
+  closed: `c.state in ('settled', 'withdrawn', 'lapsed')`,
+  all: `c.state <> 'discarded'`,
+};
+
+// Orders are looked up here and never pasted from an address. Every one ends in the id, so that pages never overlap.
+const ORDER: Readonly<Record<ListOrder, string>> = {
+  urgent: "c.safety_reported desc, c.answer_due_at asc nulls last, c.filed_at asc nulls first, c.id",
+  filed: "c.filed_at asc nulls first, c.id",
+  "-filed": "c.filed_at desc nulls first, c.id",
+  asked: "c.asked_minor asc, c.id",
+  "-asked": "c.asked_minor desc, c.id",
+  due: "c.answer_due_at asc nulls last, c.id",
+};
+
+const columns = (otherParty: "seller" | "workshop") => `
+  select c.number, c.state, c.outcome, p.name as "partName", p.part_number as "partNumber",
+    coalesce(u.serial, d.body #>> '{lines,0,serial}') as serial, c.family, c.symptom,
+    o.name as "otherParty", coalesce(n.line_count, 0)::int as "lineCount", c.asked_minor as "askedMinor",
+    c.currency, c.filed_at as "filedAt", c.updated_at as "updatedAt", c.answer_due_at as "answerDueAt",
+    c.clock_stopped_at as "clockStoppedAt", c.safety_reported as "safetyReported", h.name as "holderName",
+    coalesce(c.holder_id = $2, false) as "isHeldByMe", coalesce(c.parked_with_id = $2, false) as "isParkedWithMe",
+    (select count(*)::int from claim_flags f where f.claim_id = c.id) as "flagCount"
+  from claims c
+    join organisations o on o.id = c.${otherParty}_id
+    left join users h on h.id = c.holder_id
+    left join lateral (select count(*) as line_count, min(line_number) as first from claim_lines l where l.claim_id = c.id) n on true
+    left join claim_lines l1 on l1.claim_id = c.id and l1.line_number = n.first
+    left join claim_drafts d on d.claim_id = c.id and c.state = 'draft'
+    left join parts p on p.id = coalesce(l1.part_id, (d.body #>> '{lines,0,partId}')::uuid)
+    left join units u on u.id = l1.unit_id`;
+
+/** A search: a claim number, a serial, or the beginning of a part number or of the other party's name. */
+const search = `($3 = '' or c.number = $4 or exists (select 1 from claim_lines s join parts sp on sp.id = s.part_id
+    left join units su on su.id = s.unit_id where s.claim_id = c.id
+      and (su.serial_normal = $5 or sp.part_number ilike $6 or sp.name ilike $6)) or o.name ilike $6)`;
+
+const escapeLike = (text: string) => text.replace(/[\\%_]/gu, (sign) => `\\${sign}`);
+
+const bindings = (work: Work, { q }: ListQuery): unknown[] => {
+  const typed = q.trim();
+  return [work.actor.organisationId, work.actor.userId, typed, typed.replace(/\D/gu, ""), normaliseSerial(typed), `%${escapeLike(typed)}%`];
+};
+
+type Side = { mine: "seller" | "workshop"; other: "seller" | "workshop"; views: typeof JUDGING };
+
+async function listSide(work: Work, side: Side, view: ListView, query: ListQuery): Promise<ClaimList> {
+  const bind = bindings(work, query);
+  const where = `c.${side.mine}_id = $1 and ${side.views[view] ?? "false"} and ${search}`;
+  const claims = await rows<ListedClaim>(
+    work,
+    `${columns(side.other)} where ${where} order by ${ORDER[query.order]} limit ${PAGE_SIZE} offset $7`,
+    [...bind, (query.page - 1) * PAGE_SIZE],
+  );
+  const [total] = await rows<{ count: number }>(
+    work,
+    `select count(*)::int as count from claims c join organisations o on o.id = c.${side.other}_id where ${where} and $2::uuid is not null`,
+    bind,
+  );
+  return { claims, total: total?.count ?? 0, counts: await countViews(work, side) };
+}
+
+/** Counts stop at a thousand: nobody reads further, and they cost the same however large the table grows. */
+const COUNT_TO = 1000;
+
+async function countViews(work: Work, side: Side): Promise<ClaimList["counts"]> {
+  const counts: Partial<Record<ListView, number>> = {};
+  for (const [view, condition] of Object.entries(side.views)) {
+    const [found] = await rows<{ count: number }>(
+      work,
+      `select count(*)::int as count from (select 1 from claims c where c.${side.mine}_id = $1 and ${condition}
+         and $2::uuid is not null limit ${COUNT_TO}) counted`,
+      [work.actor.organisationId, work.actor.userId],
+    );
+    counts[view as ListView] = found?.count ?? 0;
+  }
+  return counts;
+}
+
+/** Claims as the distributor works them. */
+export const listReceivedClaims = (actor: Actor, query: ListQuery): Promise<ClaimList> =>
+  unitOfWork(actor, (work) => listSide(work, { mine: "seller", other: "workshop", views: JUDGING }, query.view ?? "toJudge", query));
+
+/** Claims as the workshop follows them. */
+export const listOwnClaims = (actor: Actor, query: ListQuery): Promise<ClaimList> =>
+  unitOfWork(actor, (work) => listSide(work, { mine: "workshop", other: "seller", views: OWN }, query.view ?? "onUs", query));

@@ -1,0 +1,68 @@
+import "server-only";
+import type { Actor } from "@/lib/access/actor";
+import { unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { ok, refuse, type Outcome, type Refusal } from "@/lib/kernel/outcome";
+import { Claim } from "@/models/claim";
+import { movesOpenTo, MOVES, type ClaimMove } from "../lifecycle";
+import { appendToTimeline } from "../timeline/service";
+
+/** A claim by its eight digits, locked until the transaction ends; null where this organisation has no such claim. */
+export const claimForChange = ({ transaction }: Work, number: string): Promise<Claim | null> =>
+  Claim.findOne({ where: { number }, transaction, lock: transaction.LOCK.UPDATE });
+
+/** What a move writes besides the new state. */
+export type Decision = {
+  readonly changes?: Partial<Claim["dataValues"]>;
+  readonly detail?: Readonly<Record<string, unknown>>;
+};
+
+type Decided<Code extends string> = Outcome<Decision, Code> | Promise<Outcome<Decision, Code>>;
+export type Moved = { readonly number: string };
+
+/** Thrown to take back what was written before a refusal was found; `undoing` turns it into the refusal again. */
+class Undone extends Error {
+  constructor(readonly refusal: Refusal) {
+    super(`refused: ${refusal.code}`);
+  }
+}
+
+/** A unit of work whose refusal undoes everything it wrote. */
+export async function undoing<T, Code extends string>(
+  actor: Actor,
+  act: (work: Work) => Promise<Outcome<T, Code>>,
+): Promise<Outcome<T, Code>> {
+  try {
+    return await unitOfWork(actor, async (work) => {
+      const outcome = await act(work);
+      if (!outcome.ok) throw new Undone(outcome);
+      return outcome;
+    });
+  } catch (fault) {
+    if (fault instanceof Undone) return fault.refusal as Refusal<Code>;
+    throw fault;
+  }
+}
+
+/**
+ * The one place a claim changes state: load and lock, ask the table of moves, decide, then write row and timeline
+ * together. Refuses `notFound`, `moveNotOpen`, and whatever the decision refuses; then nothing is written.
+ */
+export function moveClaim<Code extends string>(
+  actor: Actor,
+  number: string,
+  move: ClaimMove,
+  decide: (claim: Claim, work: Work) => Decided<Code>,
+): Promise<Outcome<Moved, Code | "notFound" | "moveNotOpen">> {
+  return undoing<Moved, Code | "notFound" | "moveNotOpen">(actor, async (work) => {
+    const claim = await claimForChange(work, number);
+    if (!claim) return refuse("notFound");
+    if (!movesOpenTo(actor, claim).includes(move)) return refuse("moveNotOpen");
+
+    const decision = await decide(claim, work);
+    if (!decision.ok) return decision;
+
+    await claim.update({ ...decision.value.changes, state: MOVES[move].to }, { transaction: work.transaction });
+    await appendToTimeline(work, claim, { kind: move, detail: decision.value.detail });
+    return ok({ number });
+  });
+}

@@ -1,0 +1,2 @@
+/** How a claim number is written: two groups of four, `4107-3826`. Stored as its eight digits. */
+export const printClaimNumber = (digits: string): string => `${digits.slice(0, 4)}-${digits.slice(4)}`;

@@ -1,0 +1,114 @@
+import "server-only";
+import type { Actor } from "@/lib/access/actor";
+import type { Coverage } from "@/lib/coverage/coverage";
+import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { calendarDay } from "@/lib/kernel/calendar-day";
+import { familyOf } from "@/lib/parts/families";
+import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
+import { coverageOfLine } from "../cover/queries";
+import type { ClaimFacts } from "../facts";
+import { judgeReading, type LimitsInForce } from "../sheet/judge-reading";
+import { factsOf, presentFile, presentSheet, type WorkedOut } from "../sheet/present";
+import { sheetRows, type SheetRows } from "../sheet/queries";
+import { evidenceRows, missingRows } from "../sheet/rows";
+import type { CaseLine, EvidenceRowView, SheetView } from "../sheet/view";
+
+/** Limits of readings follow the fitting day; without one, the shipment, then the failure. */
+async function limitsInForce(work: Work, sellerId: string, facts: ClaimFacts): Promise<LimitsInForce | null> {
+  const [line] = facts.lines;
+  if (!line) return null;
+  const on = calendarDay(line.fittedOn ?? line.invoiceLine?.shippedOn ?? facts.failedOn);
+  const rule = await findRule(work, "limits", { sellerId, family: facts.family, partId: line.part.id, on });
+  return rule && { limits: rule.body, rule: `${rule.ruleNumber} (${rule.validFrom})` };
+}
+
+async function workOutRows(work: Work, sheet: SheetRows, facts: ClaimFacts): Promise<EvidenceRowView[]> {
+  const { sellerId } = sheet.claim;
+  const family = familyOf(facts.family);
+  if (!family) return [];
+  const list = await evidenceListOn(work, {
+    sellerId,
+    family: facts.family,
+    symptom: facts.symptom,
+    on: calendarDay(facts.filedOn),
+  });
+  const inForce = await limitsInForce(work, sellerId, facts);
+  return evidenceRows(list.rows, {
+    facts,
+    files: sheet.evidence.map((file) => presentFile(file, facts)),
+    readings: facts.readings.map((reading) => judgeReading(reading, family, inForce)),
+  });
+}
+
+async function workOutCoverage(work: Work, sheet: SheetRows, facts: ClaimFacts, missing: number): Promise<Map<number, Coverage>> {
+  const { claim } = sheet;
+  const covered = new Map<number, Coverage>();
+  for (const line of facts.lines) {
+    const { coverage } = await coverageOfLine(work, {
+      claimId: claim.id,
+      sellerId: claim.sellerId,
+      workshopId: claim.workshopId,
+      family: facts.family,
+      partId: line.part.id,
+      unitId: line.unit?.id ?? null,
+      serialTyped: line.serialTyped,
+      shippedOn: line.invoiceLine?.shippedOn ?? null,
+      fittedOn: line.fittedOn,
+      failedOn: calendarDay(facts.failedOn),
+      filedOn: calendarDay(facts.filedOn),
+      evidenceMissing: missing,
+    });
+    covered.set(line.lineNumber, coverage);
+  }
+  return covered;
+}
+
+type Counts = Pick<CaseLine, "sameBatch" | "sameWorkshopThisMonth" | "sameVehicle">;
+
+/** Other claims that a case is read against; each count stops where nobody reads further. */
+async function countsAround(work: Work, claimId: string): Promise<Counts> {
+  const [counts] = await rows<Counts>(
+    work,
+    `select
+       (select count(*)::int from (select distinct o.claim_id from claim_lines l join units u on u.id = l.unit_id
+          join units ou on ou.seller_id = u.seller_id and ou.batch_id = u.batch_id
+          join claim_lines o on o.seller_id = ou.seller_id and o.unit_id = ou.id and o.claim_id <> l.claim_id
+        where l.claim_id = c.id limit 100) b) as "sameBatch",
+       (select count(*)::int from (select 1 from claims o where o.seller_id = c.seller_id and o.workshop_id = c.workshop_id
+          and o.id <> c.id and o.filed_at > c.filed_at - interval '30 days' and o.state <> 'draft' limit 100) w) as "sameWorkshopThisMonth",
+       (select count(*)::int from (select 1 from claims o where o.workshop_id = c.workshop_id and o.vehicle_id = c.vehicle_id
+          and o.seller_id = c.seller_id and o.id <> c.id and o.state <> 'draft' limit 100) v) as "sameVehicle"
+     from claims c where c.id = $1`,
+    [claimId],
+  );
+  return counts ?? { sameBatch: 0, sameWorkshopThisMonth: 0, sameVehicle: 0 };
+}
+
+const NOTHING: WorkedOut = { coverage: new Map(), rows: [], caseLine: null };
+
+async function workOut(work: Work, sheet: SheetRows): Promise<WorkedOut> {
+  const facts = factsOf(sheet);
+  if (!facts) return NOTHING;
+  const list = await workOutRows(work, sheet, facts);
+  const coverage = await workOutCoverage(work, sheet, facts, missingRows(list));
+  if (work.actor.organisationId !== sheet.claim.sellerId) return { coverage, rows: list, caseLine: null };
+  const first = coverage.get(1);
+  return {
+    coverage,
+    rows: list,
+    caseLine: {
+      monthsUsed: first?.monthsUsed ?? null,
+      daysLeft: first?.daysLeft ?? null,
+      evidenceDone: list.filter((row) => row.state === "done").length,
+      evidenceAll: list.length,
+      ...(await countsAround(work, sheet.claim.id)),
+    },
+  };
+}
+
+/** The Claim sheet as the asking organisation may see it; null where it has no such claim. */
+export const findClaimSheet = (actor: Actor, number: string): Promise<SheetView | null> =>
+  unitOfWork(actor, async (work) => {
+    const sheet = await sheetRows(work, number);
+    return sheet && presentSheet(actor, sheet, await workOut(work, sheet));
+  });

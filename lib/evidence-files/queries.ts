@@ -1,0 +1,32 @@
+import "server-only";
+import type { Actor } from "@/lib/access/actor";
+import { rows, unitOfWork } from "@/lib/db/unit-of-work";
+import { presentEvidence, type EvidenceRow, type EvidenceView } from "./present";
+
+export const EVIDENCE = `select id, claim_id as "claimId", row_id as "rowId", kind, media_type as "mediaType",
+  original_name as "originalName", size_bytes as "sizeBytes", sha256, object_key as "objectKey", view_key as "viewKey",
+  view_state as "viewState", received_at as "receivedAt" from evidence_files where withdrawn_at is null`;
+
+/** The files of a claim, oldest first, as far as the asking organisation may see them. */
+export const listEvidence = (actor: Actor, claimId: string): Promise<EvidenceView[]> =>
+  unitOfWork(actor, async (work) => {
+    const files = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 order by received_at, id`, [claimId]);
+    return files.map(presentEvidence);
+  });
+
+/** The same by the claim's number; null where this organisation has no such claim. */
+export const listEvidenceOfClaim = (actor: Actor, number: string): Promise<EvidenceView[] | null> =>
+  unitOfWork(actor, async (work) => {
+    const [claim] = await rows<{ id: string }>(work, "select id from claims where number = $1", [number]);
+    if (!claim) return null;
+    const files = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 order by received_at, id`, [claim.id]);
+    return files.map(presentEvidence);
+  });
+
+/** A file to be sent out; null for one that is not this organisation's, like one that does not exist. */
+export const findEvidence = (actor: Actor, id: string): Promise<EvidenceRow | null> =>
+  unitOfWork(actor, async (work) => {
+    if (!/^[0-9a-f-]{36}$/iu.test(id)) return null;
+    const [file] = await rows<EvidenceRow>(work, `${EVIDENCE} and id = $1`, [id]);
+    return file ?? null;
+  });

@@ -1,0 +1,139 @@
+import "server-only";
+import { z } from "zod";
+import type { Actor } from "@/lib/access/actor";
+import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { FILE_KINDS, LIMITS, type FileKind } from "@/lib/kernel/limits";
+import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { originalKey } from "@/lib/storage/keys";
+import { copyOnce, remove } from "@/lib/storage/objects";
+import { receiveFile, type Received, type ReceiveRefusal } from "@/lib/storage/receive";
+import { undoing } from "@/lib/claims/moves/service";
+import { presentEvidence, type EvidenceRow } from "./present";
+import { EVIDENCE } from "./queries";
+
+const target = z.object({ claimId: z.uuid(), rowId: z.string().regex(/^[a-z][A-Za-z0-9]{0,59}$/u), kind: z.enum(FILE_KINDS) });
+const captured = z.object({ takenAt: z.iso.datetime().optional(), by: z.literal("phone").optional() });
+
+type Target = z.infer<typeof target>;
+type ClaimRow = { id: string; sellerId: string; workshopId: string; state: string; files: number; bytes: string };
+export type EvidenceRefusal = ReceiveRefusal | "notFound" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
+
+/** The claim an upload is for, if it is this workshop's and still takes files, with how much it holds already. */
+async function openClaim(work: Work, claimId: string): Promise<Outcome<ClaimRow, "notFound" | "moveNotOpen">> {
+  const [claim] = await rows<ClaimRow>(
+    work,
+    `select c.id, c.seller_id as "sellerId", c.workshop_id as "workshopId", c.state,
+       (select count(*)::int from evidence_files e where e.claim_id = c.id and e.withdrawn_at is null) as files,
+       (select coalesce(sum(e.size_bytes), 0) from evidence_files e where e.claim_id = c.id and e.withdrawn_at is null) as bytes
+     from claims c where c.id = $1 and c.workshop_id = $2 for update of c`,
+    [claimId, work.actor.organisationId],
+  );
+  if (!claim) return refuse("notFound");
+  return claim.state === "draft" || claim.state === "answerNeeded" ? ok(claim) : refuse("moveNotOpen");
+}
+
+function room(claim: ClaimRow, moreBytes: number): Outcome<true, "filesTooMany" | "bytesTooMany"> {
+  if (claim.files >= LIMITS.filesPerClaim) return refuse("filesTooMany", { most: LIMITS.filesPerClaim });
+  const over = Number(claim.bytes) + moreBytes > LIMITS.bytesPerClaim;
+  return over ? refuse("bytesTooMany", { mostMb: LIMITS.bytesPerClaim / 1e6 }) : ok(true);
+}
+
+/** Before a byte is kept: is there such a claim, does it take files, is there room. */
+const decideFor =
+  (actor: Actor) =>
+  async (fields: Readonly<Record<string, string>>): Promise<Outcome<FileKind, EvidenceRefusal>> => {
+    const given = target.safeParse(fields);
+    if (!given.success) return refuse("notFound");
+    return unitOfWork(actor, async (work) => {
+      const claim = await openClaim(work, given.data.claimId);
+      if (!claim.ok) return claim;
+      const space = room(claim.value, 0);
+      return space.ok ? ok(given.data.kind) : space;
+    });
+  };
+
+const readCaptured = (text: string | undefined): unknown => {
+  try {
+    const read = captured.safeParse(JSON.parse(text ?? "{}"));
+    return read.success ? read.data : {};
+  } catch {
+    return {};
+  }
+};
+
+async function insertRow(work: Work, claim: ClaimRow, to: Target, file: Received, capturedText: string | undefined) {
+  const isPhoto = to.kind === "photo";
+  const [made] = await rows<{ id: string }>(
+    work,
+    `insert into evidence_files (claim_id, seller_id, workshop_id, row_id, kind, media_type, original_name, size_bytes, sha256,
+       object_key, view_state, captured, uploaded_by_id)
+     values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11, $12, $13)
+     on conflict (claim_id, row_id, sha256) do nothing returning id`,
+    [
+      claim.id,
+      claim.sellerId,
+      claim.workshopId,
+      to.rowId,
+      to.kind,
+      file.mediaType,
+      file.name,
+      file.sizeBytes,
+      file.sha256,
+      originalKey(file.sha256),
+      isPhoto ? "waiting" : "notNeeded",
+      JSON.stringify(readCaptured(capturedText)),
+      work.actor.userId,
+    ],
+  );
+  if (made) {
+    const task = isPhoto ? "viewCopy" : to.kind === "runLog" ? "readRunLog" : null;
+    if (task)
+      await rows(work, "select graphile_worker.enqueue($1, $2, $3)", [task, JSON.stringify({ evidenceId: made.id }), `${task}:${made.id}`]);
+    await rows(work, "select guarded.flag_seen_before($1)", [made.id]);
+  }
+  const [row] = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 and row_id = $2 and sha256 = $3`, [claim.id, to.rowId, file.sha256]);
+  return row;
+}
+
+/** Files the received bytes under their content and notes them on the claim, in one transaction under the claim's lock. */
+const keep = (actor: Actor, to: Target, file: Received, capturedText: string | undefined) =>
+  undoing<ReturnType<typeof presentEvidence>, EvidenceRefusal>(actor, async (work) => {
+    const claim = await openClaim(work, to.claimId);
+    if (!claim.ok) return claim;
+    const space = room(claim.value, file.sizeBytes);
+    if (!space.ok) return space;
+    const row = await insertRow(work, claim.value, to, file, capturedText);
+    return row ? ok(presentEvidence(row)) : refuse("uploadBroken", { name: file.name });
+  });
+
+/**
+ * Receives one file for a row of a claim's Evidence list. The original is stored byte for byte under its hash and never
+ * replaced; the same bytes sent twice are one file. Refuses with a sentence that names the file, the limit and the way out.
+ */
+export async function receiveEvidence(actor: Actor, request: Request) {
+  const received = await receiveFile(request, decideFor(actor));
+  if (!received.ok) return received;
+  const file = received.value;
+  try {
+    const to = target.parse(file.fields);
+    await copyOnce(file.quarantine, originalKey(file.sha256));
+    return await keep(actor, to, file, file.fields.captured);
+  } finally {
+    await remove(file.quarantine).catch(() => undefined);
+  }
+}
+
+/** Takes back a file that no sent revision holds. Its bytes stay until retention ends; nobody is shown them any more. */
+export const withdrawEvidence = (actor: Actor, id: string) =>
+  undoing<{ id: string }, "notFound" | "evidenceSent">(actor, async (work) => {
+    const [file] = await rows<{ id: string; isSent: boolean }>(
+      work,
+      `select e.id, exists (select 1 from revision_evidence r where r.evidence_id = e.id) as "isSent"
+       from evidence_files e where e.id = $1 and e.workshop_id = $2 and e.withdrawn_at is null for update of e`,
+      [id, actor.organisationId],
+    );
+    if (!file) return refuse("notFound");
+    if (file.isSent) return refuse("evidenceSent");
+    await rows(work, "update evidence_files set withdrawn_at = now() where id = $1 returning id", [id]);
+    return ok({ id });
+  });

@@ -1,0 +1,61 @@
+import "server-only";
+import { createTranslator } from "next-intl";
+import { parseCalendarDay } from "@/lib/kernel/calendar-day";
+import { formatDay } from "@/lib/kernel/format";
+import { formatTag, type Locale } from "@/lib/kernel/locale";
+import { loadMessages } from "@/lib/web/messages";
+
+export type Letter = { readonly subject: string; readonly text: string; readonly html: string };
+
+const escapeHtml = (text: string) => text.replace(/[&<>"']/gu, (sign) => `&#${sign.charCodeAt(0)};`);
+
+type Values = Record<string, string | number>;
+
+/** Params as words: days and instants in the reader's language, codes left for their own sentences. */
+function valuesOf(params: Readonly<Record<string, unknown>>, locale: Locale): Values {
+  const values: Values = {};
+  for (const [name, value] of Object.entries(params)) {
+    if (typeof value === "number") values[name] = value;
+    if (typeof value !== "string") continue;
+    const day = parseCalendarDay(value.slice(0, 10));
+    values[name] = day && /^\d{4}-\d\d-\d\d(T.*)?$/u.test(value) ? formatDay(day, locale) : value;
+  }
+  return values;
+}
+
+const htmlPage = (locale: Locale, subject: string, paragraphs: readonly string[], link: { href: string; label: string } | null) => `<!doctype html>
+<html lang="${formatTag(locale)}"><head><meta charset="utf-8"><meta name="color-scheme" content="light dark"><title>${escapeHtml(subject)}</title></head>
+<body style="margin:0;padding:24px;font:16px/1.5 Georgia,serif">
+<div style="max-width:36em;border-top:4px solid #0B5563;padding-top:16px">
+${paragraphs.map((text) => `<p style="white-space:pre-line">${escapeHtml(text)}</p>`).join("\n")}
+${link ? `<p><a href="${escapeHtml(link.href)}" style="color:#0B5563">${escapeHtml(link.label)}</a></p>` : ""}
+</div></body></html>`;
+
+/**
+ * The mail of a kind in the reader's language, as text and as HTML with the same words. Throws for a kind without
+ * sentences: it then stays in the outbox and somebody looks.
+ */
+export function letterFor(kind: string, params: Readonly<Record<string, unknown>>, locale: Locale): Promise<Letter> {
+  const messages = loadMessages(locale);
+  const t = createTranslator({
+    locale: formatTag(locale),
+    messages: messages as Record<string, never>,
+    onError: (error) => {
+      throw error;
+    },
+  }) as (key: string, values?: Values) => string;
+  const values = valuesOf(params, locale);
+  const rowIds = Array.isArray(params.rowIds) ? params.rowIds.map(String) : [];
+  const wanted = rowIds.map((rowId) => `- ${t(`evidence.rows.${rowId}.name`)}`).join("\n");
+  const withWords: Values = {
+    ...values,
+    count: rowIds.length,
+    outcomeWords: typeof params.outcome === "string" ? t(`ui.mark.claim.${params.outcome}`) : "",
+  };
+  const subject = t(`mails.${kind}.subject`, withWords);
+  const paragraphs = [t("mails.greeting", withWords), t(`mails.${kind}.body`, withWords), wanted].filter((text) => text !== "");
+  const href = typeof params.link === "string" ? params.link : null;
+  const link = href ? { href, label: t(`mails.${kind}.link`) } : null;
+  const text = [...paragraphs, ...(link ? [`${link.label}: ${link.href}`] : []), t("mails.footer")].join("\n\n");
+  return Promise.resolve({ subject, text, html: htmlPage(locale, subject, [...paragraphs, t("mails.footer")], link) });
+}

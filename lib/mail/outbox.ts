@@ -1,0 +1,72 @@
+import "server-only";
+import { rows, type Work } from "@/lib/db/unit-of-work";
+import type { Locale } from "@/lib/kernel/locale";
+
+/**
+ * Every mail the product sends, with what its text needs: codes, digits and days, never words, because the worker
+ * writes the text in the recipient's language (`lib/mail/letter.ts`).
+ */
+export type MailParams = {
+  passwordReset: { link: string; minutes: number };
+  invitation: { link: string; organisation: string; inviter: string; days: number };
+  claimFiled: { link: string; number: string; distributor: string; part: string; answerBy: string };
+  queryAsked: {
+    link: string;
+    number: string;
+    distributor: string;
+    question: string;
+    family: string;
+    rowIds: string[];
+    answerBy: string;
+  };
+  queryAnswered: { link: string; number: string; workshop: string; revision: number };
+  claimDecided: { link: string; number: string; distributor: string; outcome: string; letter: string; contestUntil: string };
+};
+
+export type MailKind = keyof MailParams;
+
+type Letter<Kind extends MailKind> = {
+  readonly kind: Kind;
+  readonly params: MailParams[Kind];
+  /** What makes this mail this mail: written twice, it is sent once. */
+  readonly dedupeKey: string;
+};
+
+/** Puts a mail into the outbox in the transaction of the change it speaks of: no change, no mail; no mail lost. */
+export const mailTo = <Kind extends MailKind>(
+  work: Work,
+  recipient: { email: string; locale: Locale },
+  letter: Letter<Kind>,
+): Promise<unknown> =>
+  rows(
+    work,
+    `insert into outbox (organisation_id, kind, dedupe_key, recipient, locale, params, request_id)
+     values ($1, $2, $3, $4, $5, $6, $7)`,
+    [
+      work.actor.organisationId,
+      letter.kind,
+      letter.dedupeKey,
+      recipient.email,
+      recipient.locale,
+      JSON.stringify(letter.params),
+      work.actor.requestId,
+    ],
+  );
+
+/**
+ * Mails the people of a claim on one side: who started it and the managers (`workshop`), or who holds it (`holder`).
+ * Their addresses stay in the database: one organisation never reads those of another.
+ */
+export const mailClaimPeople = <Kind extends MailKind>(
+  work: Work,
+  claimId: string,
+  to: "workshop" | "holder",
+  letter: Letter<Kind>,
+): Promise<unknown> =>
+  rows(work, "select guarded.mail_claim_people($1, $2, $3, $4, $5)", [
+    claimId,
+    to,
+    letter.kind,
+    JSON.stringify(letter.params),
+    letter.dedupeKey,
+  ]);

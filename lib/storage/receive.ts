@@ -1,0 +1,221 @@
+import "server-only";
+import { createHash, randomUUID, type Hash } from "node:crypto";
+import type { IncomingMessage } from "node:http";
+import { PassThrough, Readable, Writable } from "node:stream";
+import formidable from "formidable";
+import type { Upload } from "@aws-sdk/lib-storage";
+import { mostBytes, type FileKind } from "@/lib/kernel/limits";
+import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { typeOf, type MediaType, type TypeRefusal } from "./file-type";
+import { quarantineKey } from "./keys";
+import { putStream, remove } from "./objects";
+
+/** Bytes that arrived whole, still in quarantine under a key of their own. */
+export type Received = {
+  readonly quarantine: string;
+  readonly name: string;
+  readonly sizeBytes: number;
+  readonly sha256: string;
+  readonly mediaType: MediaType;
+};
+
+export type ReceiveRefusal = TypeRefusal | "fileMissing" | "fileEmpty" | "fileTooBig" | "uploadBroken" | "uploadTooMany";
+
+type Decide<Code extends string> = (fields: Readonly<Record<string, string>>) => Promise<Outcome<FileKind, Code>>;
+
+const HEAD_BYTES = 8192;
+const SILENCE_MS = 30_000;
+const MOST_AT_ONCE = 8;
+
+let running = 0;
+
+/** A name for people to read: no path, no control or direction marks, at most 200 characters. */
+export const readableName = (name: string): string =>
+  (name.split(/[\\/]/u).at(-1) ?? "")
+    .replace(/[\p{Cc}\p{Cf}]/gu, "")
+    .trim()
+    .slice(-200) || "file";
+
+/** Takes a file as it comes in: its head decides the type, everything is hashed, and it goes on to the store at once. */
+class Intake extends Writable {
+  readonly key = quarantineKey(randomUUID());
+  private readonly hash: Hash = createHash("sha256");
+  private readonly through = new PassThrough({ highWaterMark: 1 << 20 });
+  private head = Buffer.alloc(0);
+  private upload: Upload | undefined;
+  private sent: Promise<unknown> = Promise.resolve();
+  type: Outcome<MediaType, TypeRefusal> | undefined;
+  sizeBytes = 0;
+
+  constructor(
+    readonly name: string,
+    private readonly kind: FileKind,
+  ) {
+    super({ highWaterMark: 1 << 20 });
+  }
+
+  private async decide(): Promise<void> {
+    this.type = await typeOf(this.head, this.name, this.kind);
+    if (!this.type.ok) throw new Refused(this.type);
+    this.upload = putStream(this.key, this.through);
+    this.sent = this.upload.done();
+    this.sent.catch(() => undefined);
+    await this.pass(this.head);
+  }
+
+  private pass(data: Buffer): Promise<void> {
+    if (this.through.write(data)) return Promise.resolve();
+    return new Promise((resolve, reject) => {
+      this.through.once("drain", resolve);
+      this.through.once("error", reject);
+    });
+  }
+
+  private async take(data: Buffer): Promise<void> {
+    this.sizeBytes += data.length;
+    const most = mostBytes(this.kind);
+    if (this.sizeBytes > most) throw new Refused(refuse("fileTooBig", { name: this.name, limitMb: most / 1e6 }));
+    this.hash.update(data);
+    if (this.type) return this.pass(data);
+    this.head = Buffer.concat([this.head, data]);
+    return this.head.length >= HEAD_BYTES ? this.decide() : undefined;
+  }
+
+  override _write(data: Buffer, _encoding: string, done: (fault?: Error | null) => void): void {
+    this.take(data).then(() => done(), done);
+  }
+
+  private async finish(): Promise<void> {
+    if (this.sizeBytes === 0) throw new Refused(refuse("fileEmpty", { name: this.name }));
+    if (!this.type) await this.decide();
+    this.through.end();
+    await this.sent;
+  }
+
+  override _final(done: (fault?: Error | null) => void): void {
+    this.finish().then(() => done(), done);
+  }
+
+  get sha256(): string {
+    return this.hash.digest("hex");
+  }
+
+  /** Leaves nothing in the store, whatever had arrived. */
+  async drop(): Promise<void> {
+    this.through.destroy();
+    await this.upload?.abort().catch(() => undefined);
+    await this.sent.catch(() => undefined);
+    await remove(this.key).catch(() => undefined);
+  }
+}
+
+/** A refusal found in the middle of a stream. */
+class Refused extends Error {
+  constructor(readonly refusal: { ok: false; code: string; detail: Readonly<Record<string, string | number>> }) {
+    super(refusal.code);
+  }
+}
+
+/** The request as the parser wants it: without a length it would take the body for empty. */
+function asNodeRequest(request: Request, watched: Readable): IncomingMessage {
+  const headers = Object.fromEntries(request.headers);
+  if (!headers["content-length"] && !headers["transfer-encoding"]) headers["transfer-encoding"] = "chunked";
+  return Object.assign(watched, { headers, method: request.method }) as unknown as IncomingMessage;
+}
+
+/** Ends a request that sends nothing for too long. */
+function watch(request: Request): { readonly body: Readable; readonly stop: () => void } {
+  const source = request.body ? Readable.fromWeb(request.body as never) : Readable.from([]);
+  const body = new PassThrough({ highWaterMark: 1 << 20 });
+  let timer: NodeJS.Timeout | undefined;
+  const stop = () => clearTimeout(timer);
+  const rearm = () => {
+    stop();
+    timer = setTimeout(() => source.destroy(new Error("silence")), SILENCE_MS);
+  };
+  rearm();
+  source.on("data", rearm).on("end", stop).on("error", (fault) => body.destroy(fault));
+  source.pipe(body);
+  return { body, stop };
+}
+
+const refusalOf = (fault: unknown, intake: Intake | undefined) =>
+  fault instanceof Refused ? fault.refusal : refuse("uploadBroken", { name: intake?.name ?? "" });
+
+/**
+ * Receives one file of a form while it streams, memory flat whatever its size. The text fields come first; `decide` says
+ * from them what kind of file is expected, or refuses before a byte of it is kept. What is refused leaves nothing behind.
+ */
+export async function receiveFile<Code extends string>(
+  request: Request,
+  decide: Decide<Code>,
+): Promise<Outcome<Received & { fields: Readonly<Record<string, string>> }, Code | ReceiveRefusal>> {
+  if (running >= MOST_AT_ONCE) return refuse("uploadTooMany");
+  running += 1;
+  try {
+    return await receive(request, decide);
+  } finally {
+    running -= 1;
+  }
+}
+
+/** The parser, with our intake in place of its temporary files and our decision before a file's first byte. */
+function parserFor<Code extends string>(fields: Record<string, string>, decide: Decide<Code>, onIntake: (intake: Intake) => void) {
+  let kind: FileKind = "photo";
+  const form = formidable({
+    maxFiles: 1,
+    maxFields: 20,
+    maxFieldsSize: 64 * 1024,
+    maxFileSize: 30_000_000,
+    maxTotalFileSize: 30_000_000,
+    allowEmptyFiles: true,
+    minFileSize: 0,
+    fileWriteStreamHandler: (file) => {
+      const intake = new Intake(readableName(nameOf(file)), kind);
+      onIntake(intake);
+      return intake;
+    },
+  });
+  const usual = form.onPart.bind(form);
+  form.on("field", (name, value) => {
+    fields[name] = value;
+  });
+  // Parts come one after the other, and the next waits for this: the fields before the file say what it may be.
+  form.onPart = async (part) => {
+    if (typeof part.originalFilename === "string") {
+      const decided = await decide(fields);
+      if (!decided.ok) {
+        form.emit("error", new Refused(decided));
+        return;
+      }
+      kind = decided.value;
+    }
+    await usual(part);
+  };
+  return form;
+}
+
+async function receive<Code extends string>(
+  request: Request,
+  decide: Decide<Code>,
+): Promise<Outcome<Received & { fields: Readonly<Record<string, string>> }, Code | ReceiveRefusal>> {
+  const fields: Record<string, string> = {};
+  const { body, stop } = watch(request);
+  const intakes: Intake[] = [];
+  try {
+    await parserFor(fields, decide, (intake) => intakes.push(intake)).parse(asNodeRequest(request, body));
+    const [intake] = intakes;
+    if (!intake?.type?.ok) return refuse("fileMissing");
+    const { key: quarantine, name, sizeBytes, sha256 } = intake;
+    return ok({ quarantine, name, sizeBytes, sha256, mediaType: intake.type.value, fields });
+  } catch (fault) {
+    for (const intake of intakes) await intake.drop();
+    return refusalOf(fault, intakes[0]) as Outcome<never, Code | ReceiveRefusal>;
+  } finally {
+    stop();
+    body.destroy();
+  }
+}
+
+const nameOf = (file: unknown): string =>
+  typeof file === "object" && file !== null && "originalFilename" in file && typeof file.originalFilename === "string" ? file.originalFilename : "";

@@ -1,0 +1,70 @@
+import "server-only";
+import { revalidatePath } from "next/cache";
+import { headers } from "next/headers";
+import { getTranslations } from "next-intl/server";
+import { z } from "zod";
+import type { Actor } from "@/lib/access/actor";
+import type { ActionResult, FormAction } from "@/lib/kernel/action-result";
+import type { Outcome } from "@/lib/kernel/outcome";
+import { formValues } from "./form-values";
+import { log } from "./log";
+import { isFromOurPages } from "./origin";
+import { requireActor } from "./session";
+import { wordingFor, type RefusalCode } from "./wording";
+
+type Sentences = (key: string) => string;
+
+/** A shape names its sentence in its message (`forms` in the message files); one that names none says what any field says. */
+const fieldSentences = (error: z.ZodError, t: Sentences & { has(key: string): boolean }): Record<string, string> => {
+  const fields: Record<string, string> = {};
+  for (const issue of error.issues) {
+    const name = issue.path.join(".") || "form";
+    fields[name] ??= t.has(issue.message) ? t(issue.message) : t("missing");
+  }
+  return fields;
+};
+
+type After<T> = {
+  /** The path to draw anew once the verb has done its work. */
+  readonly toPath?: (value: T) => string;
+  /** Makes nested input of fields named with dots. Field errors then carry the same dotted names. */
+  readonly shapeFields?: (typed: Readonly<Record<string, string | readonly string[]>>) => unknown;
+};
+
+/** Every server action is one call of this: origin, session, shape, the domain's verb, the wording. */
+export function action<Shape extends z.ZodType, T>(
+  shape: Shape,
+  verb: (actor: Actor, input: z.infer<Shape>) => Promise<Outcome<T, RefusalCode>>,
+  after: ((value: T) => string) | After<T> = {},
+): FormAction<T> {
+  const { toPath, shapeFields } = typeof after === "function" ? { toPath: after, shapeFields: undefined } : after;
+  return async (_previous: unknown, form: FormData): Promise<ActionResult<T>> => {
+    const typed = formValues(form);
+    const actor = await requireActor();
+    const problems = await getTranslations({ locale: actor.locale, namespace: "problems" });
+    if (!isFromOurPages(await headers())) return { ok: false, message: problems("crossSite"), fields: {}, typed };
+
+    const input = shape.safeParse(shapeFields ? shapeFields(typed) : typed);
+    if (!input.success) {
+      const t = await getTranslations({ locale: actor.locale, namespace: "forms" });
+      return { ok: false, fields: fieldSentences(input.error, t as never), typed };
+    }
+    try {
+      const outcome = await verb(actor, input.data);
+      if (!outcome.ok) {
+        const message = await wordingFor(outcome, actor.locale);
+        return outcome.field ? { ok: false, fields: { [outcome.field]: message }, typed } : { ok: false, message, fields: {}, typed };
+      }
+      if (toPath) revalidatePath(toPath(outcome.value));
+      return outcome;
+    } catch (fault) {
+      log.error({ event: "fault", requestId: actor.requestId, fault: fault instanceof Error ? fault.stack : String(fault) });
+      return { ok: false, message: problems("fault", { id: actor.requestId }), fields: {}, typed };
+    }
+  };
+}
+
+/** Stops a form action that did not come from a page of ours; nothing has been read or written then. */
+export async function guardOrigin(): Promise<void> {
+  if (!isFromOurPages(await headers())) throw new Error("a form action came from another site");
+}

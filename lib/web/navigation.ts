@@ -1,0 +1,17 @@
+import type { Route } from "next";
+import type { Right } from "@/lib/access/rights";
+import type navigation from "@/messages/en/navigation.json";
+
+export type Place = { readonly key: keyof typeof navigation; readonly href: Route; readonly right: Right };
+
+/** The places of the product in the order of the bar; who lacks the right does not see the place. */
+export const PLACES: readonly Place[] = [
+  { key: "startClaim", href: "/claims/new", right: "startClaim" },
+  { key: "workshopToday", href: "/workshop-today", right: "seeOwnClaims" },
+  { key: "toJudge", href: "/judging", right: "seeReceivedClaims" },
+  { key: "invoiceLines", href: "/invoice-lines", right: "importInvoiceLines" },
+  { key: "catalogue", href: "/catalogue", right: "keepCatalogue" },
+  { key: "accounts", href: "/accounts", right: "keepCatalogue" },
+  { key: "ruleBook", href: "/rule-book", right: "seeRuleBook" },
+  { key: "people", href: "/people", right: "keepPeople" },
+];

@@ -1,0 +1,171 @@
+import "server-only";
+import { createHash } from "node:crypto";
+import { getTranslations } from "next-intl/server";
+import type { z } from "zod";
+import type { Locale } from "@/lib/kernel/locale";
+import type { Outcome } from "@/lib/kernel/outcome";
+import { withIdempotency } from "./idempotency";
+import { log } from "./log";
+import { isFromOurPages } from "./origin";
+import { problemResponse, type FieldProblem } from "./problem";
+import { currentSession, requestIdOf, type Session } from "./session";
+import { wordingFor, type RefusalCode } from "./wording";
+
+const STATUS: Partial<Record<RefusalCode, number>> = {
+  notFound: 404,
+  notAllowed: 403,
+  staleVersion: 412,
+  tooLarge: 413,
+  fileTooBig: 413,
+  filesTooMany: 413,
+  bytesTooMany: 413,
+  uploadTooMany: 429,
+  fileTypeNotAllowed: 415,
+  fileTypeHeic: 415,
+  fileNameDisagrees: 415,
+  fileNotText: 415,
+};
+
+/** The HTTP status of a refusal: not found 404, not allowed 403, stale 412, everything else the domain refuses 409. */
+export const statusOf = (code: RefusalCode): number => STATUS[code] ?? 409;
+
+export type Asked<Body, Params> = {
+  readonly session: Session;
+  readonly request: Request;
+  readonly params: Params;
+  readonly body: Body;
+};
+
+type Options<Shape extends z.ZodType | undefined> = {
+  readonly name: string;
+  /** The shape of a JSON body; without one the handler reads the request itself. */
+  readonly body?: Shape;
+  /** A POST that must take effect once: needs an Idempotency-Key. */
+  readonly idempotent?: boolean;
+  /** Most bytes of a JSON body. */
+  readonly maxBytes?: number;
+};
+
+type BodyOf<Shape> = Shape extends z.ZodType ? z.infer<Shape> : undefined;
+type Handler<Body, Params> = (asked: Asked<Body, Params>) => Promise<Outcome<unknown, RefusalCode> | Response>;
+
+const MAX_JSON_BYTES = 256 * 1024;
+
+const words = (locale: Locale) => getTranslations({ locale, namespace: "problems" });
+
+const json = (value: unknown, requestId: string, status = 200) =>
+  new Response(JSON.stringify(value), {
+    status,
+    headers: { "content-type": "application/json", "cache-control": "private, no-store", "x-request-id": requestId },
+  });
+
+async function refusal(code: "signedOut" | "crossSite" | "tooLarge" | "notJson" | "fault", status: number, locale: Locale, requestId: string) {
+  const t = await words(locale);
+  return problemResponse({ status, code, title: t(code, { id: requestId }) }, requestId);
+}
+
+async function fieldProblems(error: z.ZodError, locale: Locale): Promise<FieldProblem[]> {
+  const t = await words(locale);
+  return error.issues.map((issue) => ({ pointer: `/${issue.path.join("/")}`, detail: t("fieldShape") }));
+}
+
+/** Reads at most `maxBytes`, whatever the sender says about the length. */
+async function readText(request: Request, maxBytes: number): Promise<string | null> {
+  const reader = request.body?.getReader();
+  if (!reader) return "";
+  const chunks: Uint8Array[] = [];
+  let size = 0;
+  for (let part = await reader.read(); !part.done; part = await reader.read()) {
+    size += part.value.byteLength;
+    if (size > maxBytes) {
+      await reader.cancel();
+      return null;
+    }
+    chunks.push(part.value);
+  }
+  return Buffer.concat(chunks).toString("utf8");
+}
+
+const parseJson = (text: string): unknown => {
+  try {
+    return JSON.parse(text) as unknown;
+  } catch {
+    return undefined;
+  }
+};
+
+async function answer(outcome: Outcome<unknown, RefusalCode> | Response, session: Session): Promise<Response> {
+  const { requestId, locale } = session.actor;
+  if (outcome instanceof Response) {
+    outcome.headers.set("x-request-id", requestId);
+    if (!outcome.headers.has("cache-control")) outcome.headers.set("cache-control", "private, no-store");
+    return outcome;
+  }
+  if (outcome.ok) return json(outcome.value, requestId);
+  const sentence = await wordingFor(outcome, locale);
+  const errors = outcome.field ? [{ pointer: `/${outcome.field}`, detail: sentence }] : undefined;
+  return problemResponse({ status: statusOf(outcome.code), code: outcome.code, title: sentence, errors }, requestId);
+}
+
+/**
+ * Every route of the API is one call of this: session, origin, shape, the domain's verb, the wording. Answers problem
+ * documents for everything that is not a success, and never says more about a foreign thing than about one that is not there.
+ */
+export function route<Params = Record<string, never>, Shape extends z.ZodType | undefined = undefined>(
+  options: Options<Shape>,
+  handler: Handler<BodyOf<Shape>, Params>,
+) {
+  return async (request: Request, context: { params: Promise<Params> }): Promise<Response> => {
+    const started = performance.now();
+    const requestId = requestIdOf(request.headers);
+    let session: Session | null = null;
+    let response: Response;
+    try {
+      session = await currentSession();
+      response = session
+        ? await serve(options, handler, { session, request, params: await context.params })
+        : await refusal("signedOut", 401, "en", requestId);
+    } catch (fault) {
+      log.error({ event: "fault", requestId, route: options.name, fault: fault instanceof Error ? fault.stack : String(fault) });
+      response = await refusal("fault", 500, session?.actor.locale ?? "en", session?.actor.requestId ?? requestId);
+    }
+    log.info({
+      event: "request",
+      requestId: session?.actor.requestId ?? requestId,
+      route: options.name,
+      method: request.method,
+      status: response.status,
+      userId: session?.actor.userId,
+      organisationId: session?.actor.organisationId,
+      durationMs: Math.round(performance.now() - started),
+    });
+    return response;
+  };
+}
+
+async function serve<Params, Shape extends z.ZodType | undefined>(
+  options: Options<Shape>,
+  handler: Handler<BodyOf<Shape>, Params>,
+  asked: Omit<Asked<undefined, Params>, "body">,
+): Promise<Response> {
+  const { session, request } = asked;
+  const { locale, requestId } = session.actor;
+  const writes = request.method !== "GET" && request.method !== "HEAD";
+  if (writes && !isFromOurPages(request.headers)) return refusal("crossSite", 403, locale, requestId);
+  if (!options.body) return answer(await handler({ ...asked, body: undefined as BodyOf<Shape> }), session);
+
+  const text = await readText(request, options.maxBytes ?? MAX_JSON_BYTES);
+  if (text === null) return refusal("tooLarge", 413, locale, requestId);
+  const sent = parseJson(text);
+  if (sent === undefined) return refusal("notJson", 400, locale, requestId);
+  const body = options.body.safeParse(sent);
+  if (!body.success) {
+    const t = await words(locale);
+    const errors = await fieldProblems(body.error, locale);
+    return problemResponse({ status: 422, code: "shape", title: t("shape"), errors }, requestId);
+  }
+  const act = async () => answer(await handler({ ...asked, body: body.data as BodyOf<Shape> }), session);
+  if (!options.idempotent) return act();
+  const fingerprint = createHash("sha256").update(text).digest("hex");
+  return withIdempotency({ actor: session.actor, route: options.name, key: request.headers.get("idempotency-key"), fingerprint }, act);
+}

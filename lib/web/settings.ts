@@ -1,0 +1,27 @@
+import "server-only";
+import { z } from "zod";
+
+const settings = z.object({
+  PUBLIC_URL: z.url(),
+  NEXTAUTH_SECRET: z.string().min(32),
+  STORE_ENDPOINT: z.url(),
+  STORE_REGION: z.string().min(1),
+  STORE_BUCKET: z.string().min(3),
+  STORE_ACCESS_KEY_ID: z.string().min(1),
+  STORE_SECRET_ACCESS_KEY: z.string().min(1),
+  SMTP_HOST: z.string().min(1),
+  SMTP_PORT: z.coerce.number().int(),
+  MAIL_FROM: z.string().min(3),
+});
+
+/** The settings of this process, checked when they are first asked for. Throws, naming what is missing. */
+export const setting = <Name extends keyof z.infer<typeof settings>>(name: Name): z.infer<typeof settings>[Name] => {
+  const read = settings.shape[name].safeParse(process.env[name]);
+  if (!read.success) throw new Error(`The setting ${name} is missing or wrong: start the product with npm start`);
+  return read.data as z.infer<typeof settings>[Name];
+};
+
+/** Where this installation is reached. Links in mails are made from it and never from a request's headers. */
+export const publicUrl = (path = "/"): string => new URL(path, setting("PUBLIC_URL")).href;
+
+export const isSecure = (): boolean => setting("PUBLIC_URL").startsWith("https:");
