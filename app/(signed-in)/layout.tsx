@@ -1,5 +1,6 @@
 import { getTranslations } from "next-intl/server";
 import type { ReactNode } from "react";
+import { LiveProvider } from "@/components/live/query-provider";
 import { AppHeader, PageBody } from "@/components/ui/app-header";
 import { LinkButton } from "@/components/ui/link-button";
 import { PLACES } from "@/lib/web/navigation";
@@ -24,7 +25,9 @@ export default async function SignedInLayout({ children }: { children: ReactNode
           </LinkButton>
         }
       />
-      <PageBody>{children}</PageBody>
+      <PageBody>
+        <LiveProvider>{children}</LiveProvider>
+      </PageBody>
     </>
   );
 }

@@ -1,5 +1,5 @@
 import "server-only";
-import { createTranslator } from "next-intl";
+import { createTranslator } from "use-intl/core";
 import { parseCalendarDay } from "@/lib/kernel/calendar-day";
 import { formatDay } from "@/lib/kernel/format";
 import { formatTag, type Locale } from "@/lib/kernel/locale";

@@ -4,10 +4,17 @@ import { printClaimNumber } from "../number";
 import type { ClaimList, ListedClaim } from "./queries";
 import { PAGE_SIZE, type ListView } from "./schema";
 
+/** The mark of a claim: a decided one shows its verdict. */
+type ClaimMark = Exclude<ClaimState, "decided"> | VerdictOutcome;
+
+// Claims decided line by line always have an outcome; one read between two writes shows as partly upheld.
+const markOf = (state: ClaimState, outcome: VerdictOutcome | null): ClaimMark =>
+  state === "decided" ? (outcome ?? "upheldInPart") : state;
+
 /** A row of a list as it travels to the page and through the API: plain text, money in minor units as digits. */
 export type ClaimItem = {
   readonly number: string;
-  readonly mark: ClaimState | VerdictOutcome;
+  readonly mark: ClaimMark;
   readonly partName: string | null;
   readonly partNumber: string | null;
   readonly serial: string | null;
@@ -38,7 +45,7 @@ const presentItem = (claim: ListedClaim): ClaimItem => {
   const currency = claim.currency.trim();
   return {
     number: printClaimNumber(claim.number),
-    mark: claim.state === "decided" && claim.outcome ? claim.outcome : claim.state,
+    mark: markOf(claim.state, claim.outcome),
     partName: claim.partName,
     partNumber: claim.partNumber,
     serial: claim.serial,
