@@ -3,7 +3,7 @@ import nextTypescript from "eslint-config-next/typescript";
 import tseslint from "typescript-eslint";
 
 // `lib` has two kinds of files: pure ones, and those that touch the world. Only the latter may ask the clock or the dice.
-const EDGES = ["lib/**/{queries,service,present,report}.ts", "lib/{db,web,storage,mail,documents,jobs}/**"];
+const EDGES = ["lib/**/{queries,service,present,report,*-queries,*-service,*-present}.ts", "lib/{db,web,storage,mail,documents,jobs}/**"];
 
 /** The places where a type may be asserted: brands are minted there, or a row becomes a typed thing. */
 const ASSERTING = ["lib/kernel/**", "lib/db/**", "lib/web/session.ts", "models/**", "tests/support/**"];

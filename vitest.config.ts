@@ -18,7 +18,11 @@ export default defineConfig({
     projects: [
       {
         resolve: { alias },
-        test: { name: "unit", include: ["tests/unit/**/*.test.{ts,tsx}"], setupFiles: ["tests/support/quiet-console.ts"] },
+        test: {
+          name: "unit",
+          include: ["tests/unit/**/*.test.{ts,tsx}"],
+          setupFiles: ["tests/support/quiet-console.ts"],
+        },
       },
       {
         resolve: { alias },
@@ -30,7 +34,7 @@ export default defineConfig({
           testTimeout: 30_000,
           hookTimeout: 60_000,
           globalSetup: ["tests/support/global-database.ts"],
-          setupFiles: ["tests/support/quiet-console.ts"],
+          setupFiles: ["tests/support/quiet-console.ts", "tests/support/fresh-database.ts"],
         },
       },
     ],

@@ -27,11 +27,23 @@ const BROWSER_TEXTS = ["ui", "uploads", "live"];
 
 /** The page every other page stands in: language, theme, type and the nonce that scripts and styles need. */
 export default async function RootLayout({ children }: { children: ReactNode }) {
-  const [locale, messages, incoming, session] = await Promise.all([getLocale(), getMessages(), headers(), currentSession()]);
+  const [locale, messages, incoming, session] = await Promise.all([
+    getLocale(),
+    getMessages(),
+    headers(),
+    currentSession(),
+  ]);
   const nonce = incoming.get("x-nonce") ?? undefined;
-  const inBrowser = Object.fromEntries(Object.entries(messages).filter(([namespace]) => BROWSER_TEXTS.includes(namespace)));
+  const inBrowser = Object.fromEntries(
+    Object.entries(messages).filter(([namespace]) => BROWSER_TEXTS.includes(namespace)),
+  );
   return (
-    <html lang={locale} data-density={session?.density ?? undefined} className={fontVariables} suppressHydrationWarning>
+    <html
+      lang={locale}
+      data-density={session?.density ?? undefined}
+      className={fontVariables}
+      suppressHydrationWarning
+    >
       <head>{nonce ? <meta property="csp-nonce" content={nonce} /> : null}</head>
       <body>
         <NextIntlClientProvider messages={inBrowser}>

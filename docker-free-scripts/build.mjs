@@ -5,7 +5,20 @@ import { join } from "node:path";
 import { root } from "./machine.mjs";
 import { Stop } from "./report.mjs";
 
-const SOURCES = ["app", "components", "lib", "messages", "models", "proxy.ts", "instrumentation.ts", "next.config.mjs", "tailwind.config.ts", "postcss.config.mjs", "tsconfig.json", "package-lock.json"];
+const SOURCES = [
+  "app",
+  "components",
+  "lib",
+  "messages",
+  "models",
+  "proxy.ts",
+  "instrumentation.ts",
+  "next.config.mjs",
+  "tailwind.config.ts",
+  "postcss.config.mjs",
+  "tsconfig.json",
+  "package-lock.json",
+];
 
 function* filesIn(path) {
   if (!existsSync(path)) return;
@@ -15,7 +28,8 @@ function* filesIn(path) {
 
 const hashOfSources = () => {
   const hash = createHash("sha256");
-  for (const source of SOURCES) for (const file of filesIn(join(root, source))) hash.update(file).update(readFileSync(file));
+  for (const source of SOURCES)
+    for (const file of filesIn(join(root, source))) hash.update(file).update(readFileSync(file));
   return hash.digest("hex");
 };
 
@@ -24,7 +38,11 @@ export function needBuild(env) {
   const mark = join(root, ".next", "partproof-sources");
   const hash = hashOfSources();
   if (existsSync(mark) && readFileSync(mark, "utf8") === hash) return "unchanged";
-  const built = spawnSync(process.execPath, [join(root, "node_modules/next/dist/bin/next"), "build"], { cwd: root, env, encoding: "utf8" });
+  const built = spawnSync(process.execPath, [join(root, "node_modules/next/dist/bin/next"), "build"], {
+    cwd: root,
+    env,
+    encoding: "utf8",
+  });
   if (built.status !== 0) throw new Stop(`The build failed:\n${built.stdout}\n${built.stderr}`);
   writeFileSync(mark, hash);
   return "built";

@@ -9,7 +9,13 @@ export const runQuietly = (command, args, env = process.env) =>
     const child = spawn(command, args, { cwd: root, env });
     const said = [];
     for (const stream of [child.stdout, child.stderr]) stream.on("data", (data) => said.push(data));
-    child.once("close", (code) => resolve({ code: code ?? 1, said: Buffer.concat(said).toString("utf8"), seconds: ((performance.now() - started) / 1000).toFixed(1) }));
+    child.once("close", (code) =>
+      resolve({
+        code: code ?? 1,
+        said: Buffer.concat(said).toString("utf8"),
+        seconds: ((performance.now() - started) / 1000).toFixed(1),
+      }),
+    );
   });
 
 /** The checks that need no service, two at a time. Prints a line each, and what a failing one said. */

@@ -3,9 +3,10 @@ import { basename } from "node:path";
 
 /** The areas of lib, each building on those before it. */
 const AREAS =
-  "kernel reliability labels access people parts rule-book coverage evidence credits claims returns notices recovery imports reports";
+  "kernel reliability labels access people accounts parts rule-book coverage evidence credits claims evidence-files returns notices recovery imports reports";
 const ADAPTERS = ["db", "web", "storage", "mail", "documents", "jobs"];
-const EDGE_FILES = ["queries", "service", "present", "report"];
+/** Also with a word before: `doubts-queries`. */
+const EDGE_FILE = /(^|-)(queries|service|present|report)$/;
 const ROOTS_OF_THE_APP = ["proxy", "instrumentation"];
 
 /** Per kind of file: the kinds it may import, and what to do instead of anything else. */
@@ -42,7 +43,7 @@ const DOORS = {
 
 /** Doors that open for one place only. */
 const SIDE_DOORS = [
-  { from: "app", to: /^lib\/(.*\/(queries|service)|reports(\/index)?)$/ },
+  { from: "app", to: /^lib\/(.*[/-](queries|service)|reports(\/index)?)$/ },
   { from: "seeder", to: /^lib\/storage\// },
 ];
 
@@ -89,7 +90,7 @@ function kindOf(path) {
   if (top !== "lib") return KIND_OF_FOLDER[top] ?? (ROOTS_OF_THE_APP.includes(path) ? "app" : "free");
   if (ADAPTERS.includes(area)) return area in DOORS ? area : "adapter";
   if (rankOf(path) < 0) return "unplaced";
-  return EDGE_FILES.includes(basename(path)) || /^lib\/reports(\/index)?$/.test(path) ? "edge" : "pure";
+  return EDGE_FILE.test(basename(path)) || /^lib\/reports(\/index)?$/.test(path) ? "edge" : "pure";
 }
 
 const rankOf = (path) => AREAS.split(" ").indexOf(path.split("/")[1]);

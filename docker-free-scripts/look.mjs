@@ -15,7 +15,9 @@ const MOST_TALL = 3;
 
 const option = (name) => process.argv.find((arg) => arg.startsWith(`--${name}=`))?.split("=")[1];
 const baseURL = process.env.PUBLIC_URL ?? `http://localhost:${process.env.PORT ?? 3000}`;
-const password = process.env.DEMO_PASSWORD ?? JSON.parse(readFileSync(join(root, ".local/secrets.json"), "utf8")).demoPassword;
+const password =
+  process.env.DEMO_PASSWORD ??
+  JSON.parse(readFileSync(join(root, ".local/secrets.json"), "utf8")).demoPassword;
 
 async function signIn(page, email) {
   await page.goto("/sign-in");
@@ -40,7 +42,9 @@ async function contactSheet(files, { width, theme, file }) {
       const scaled = await sharp(one).resize({ width: TILE[width] }).toBuffer({ resolveWithObject: true });
       const tall = Math.round((SIZES[width].height / width) * TILE[width] * MOST_TALL);
       if (scaled.info.height <= tall) return { input: scaled.data, height: scaled.info.height };
-      const input = await sharp(scaled.data).extract({ left: 0, top: 0, width: TILE[width], height: tall }).toBuffer();
+      const input = await sharp(scaled.data)
+        .extract({ left: 0, top: 0, width: TILE[width], height: tall })
+        .toBuffer();
       return { input, height: tall };
     }),
   );
@@ -53,7 +57,14 @@ async function contactSheet(files, { width, theme, file }) {
     return { input, left: GAP + column * (TILE[width] + GAP), top };
   });
   const ground = theme === "dark" ? "#3a3f44" : "#b9b3a4";
-  await sharp({ create: { width: columns * (TILE[width] + GAP) + GAP, height: Math.max(...tops), channels: 3, background: ground } })
+  await sharp({
+    create: {
+      width: columns * (TILE[width] + GAP) + GAP,
+      height: Math.max(...tops),
+      channels: 3,
+      background: ground,
+    },
+  })
     .composite(placed)
     .png()
     .toFile(file);
@@ -61,7 +72,14 @@ async function contactSheet(files, { width, theme, file }) {
 }
 
 async function lookAs(browser, { role, email, screens }, width, theme) {
-  const context = await browser.newContext({ baseURL, viewport: SIZES[width], colorScheme: theme, locale: option("locale") ?? "en-GB", reducedMotion: "reduce", hasTouch: width === "390" });
+  const context = await browser.newContext({
+    baseURL,
+    viewport: SIZES[width],
+    colorScheme: theme,
+    locale: option("locale") ?? "en-GB",
+    reducedMotion: "reduce",
+    hasTouch: width === "390",
+  });
   const page = await context.newPage();
   if (email) await signIn(page, email);
   const folder = join(root, "look", role);
@@ -74,11 +92,16 @@ async function lookAs(browser, { role, email, screens }, width, theme) {
     else process.stdout.write(`${role}: no claim for ${name}\n`);
   }
   await context.close();
-  if (files.length > 0) await contactSheet(files, { width, theme, file: join(root, "look", `${role}-${width}-${theme}.png`) });
+  if (files.length > 0)
+    await contactSheet(files, { width, theme, file: join(root, "look", `${role}-${width}-${theme}.png`) });
 }
 
-const browser = await chromium.launch({ executablePath: "/usr/bin/chromium", args: ["--no-sandbox", "--disable-gpu"] });
+const browser = await chromium.launch({
+  executablePath: "/usr/bin/chromium",
+  args: ["--no-sandbox", "--disable-gpu"],
+});
 for (const person of SCREENS.filter(({ role }) => !option("role") || role === option("role")))
   for (const width of Object.keys(SIZES).filter((one) => !option("width") || one === option("width")))
-    for (const theme of THEMES.filter((one) => !option("theme") || one === option("theme"))) await lookAs(browser, person, width, theme);
+    for (const theme of THEMES.filter((one) => !option("theme") || one === option("theme")))
+      await lookAs(browser, person, width, theme);
 await browser.close();

@@ -9,8 +9,15 @@ const MOST_KEPT = 500;
 const escape = (text) => String(text ?? "").replace(/[<>&'"]/g, (sign) => `&#${sign.charCodeAt(0)};`);
 
 mkdirSync(MAIL_FOLDER, { recursive: true });
-const files = () => readdirSync(MAIL_FOLDER).filter((name) => name.endsWith(".json")).sort();
-const mails = new Map(files().slice(-MOST_KEPT).map((name) => [name.slice(0, -5), JSON.parse(readFileSync(join(MAIL_FOLDER, name), "utf8"))]));
+const files = () =>
+  readdirSync(MAIL_FOLDER)
+    .filter((name) => name.endsWith(".json"))
+    .sort();
+const mails = new Map(
+  files()
+    .slice(-MOST_KEPT)
+    .map((name) => [name.slice(0, -5), JSON.parse(readFileSync(join(MAIL_FOLDER, name), "utf8"))]),
+);
 let count = 0;
 
 function keep(parsed, envelope) {
@@ -23,7 +30,12 @@ function keep(parsed, envelope) {
     subject: parsed.subject ?? "",
     text: parsed.text ?? "",
     html: parsed.html || "",
-    headers: Object.fromEntries([...parsed.headers].map(([name, value]) => [name, typeof value === "string" ? value : JSON.stringify(value)])),
+    headers: Object.fromEntries(
+      [...parsed.headers].map(([name, value]) => [
+        name,
+        typeof value === "string" ? value : JSON.stringify(value),
+      ]),
+    ),
   };
   mails.set(id, mail);
   writeFileSync(join(MAIL_FOLDER, `${id}.json`), JSON.stringify(mail));
@@ -37,16 +49,37 @@ const smtp = new SMTPServer({
   authOptional: true,
   disabledCommands: ["STARTTLS", "AUTH"],
   size: 5_000_000,
-  onData: (stream, session, done) => simpleParser(stream).then((parsed) => keep(parsed, session.envelope)).then(() => done(), done),
+  onData: (stream, session, done) =>
+    simpleParser(stream)
+      .then((parsed) => keep(parsed, session.envelope))
+      .then(() => done(), done),
 });
 
-const page = (title, body) => `<!doctype html><html lang="en"><meta charset="utf-8"><meta name="viewport" content="width=device-width"><title>${escape(title)}</title>
+const page = (
+  title,
+  body,
+) => `<!doctype html><html lang="en"><meta charset="utf-8"><meta name="viewport" content="width=device-width"><title>${escape(title)}</title>
 <style>body{font:16px/1.5 system-ui,sans-serif;max-width:60rem;margin:2rem auto;padding:0 1rem;background:#f6f4ee;color:#1c2024}a{color:#0b5563}li{margin:.4rem 0}pre{white-space:pre-wrap;background:#fff;padding:1rem;border-top:4px solid #0b5563}iframe{width:100%;height:30rem;border:1px solid #857d6b;background:#fff}</style>${body}`;
 
 const newest = () => [...mails.values()].reverse();
-const list = () => page("Mails", `<h1>Mails</h1><ul>${newest().map((mail) => `<li><a href="/mails/${mail.id}">${escape(mail.subject)}</a><br>to ${escape(mail.to.join(", "))}, ${escape(mail.at)}</li>`).join("") || "<li>Nothing was sent yet.</li>"}</ul>`);
+const list = () =>
+  page(
+    "Mails",
+    `<h1>Mails</h1><ul>${
+      newest()
+        .map(
+          (mail) =>
+            `<li><a href="/mails/${mail.id}">${escape(mail.subject)}</a><br>to ${escape(mail.to.join(", "))}, ${escape(mail.at)}</li>`,
+        )
+        .join("") || "<li>Nothing was sent yet.</li>"
+    }</ul>`,
+  );
 // The HTML part stands in a frame without scripts, forms or our own origin.
-const one = (mail) => page(mail.subject, `<p><a href="/">All mails</a></p><h1>${escape(mail.subject)}</h1><p>To ${escape(mail.to.join(", "))}</p><pre>${escape(mail.text)}</pre><iframe sandbox title="HTML part" srcdoc="${escape(mail.html)}"></iframe>`);
+const one = (mail) =>
+  page(
+    mail.subject,
+    `<p><a href="/">All mails</a></p><h1>${escape(mail.subject)}</h1><p>To ${escape(mail.to.join(", "))}</p><pre>${escape(mail.text)}</pre><iframe sandbox title="HTML part" srcdoc="${escape(mail.html)}"></iframe>`,
+  );
 
 function answer(request, response) {
   const url = new URL(request.url, "http://mailbox");
@@ -55,7 +88,10 @@ function answer(request, response) {
     response.end(JSON.stringify(value));
   };
   const html = (text, status = 200) => {
-    response.writeHead(status, { "content-type": "text/html; charset=utf-8", "content-security-policy": "default-src 'none'; style-src 'unsafe-inline'; frame-src 'self'" });
+    response.writeHead(status, {
+      "content-type": "text/html; charset=utf-8",
+      "content-security-policy": "default-src 'none'; style-src 'unsafe-inline'; frame-src 'self'",
+    });
     response.end(text);
   };
   const id = /^(?:\/api)?\/mails\/([\w-]+)$/.exec(url.pathname)?.[1];
@@ -68,14 +104,19 @@ function answer(request, response) {
     const to = url.searchParams.get("to")?.toLowerCase();
     return json({ mails: newest().filter((mail) => !to || mail.to.includes(to)) });
   }
-  if (id && mails.has(id)) return url.pathname.startsWith("/api") ? json(mails.get(id)) : html(one(mails.get(id)));
+  if (id && mails.has(id))
+    return url.pathname.startsWith("/api") ? json(mails.get(id)) : html(one(mails.get(id)));
   if (url.pathname === "/") return html(list());
-  return url.pathname.startsWith("/api") ? json({}, 404) : html(page("Not here", "<p>No such mail. <a href='/'>All mails</a></p>"), 404);
+  return url.pathname.startsWith("/api")
+    ? json({}, 404)
+    : html(page("Not here", "<p>No such mail. <a href='/'>All mails</a></p>"), 404);
 }
 
 const web = createServer(answer);
 smtp.listen(Number(SMTP_PORT), "127.0.0.1");
-web.listen(Number(MAILBOX_PORT), "127.0.0.1", () => process.stdout.write(`mail catcher on 127.0.0.1:${SMTP_PORT}, read at http://127.0.0.1:${MAILBOX_PORT}\n`));
+web.listen(Number(MAILBOX_PORT), "127.0.0.1", () =>
+  process.stdout.write(`mail catcher on 127.0.0.1:${SMTP_PORT}, read at http://127.0.0.1:${MAILBOX_PORT}\n`),
+);
 for (const signal of ["SIGINT", "SIGTERM"])
   process.on(signal, () => {
     web.closeAllConnections();

@@ -26,7 +26,8 @@ const must = (name, args) => {
 const idOf = (flag) => Number(execFileSync("id", [flag, "postgres"], { encoding: "utf8" }));
 
 /** Whether the database's user can enter every folder on the way. */
-const canEnter = (folder) => !isRoot || spawnSync("runuser", ["-u", "postgres", "--", "test", "-x", folder]).status === 0;
+const canEnter = (folder) =>
+  !isRoot || spawnSync("runuser", ["-u", "postgres", "--", "test", "-x", folder]).status === 0;
 
 /** Where the cluster lives: beside the project, or where the database's user can reach it. */
 export function clusterFolder() {
@@ -47,7 +48,20 @@ export function makeCluster(folder, adminPassword) {
       for (const path of [folder, secret]) chownSync(path, idOf("-u"), idOf("-g"));
     }
     chmodSync(folder, 0o700);
-    must("initdb", ["-D", folder, "-U", "postgres", "-A", "scram-sha-256", `--pwfile=${secret}`, "-E", "UTF8", "--locale=C.UTF-8", "--data-checksums", "--no-sync"]);
+    must("initdb", [
+      "-D",
+      folder,
+      "-U",
+      "postgres",
+      "-A",
+      "scram-sha-256",
+      `--pwfile=${secret}`,
+      "-E",
+      "UTF8",
+      "--locale=C.UTF-8",
+      "--data-checksums",
+      "--no-sync",
+    ]);
   } finally {
     rmSync(secret, { force: true });
   }
@@ -101,7 +115,9 @@ export async function prepareDatabase(adminUrl, passwords, database = "partproof
   } finally {
     await admin.end();
   }
-  const inside = new pg.Client({ connectionString: Object.assign(new URL(adminUrl), { pathname: `/${database}` }).href });
+  const inside = new pg.Client({
+    connectionString: Object.assign(new URL(adminUrl), { pathname: `/${database}` }).href,
+  });
   await inside.connect();
   try {
     await inside.query(`revoke all on schema public from public; grant all on schema public to partproof_owner;
@@ -110,4 +126,3 @@ export async function prepareDatabase(adminUrl, passwords, database = "partproof
     await inside.end();
   }
 }
-

@@ -17,7 +17,12 @@ export class Processes {
 
   /** Starts a program of the project. Its output goes to a log, and to the screen where `isShown`. */
   start(name, args, env, { isShown = false } = {}) {
-    const child = spawn(process.execPath, args, { cwd: root, env, stdio: ["ignore", "pipe", "pipe"], detached: true });
+    const child = spawn(process.execPath, args, {
+      cwd: root,
+      env,
+      stdio: ["ignore", "pipe", "pipe"],
+      detached: true,
+    });
     const log = createWriteStream(join(this.logFolder, `${name}.log`), { flags: "a" });
     for (const stream of [child.stdout, child.stderr]) {
       stream.pipe(log);
@@ -54,7 +59,7 @@ export class Processes {
 /** Waits until an address answers as wanted. Throws Stop with what it last said. */
 export async function waitFor(url, { seconds = 90, isGood = (response) => response.ok } = {}) {
   let last = "no answer";
-  for (const end = Date.now() + seconds * 1000; Date.now() < end; ) {
+  for (const end = Date.now() + seconds * 1000; Date.now() < end;) {
     try {
       const response = await fetch(url, { redirect: "manual" });
       if (isGood(response)) return;

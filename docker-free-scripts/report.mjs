@@ -16,8 +16,16 @@ export class Stop extends Error {}
 export const needFreePort = (port, variable) =>
   new Promise((resolve, reject) => {
     const probe = createServer();
-    probe.once("error", () => reject(new Stop(`Port ${port} is taken. Set ${variable} to another one, for example ${variable}=${Number(port) + 1}.`)));
-    probe.listen({ port: Number(port), host: "127.0.0.1", exclusive: true }, () => probe.close(() => resolve(Number(port))));
+    probe.once("error", () =>
+      reject(
+        new Stop(
+          `Port ${port} is taken. Set ${variable} to another one, for example ${variable}=${Number(port) + 1}.`,
+        ),
+      ),
+    );
+    probe.listen({ port: Number(port), host: "127.0.0.1", exclusive: true }, () =>
+      probe.close(() => resolve(Number(port))),
+    );
   });
 
 /** A port the system picks. */

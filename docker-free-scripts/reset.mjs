@@ -9,7 +9,9 @@ const folder = join(root, ".local");
 async function isSure() {
   if (process.argv.includes("--yes")) return true;
   const ask = createInterface({ input: process.stdin, output: process.stdout });
-  const answer = await ask.question("This deletes every claim, file and mail of this checkout. Type yes to go on: ");
+  const answer = await ask.question(
+    "This deletes every claim, file and mail of this checkout. Type yes to go on: ",
+  );
   ask.close();
   return answer.trim() === "yes";
 }
@@ -29,6 +31,7 @@ if (await isSure()) {
   const cluster = clusterFolder();
   if (isRunning(cluster)) stopCluster(cluster);
   removeCluster(cluster);
-  for (const name of ["store", "mail", "log", "run", "people.json", "secrets.json"]) rmSync(join(folder, name), { recursive: true, force: true });
+  for (const name of ["store", "mail", "log", "run", "people.json", "secrets.json"])
+    rmSync(join(folder, name), { recursive: true, force: true });
   process.stdout.write("Everything is gone. npm start makes it anew.\n");
 } else process.stdout.write("Nothing was changed.\n");

@@ -15,7 +15,12 @@ export const SCREENS = [
   {
     role: "visitor",
     email: null,
-    screens: { "sign-in": "/sign-in", forgotten: "/forgotten", "spent-link": "/reset/spent", "not-found": "/nowhere" },
+    screens: {
+      "sign-in": "/sign-in",
+      forgotten: "/forgotten",
+      "spent-link": "/reset/spent",
+      "not-found": "/nowhere",
+    },
   },
   {
     role: "technician",

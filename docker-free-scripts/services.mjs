@@ -22,7 +22,10 @@ async function makeBucket(environment) {
     endpoint: environment.STORE_ENDPOINT,
     region: environment.STORE_REGION,
     forcePathStyle: true,
-    credentials: { accessKeyId: environment.STORE_ACCESS_KEY_ID, secretAccessKey: environment.STORE_SECRET_ACCESS_KEY },
+    credentials: {
+      accessKeyId: environment.STORE_ACCESS_KEY_ID,
+      secretAccessKey: environment.STORE_SECRET_ACCESS_KEY,
+    },
   });
   await client.send(new CreateBucketCommand({ Bucket: environment.STORE_BUCKET }));
   client.destroy();
@@ -33,9 +36,24 @@ export async function fillDatabase(environment, secrets, { today } = {}) {
   const admin = Object.assign(new URL(environment.DATABASE_URL_ADMIN), { pathname: "/postgres" }).href;
   const database = new URL(environment.DATABASE_URL_ADMIN).pathname.slice(1);
   await step("Database roles", () => prepareDatabase(admin, secrets, database));
-  await step("Migrations", () => runTsx("lib/db/migrate-main.ts", ["up"], environment).replaceAll("\n", ", "));
-  await step("Demo data", () => runTsx("seeders/main.ts", ["--if-empty", ...(today ? [`--today=${today}`] : [])], environment).split("\n").at(-1) ?? "");
+  await step("Migrations", () =>
+    runTsx("lib/db/migrate-main.ts", ["up"], environment).replaceAll("\n", ", "),
+  );
+  await step(
+    "Demo data",
+    () =>
+      runTsx("seeders/main.ts", ["--if-empty", ...(today ? [`--today=${today}`] : [])], environment)
+        .split("\n")
+        .at(-1) ?? "",
+  );
 }
 
-export const nextArgs = (command, port) => [join(root, "node_modules/next/dist/bin/next"), command, "-p", String(port), "-H", "127.0.0.1"];
+export const nextArgs = (command, port) => [
+  join(root, "node_modules/next/dist/bin/next"),
+  command,
+  "-p",
+  String(port),
+  "-H",
+  "127.0.0.1",
+];
 export const workerArgs = () => tsxArgs("lib/jobs/worker-main.ts");

@@ -16,7 +16,13 @@ const ports = {
   smtp: port("SMTP_PORT", 9425),
   mailbox: port("MAILBOX_PORT", 9480),
 };
-const VARIABLE = { web: "PORT", postgres: "PGPORT", store: "STORE_PORT", smtp: "SMTP_PORT", mailbox: "MAILBOX_PORT" };
+const VARIABLE = {
+  web: "PORT",
+  postgres: "PGPORT",
+  store: "STORE_PORT",
+  smtp: "SMTP_PORT",
+  mailbox: "MAILBOX_PORT",
+};
 
 const isAlive = (pid) => {
   try {
@@ -37,9 +43,13 @@ function stopIfRunning() {
 }
 
 function printPeople(environment) {
-  const people = existsSync(environment.PEOPLE_FILE) ? JSON.parse(readFileSync(environment.PEOPLE_FILE, "utf8")) : [];
+  const people = existsSync(environment.PEOPLE_FILE)
+    ? JSON.parse(readFileSync(environment.PEOPLE_FILE, "utf8"))
+    : [];
   const width = Math.max(0, ...people.map(({ email }) => email.length));
-  process.stdout.write(`\nPartproof is ready: ${environment.PUBLIC_URL}\n\nPeople of the demo, all with the password  ${environment.DEMO_PASSWORD}\n`);
+  process.stdout.write(
+    `\nPartproof is ready: ${environment.PUBLIC_URL}\n\nPeople of the demo, all with the password  ${environment.DEMO_PASSWORD}\n`,
+  );
   for (const { email, name, organisation, roles } of people)
     process.stdout.write(`  ${email.padEnd(width)}  ${name}, ${organisation}: ${roles.join(", ")}\n`);
   process.stdout.write(`\nMails: ${environment.MAILBOX_URL}\nCtrl-C stops everything; the data stays.\n`);
@@ -93,7 +103,12 @@ async function main() {
     if (!isDevelopment) await step("Build", () => needBuild({ ...web, NODE_ENV: "production" }));
     await step("Web and worker", async () => {
       processes.start("worker", workerArgs(), only(environment, "worker"));
-      processes.start("web", nextArgs(isDevelopment ? "dev" : "start", ports.web), { ...web, NODE_ENV: isDevelopment ? "development" : "production" }, { isShown: isDevelopment });
+      processes.start(
+        "web",
+        nextArgs(isDevelopment ? "dev" : "start", ports.web),
+        { ...web, NODE_ENV: isDevelopment ? "development" : "production" },
+        { isShown: isDevelopment },
+      );
       await waitFor(`http://127.0.0.1:${ports.web}/api/v1/ready`);
     });
     printPeople(environment);

@@ -210,7 +210,8 @@ const history = `
 `;
 
 export const up = async (run: Run) => {
-  for (const part of [context, organisations, organisationSecurity, people, peopleSecurity, history]) await run(part);
+  for (const part of [context, organisations, organisationSecurity, people, peopleSecurity, history])
+    await run(part);
 };
 
 export const down = (run: Run) =>

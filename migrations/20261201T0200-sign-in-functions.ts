@@ -27,7 +27,11 @@ const signIn = [
        return allowed;
      end`,
   ),
-  guarded("clear_attempts(p_account text)", "void", `begin delete from login_attempts where key_hash = p_account; end`),
+  guarded(
+    "clear_attempts(p_account text)",
+    "void",
+    `begin delete from login_attempts where key_hash = p_account; end`,
+  ),
   guarded(
     "sign_in_candidate(p_email text)",
     "table (user_id uuid, password_hash text, organisation_id uuid, roles text[])",
@@ -186,7 +190,9 @@ const sessionBump = `
 `;
 
 export const up = async (run: Run) => {
-  await run(`reset role; create schema guarded authorization keeper; grant usage on schema guarded to web, partproof_owner;`);
+  await run(
+    `reset role; create schema guarded authorization keeper; grant usage on schema guarded to web, partproof_owner;`,
+  );
   await run(`set local role keeper`);
   for (const part of [...signIn, ...links, audit, sessionBump]) await run(part);
   await run(`set local role partproof_owner`);

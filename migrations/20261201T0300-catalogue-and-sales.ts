@@ -140,14 +140,20 @@ const service = `
   create index fittings_by_vehicle on fittings (workshop_id, vehicle_id);
 `;
 
-const mySeller = (table: string) => `seller_id = (select ctx_org()) or exists (select 1 from trading_accounts t
+const mySeller = (
+  table: string,
+) => `seller_id = (select ctx_org()) or exists (select 1 from trading_accounts t
     where t.seller_id = ${table}.seller_id and t.buyer_id = (select ctx_org()))`;
 const sellerOnly = "seller_id = (select ctx_org())";
 const eitherParty = "(select ctx_org()) in (seller_id, buyer_id)";
 
 const security = `
   ${["makers", "parts", "batches"]
-    .map((table) => secure(table) + policies(table, "web", { select: mySeller(table), insert: sellerOnly, update: sellerOnly }))
+    .map(
+      (table) =>
+        secure(table) +
+        policies(table, "web", { select: mySeller(table), insert: sellerOnly, update: sellerOnly }),
+    )
     .join("\n")}
   ${secure("invoice_lines")}
   ${policies("invoice_lines", "web", { select: eitherParty, insert: sellerOnly })}
@@ -198,4 +204,6 @@ export const up = async (run: Run) => {
 };
 
 export const down = (run: Run) =>
-  run(`drop table rule_book_versions, fittings, vehicles, installers, units, invoice_lines, batches, parts, makers cascade;`);
+  run(
+    `drop table rule_book_versions, fittings, vehicles, installers, units, invoice_lines, batches, parts, makers cascade;`,
+  );

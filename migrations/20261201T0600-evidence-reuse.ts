@@ -20,7 +20,9 @@ const seenBefore = `
 `;
 
 export const up = async (run: Run) => {
-  await run(`create policy keeper_read on evidence_files for select to keeper using (true); grant select on evidence_files to keeper;`);
+  await run(
+    `create policy keeper_read on evidence_files for select to keeper using (true); grant select on evidence_files to keeper;`,
+  );
   await run(`set local role keeper`);
   await run(seenBefore);
   await run(`set local role partproof_owner`);

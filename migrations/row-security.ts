@@ -16,11 +16,18 @@ type Rules = { select?: string; insert?: string; update?: string; delete?: strin
 export function policies(table: string, role: string, rules: Rules): string {
   const lines: string[] = [];
   const name = (command: string) => `${role}_${command}`;
-  if (rules.select) lines.push(`create policy ${name("select")} on ${table} for select to ${role} using (${rules.select});`);
-  if (rules.insert) lines.push(`create policy ${name("insert")} on ${table} for insert to ${role} with check (${rules.insert});`);
+  if (rules.select)
+    lines.push(`create policy ${name("select")} on ${table} for select to ${role} using (${rules.select});`);
+  if (rules.insert)
+    lines.push(
+      `create policy ${name("insert")} on ${table} for insert to ${role} with check (${rules.insert});`,
+    );
   if (rules.update)
-    lines.push(`create policy ${name("update")} on ${table} for update to ${role} using (${rules.update}) with check (${rules.update});`);
-  if (rules.delete) lines.push(`create policy ${name("delete")} on ${table} for delete to ${role} using (${rules.delete});`);
+    lines.push(
+      `create policy ${name("update")} on ${table} for update to ${role} using (${rules.update}) with check (${rules.update});`,
+    );
+  if (rules.delete)
+    lines.push(`create policy ${name("delete")} on ${table} for delete to ${role} using (${rules.delete});`);
   for (const command of Object.keys(rules)) lines.push(`grant ${command} on ${table} to ${role};`);
   return lines.join("\n");
 }

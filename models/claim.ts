@@ -1,4 +1,10 @@
-import { DataTypes, Model, type CreationOptional, type InferAttributes, type InferCreationAttributes } from "sequelize";
+import {
+  DataTypes,
+  Model,
+  type CreationOptional,
+  type InferAttributes,
+  type InferCreationAttributes,
+} from "sequelize";
 import type { ClaimState, VerdictOutcome } from "@/lib/claims/lifecycle";
 import { sequelize } from "@/lib/db/sequelize";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";

@@ -9,7 +9,11 @@ export default async function PublicLayout({ children }: { children: ReactNode }
   return (
     <>
       <SkipLink />
-      <main id={MAIN_ID} tabIndex={-1} className="mx-auto grid min-h-dvh max-w-lg content-center gap-6 px-4 py-12 outline-none">
+      <main
+        id={MAIN_ID}
+        tabIndex={-1}
+        className="mx-auto grid min-h-dvh max-w-lg content-center gap-6 px-4 py-12 outline-none"
+      >
         <Wordmark />
         {children}
         <p className="text-small text-ink-2">{t("description")}</p>

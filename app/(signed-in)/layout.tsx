@@ -11,8 +11,15 @@ export const dynamic = "force-dynamic";
 
 /** The head and the ground of every page behind the sign-in. */
 export default async function SignedInLayout({ children }: { children: ReactNode }) {
-  const [session, t, shell] = await Promise.all([requireSession(), getTranslations("navigation"), getTranslations("shell")]);
-  const places = PLACES.filter(({ right }) => may(session, right)).map(({ key, href }) => ({ href, label: t(key) }));
+  const [session, t, shell] = await Promise.all([
+    requireSession(),
+    getTranslations("navigation"),
+    getTranslations("shell"),
+  ]);
+  const places = PLACES.filter(({ right }) => may(session, right)).map(({ key, href }) => ({
+    href,
+    label: t(key),
+  }));
   return (
     <>
       <AppHeader

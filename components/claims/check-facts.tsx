@@ -27,7 +27,11 @@ export function CheckFacts({ number, draft, family, lines, evidence, rows }: Che
   const sheet = (step: DraftStep, children: ReactNode) => (
     <Card
       title={t(`steps.${step}`)}
-      actions={<TextLink href={draftStepPath({ number }, step)}>{t("check.change", { step: t(`steps.${step}`) })}</TextLink>}
+      actions={
+        <TextLink href={draftStepPath({ number }, step)}>
+          {t("check.change", { step: t(`steps.${step}`) })}
+        </TextLink>
+      }
     >
       <Facts>{children}</Facts>
     </Card>
@@ -40,25 +44,39 @@ export function CheckFacts({ number, draft, family, lines, evidence, rows }: Che
         <>
           {draft.lines.map((line, place) => (
             <Fact key={line.unitId ?? place} term={lines[place]?.part.name ?? t("line.unknownPart")}>
-              {line.serial ? <Serial value={line.serial} /> : t("check.quantity", { quantity: line.quantity })}
+              {line.serial ? (
+                <Serial value={line.serial} />
+              ) : (
+                t("check.quantity", { quantity: line.quantity })
+              )}
               <span className="block text-small text-ink-2">
-                {t("check.fitting", { day: line.fittedOn || t("check.notGiven"), by: line.installer || t("check.notGiven") })}
+                {t("check.fitting", {
+                  day: line.fittedOn || t("check.notGiven"),
+                  by: line.installer || t("check.notGiven"),
+                })}
               </span>
               {line.replacementSerial ? (
                 <span className="block text-small text-ink-2">
-                  {t("check.replacement", { serial: line.replacementSerial, day: line.replacementFittedOn || t("check.notGiven") })}
+                  {t("check.replacement", {
+                    serial: line.replacementSerial,
+                    day: line.replacementFittedOn || t("check.notGiven"),
+                  })}
                 </span>
               ) : null}
             </Fact>
           ))}
-          <Fact term={t("vehicle.frameSerial")}>{given(draft.frameSerial && <Serial value={draft.frameSerial} />)}</Fact>
+          <Fact term={t("vehicle.frameSerial")}>
+            {given(draft.frameSerial && <Serial value={draft.frameSerial} />)}
+          </Fact>
           <Fact term={t("vehicle.repairedOn")}>{given(draft.repairedOn)}</Fact>
         </>,
       )}
       {sheet(
         "fault",
         <>
-          <Fact term={t("fault.symptom")}>{given(symptom && words(`${family.code}.symptoms.${symptom.code}`))}</Fact>
+          <Fact term={t("fault.symptom")}>
+            {given(symptom && words(`${family.code}.symptoms.${symptom.code}`))}
+          </Fact>
           <Fact term={t("fault.failedOn")}>{given(draft.failedOn)}</Fact>
           <Fact term={t("fault.note")}>{given(draft.note)}</Fact>
           <Fact term={t("exclusion.ruledOutTitle")}>
@@ -82,8 +100,12 @@ export function CheckFacts({ number, draft, family, lines, evidence, rows }: Che
               {given(
                 draft.readings[row.id]?.raw ||
                   draft.answers[row.id] ||
-                  evidence.filter((file) => file.rowId === row.id).map((file) => file.originalName).join(", ") ||
-                  (draft.cannotGet[row.id] && t("check.cannotGet", { reason: draft.cannotGet[row.id] ?? "" })),
+                  evidence
+                    .filter((file) => file.rowId === row.id)
+                    .map((file) => file.originalName)
+                    .join(", ") ||
+                  (draft.cannotGet[row.id] &&
+                    t("check.cannotGet", { reason: draft.cannotGet[row.id] ?? "" })),
               )}
             </Fact>
           )),

@@ -19,7 +19,7 @@ import { isCurrency } from "@/lib/kernel/currency";
 import { formatInstant, formatMoney } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
 import { money } from "@/lib/kernel/money";
-import type { ClaimItem, ClaimItems } from "@/lib/claims/lists/present";
+import type { ClaimItem, ClaimItems } from "@/lib/claims/lists/view";
 
 type Query = { view: string; order: string; q: string; page: number };
 type Reader = { locale: Locale; timeZone: string };
@@ -96,7 +96,10 @@ function ListHead({ path, views, query, list, side }: ClaimListProps & { list: C
                 small
                 aria-current={view === query.view ? "true" : undefined}
               >
-                {t(`${side}.${view}`)} <span className="text-ink-2 tabular-nums">{list.counts[view as keyof ClaimItems["counts"]] ?? ""}</span>
+                {t(`${side}.${view}`)}{" "}
+                <span className="text-ink-2 tabular-nums">
+                  {list.counts[view as keyof ClaimItems["counts"]] ?? ""}
+                </span>
               </LinkButton>
             </li>
           ))}
@@ -133,7 +136,9 @@ function ListTable({ path, query, list, side, locale, timeZone }: ClaimListProps
       helper.columns([
         helper.accessor("number", { header: t("columns.number") }),
         helper.accessor("partName", { header: t("columns.part") }),
-        helper.accessor("otherParty", { header: t(`columns.${side === "distributor" ? "workshop" : "distributor"}`) }),
+        helper.accessor("otherParty", {
+          header: t(`columns.${side === "distributor" ? "workshop" : "distributor"}`),
+        }),
         helper.accessor("mark", { header: t("columns.state") }),
         helper.accessor("answerDueAt", { header: t("columns.due") }),
         helper.accessor("askedMinor", { header: t("columns.asked") }),
@@ -145,7 +150,15 @@ function ListTable({ path, query, list, side, locale, timeZone }: ClaimListProps
   const sortOf = (id: string) => {
     const order = ({ answerDueAt: "due", askedMinor: "-asked", number: "-filed" } as const)[id];
     if (!order) return undefined;
-    return { href: addressOf(path, query, { order }), direction: query.order === order ? (order.startsWith("-") ? ("descending" as const) : ("ascending" as const)) : undefined };
+    return {
+      href: addressOf(path, query, { order }),
+      direction:
+        query.order === order
+          ? order.startsWith("-")
+            ? ("descending" as const)
+            : ("ascending" as const)
+          : undefined,
+    };
   };
   return (
     <Table caption={t("caption", { count: list.total })} isHeadSticky>
@@ -160,14 +173,25 @@ function ListTable({ path, query, list, side, locale, timeZone }: ClaimListProps
       </TableHead>
       <TableBody>
         {table.getRowModel().rows.map((row) => (
-          <ClaimRow key={row.original.number} item={row.original} side={side} locale={locale} timeZone={timeZone} />
+          <ClaimRow
+            key={row.original.number}
+            item={row.original}
+            side={side}
+            locale={locale}
+            timeZone={timeZone}
+          />
         ))}
       </TableBody>
     </Table>
   );
 }
 
-function ClaimRow({ item, side, locale, timeZone }: Reader & { item: ClaimItem; side: "workshop" | "distributor" }) {
+function ClaimRow({
+  item,
+  side,
+  locale,
+  timeZone,
+}: Reader & { item: ClaimItem; side: "workshop" | "distributor" }) {
   const t = useTranslations("live.lists");
   const currency = isCurrency(item.currency) ? item.currency : "EUR";
   return (
@@ -200,7 +224,9 @@ function ClaimRow({ item, side, locale, timeZone }: Reader & { item: ClaimItem; 
               {t("flags", { count: item.flagCount })}
             </Mark>
           ) : null}
-          {side === "distributor" && item.holderName ? <span className="text-small text-ink-2">{item.holderName}</span> : null}
+          {side === "distributor" && item.holderName ? (
+            <span className="text-small text-ink-2">{item.holderName}</span>
+          ) : null}
         </span>
       </Td>
       <Td label={t("columns.due")}>
@@ -215,8 +241,10 @@ function ClaimRow({ item, side, locale, timeZone }: Reader & { item: ClaimItem; 
 
 function Due({ item, locale, timeZone }: Reader & { item: ClaimItem }) {
   const t = useTranslations("live.lists");
-  if (!item.answerDueAt || item.isClockStopped) return <span className="text-ink-3">{t(item.isClockStopped ? "stopped" : "none")}</span>;
-  if (item.mark !== "filed" && item.mark !== "beingJudged") return <span className="text-ink-3">{t("none")}</span>;
+  if (!item.answerDueAt || item.isClockStopped)
+    return <span className="text-ink-3">{t(item.isClockStopped ? "stopped" : "none")}</span>;
+  if (item.mark !== "filed" && item.mark !== "beingJudged")
+    return <span className="text-ink-3">{t("none")}</span>;
   const due = new Date(item.answerDueAt);
   const daysOver = daysBetween(dayInZone(due, timeZone), dayInZone(new Date(), timeZone));
   return daysOver > 0 ? <LateMark daysOver={daysOver} /> : <>{formatInstant(due, locale, timeZone)}</>;

@@ -43,7 +43,11 @@ export function DraftForm({ number, action, savedAt, children }: DraftFormProps)
   const [note, setNote] = useState<Note>({ key: "safe", at: savedAt });
   const { mutate } = useMutation({
     mutationFn: (change: unknown) =>
-      fetchJson(`/api/v1/claims/${number}/draft`, { method: "PUT", body: JSON.stringify(change), keepalive: true }),
+      fetchJson(`/api/v1/claims/${number}/draft`, {
+        method: "PUT",
+        body: JSON.stringify(change),
+        keepalive: true,
+      }),
     onMutate: () => setNote({ key: "saving" }),
     onSuccess: () => setNote({ key: "safe", at: new Date().toISOString() }),
     onError: () => setNote({ key: "notSaved" }),
@@ -71,7 +75,11 @@ export function DraftForm({ number, action, savedAt, children }: DraftFormProps)
     <form ref={form} action={action} onInput={saveSoon} noValidate className="grid gap-6">
       <input type="hidden" name="number" value={number} />
       {children}
-      <StatusLine>{note.key === "safe" ? t("safe", { time: formatTime(new Date(note.at), locale, timeZone) }) : t(note.key)}</StatusLine>
+      <StatusLine>
+        {note.key === "safe"
+          ? t("safe", { time: formatTime(new Date(note.at), locale, timeZone) })
+          : t(note.key)}
+      </StatusLine>
     </form>
   );
 }

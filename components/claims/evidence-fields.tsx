@@ -28,9 +28,14 @@ type RowProps = Omit<EvidenceFieldsProps, "rows" | "askedRows"> & { row: Evidenc
 /** Rows that the page before has already answered with questions of its own. */
 const isAnsweredBefore = (row: EvidenceRow, draft: ClaimDraft): boolean =>
   (row.id === "ruledOut" && Object.keys(draft.ruledOut).length > 0) ||
-  (row.id === "swapProof" && [draft.swapMinutes, draft.swapHeat, draft.testDrive].some((text) => text !== ""));
+  (row.id === "swapProof" &&
+    [draft.swapMinutes, draft.swapHeat, draft.testDrive].some((text) => text !== ""));
 
-const stateOf = (row: EvidenceRow, draft: ClaimDraft, files: readonly EvidenceFileItem[]): "done" | "toDo" | "cannotGet" => {
+const stateOf = (
+  row: EvidenceRow,
+  draft: ClaimDraft,
+  files: readonly EvidenceFileItem[],
+): "done" | "toDo" | "cannotGet" => {
   const isGiven =
     isAnsweredBefore(row, draft) ||
     files.some((file) => file.rowId === row.id) ||
@@ -64,7 +69,10 @@ function Row({ row, isAsked, ...props }: RowProps) {
   return (
     <li
       id={`rows.${row.id}`}
-      className={clsx("grid scroll-mt-6 gap-3 border-b border-rule py-5 first:pt-0 last:border-b-0", isAsked && "border-l-4 border-l-wanting pl-4")}
+      className={clsx(
+        "grid scroll-mt-6 gap-3 border-b border-rule py-5 first:pt-0 last:border-b-0",
+        isAsked && "border-l-4 border-l-wanting pl-4",
+      )}
     >
       <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
         <EvidenceMark state={stateOf(row, draft, files)} />
@@ -80,7 +88,9 @@ function Row({ row, isAsked, ...props }: RowProps) {
       {problem ? <p className="font-semibold text-refused">{problem.text}</p> : null}
       <RowInput row={row} {...props} />
       <details className="text-small" open={(draft.cannotGet[row.id] ?? "") !== ""}>
-        <summary className="min-h-target cursor-pointer py-2 text-petrol underline underline-offset-4">{t("cannotGet")}</summary>
+        <summary className="min-h-target cursor-pointer py-2 text-petrol underline underline-offset-4">
+          {t("cannotGet")}
+        </summary>
         <TextField
           name={`cannotGet.${row.id}`}
           label={t("cannotGetReason")}
@@ -97,7 +107,15 @@ function RowInput({ row, ...props }: Omit<RowProps, "isAsked">) {
   const { draft, family, claimId, number, files } = props;
   if (row.accepts === "reading") return <ReadingInput row={row} {...props} />;
   if (row.accepts === "answer")
-    return <TextArea name={`answers.${row.id}`} label={t("answer")} rows={2} limit={1000} defaultValue={draft.answers[row.id] ?? ""} />;
+    return (
+      <TextArea
+        name={`answers.${row.id}`}
+        label={t("answer")}
+        rows={2}
+        limit={1000}
+        defaultValue={draft.answers[row.id] ?? ""}
+      />
+    );
   return (
     <FileRow
       claimId={claimId}

@@ -45,7 +45,13 @@ export function ExclusionFields({ draft, family }: ExclusionFieldsProps) {
               ]}
             />
           ))}
-          <TextArea name="conditionNote" label={t("conditionNote")} isOptional limit={1000} defaultValue={draft.conditionNote} />
+          <TextArea
+            name="conditionNote"
+            label={t("conditionNote")}
+            isOptional
+            limit={1000}
+            defaultValue={draft.conditionNote}
+          />
           <TextArea
             name="earlierWork"
             label={t("earlierWork")}

@@ -47,7 +47,14 @@ export function FaultFields({ draft, family, problems, locale, today }: FaultFie
           error={errorOf("failedOn")}
           quickDays={quickDays(line, locale, today)}
         />
-        <TextArea name="note" label={t("note")} hint={t("noteHint")} isOptional limit={4000} defaultValue={draft.note} />
+        <TextArea
+          name="note"
+          label={t("note")}
+          hint={t("noteHint")}
+          isOptional
+          limit={4000}
+          defaultValue={draft.note}
+        />
         <RadioGroup
           name="incident"
           label={t("incident")}
@@ -58,7 +65,14 @@ export function FaultFields({ draft, family, problems, locale, today }: FaultFie
             { value: "yes", label: t("yes") },
           ]}
         />
-        <TextArea name="incidentNote" label={t("incidentNote")} hint={t("incidentNoteHint")} isOptional limit={1000} defaultValue={draft.incidentNote} />
+        <TextArea
+          name="incidentNote"
+          label={t("incidentNote")}
+          hint={t("incidentNoteHint")}
+          isOptional
+          limit={1000}
+          defaultValue={draft.incidentNote}
+        />
       </div>
     </Card>
   );

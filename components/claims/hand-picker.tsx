@@ -37,7 +37,10 @@ export function HandPicker({ serial, accounts, purchases, locale, start }: HandP
         ) : (
           <ul className="grid gap-4">
             {purchases.slice(0, 12).map((purchase) => (
-              <li key={purchase.invoiceLineId} className="grid items-center gap-2 border-b border-rule pb-4 sm:grid-cols-[1fr_auto]">
+              <li
+                key={purchase.invoiceLineId}
+                className="grid items-center gap-2 border-b border-rule pb-4 sm:grid-cols-[1fr_auto]"
+              >
                 <div>
                   <p className="font-semibold">{purchase.partName}</p>
                   <p className="text-small text-ink-2">
@@ -50,19 +53,31 @@ export function HandPicker({ serial, accounts, purchases, locale, start }: HandP
                     })}
                   </p>
                 </div>
-                <StartButton start={start} fields={{ invoiceLineId: purchase.invoiceLineId }} label={t("startWithPurchase")} />
+                <StartButton
+                  start={start}
+                  fields={{ invoiceLineId: purchase.invoiceLineId }}
+                  label={t("startWithPurchase")}
+                />
               </li>
             ))}
           </ul>
         )}
       </Card>
       {accounts.map((account) => (
-        <Card key={account.accountId} title={t("catalogueOf", { seller: account.sellerName })} note={t("catalogueNote")}>
+        <Card
+          key={account.accountId}
+          title={t("catalogueOf", { seller: account.sellerName })}
+          note={t("catalogueNote")}
+        >
           <ul className="grid gap-2">
             {account.parts.map((part) => (
-              <li key={part.partId} className="grid items-center gap-2 border-b border-rule pb-2 sm:grid-cols-[1fr_auto]">
+              <li
+                key={part.partId}
+                className="grid items-center gap-2 border-b border-rule pb-2 sm:grid-cols-[1fr_auto]"
+              >
                 <p>
-                  <span className="font-semibold">{part.partName}</span> <span className="text-ink-2">{part.partNumber}</span>
+                  <span className="font-semibold">{part.partName}</span>{" "}
+                  <span className="text-ink-2">{part.partNumber}</span>
                 </p>
                 <StartButton
                   start={start}

@@ -31,20 +31,47 @@ export const quickDays = (t: (key: "today" | "yesterday") => string, locale: Loc
 ];
 
 /** One unit of the claim: what it is, where it sat, who fitted it and when, and the part that took its place. */
-export function LineFields({ line, place, unit, part, installers, problems, locale, today, isAlone }: LineFieldsProps) {
+export function LineFields({
+  line,
+  place,
+  unit,
+  part,
+  installers,
+  problems,
+  locale,
+  today,
+  isAlone,
+}: LineFieldsProps) {
   const t = useTranslations("draft.line");
   const name = (field: keyof DraftLine) => `lines.${place}.${field}`;
-  const errorOf = (field: keyof DraftLine) => problems.find((problem) => problem.fieldId === name(field))?.text;
+  const errorOf = (field: keyof DraftLine) =>
+    problems.find((problem) => problem.fieldId === name(field))?.text;
   const listId = `installers-${place}`;
   return (
     <Card isInCharge={place === 0} title={part?.name ?? t("unknownPart")} note={part?.number}>
       <div className="grid gap-5">
         <p className="text-ink-2">
           {line.serial ? <Serial value={line.serial} className="text-18 text-ink" /> : t("noSerial")}
-          {unit ? <> · {t("shipped", { day: formatDay(unit.shippedOn, locale), seller: unit.sellerName, batch: unit.batchCode ?? "none" })}</> : null}
+          {unit ? (
+            <>
+              {" "}
+              ·{" "}
+              {t("shipped", {
+                day: formatDay(unit.shippedOn, locale),
+                seller: unit.sellerName,
+                batch: unit.batchCode ?? "none",
+              })}
+            </>
+          ) : null}
         </p>
         {unit || line.serial ? null : (
-          <TextField name={name("quantity")} label={t("quantity")} inputMode="numeric" defaultValue={line.quantity} error={errorOf("quantity")} />
+          <TextField
+            name={name("quantity")}
+            label={t("quantity")}
+            inputMode="numeric"
+            defaultValue={line.quantity}
+            error={errorOf("quantity")}
+          />
         )}
         <RadioGroup
           name={name("position")}

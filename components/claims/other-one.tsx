@@ -28,14 +28,27 @@ export function OtherOne({ number, typed, units, isSearched, refused, lines, add
       <div className="grid gap-4">
         {known ? <Banner kind="refused">{t(`refused.${known}`)}</Banner> : null}
         <form className="grid gap-3">
-          <TextField name="other" label={t("serial")} hint={t("hint")} isSerial defaultValue={typed} maxLength={80} />
+          <TextField
+            name="other"
+            label={t("serial")}
+            hint={t("hint")}
+            isSerial
+            defaultValue={typed}
+            maxLength={80}
+          />
           <Button type="submit" kind="secondary" wide>
             {t("lookUp")}
           </Button>
         </form>
-        {isSearched && units.length === 0 ? <p className="text-wanting">{t("unknown", { serial: typed })}</p> : null}
+        {isSearched && units.length === 0 ? (
+          <p className="text-wanting">{t("unknown", { serial: typed })}</p>
+        ) : null}
         {units.map((unit) => (
-          <form key={unit.unitId} action={add} className="grid items-center gap-3 border-t border-rule pt-3 sm:grid-cols-[1fr_auto]">
+          <form
+            key={unit.unitId}
+            action={add}
+            className="grid items-center gap-3 border-t border-rule pt-3 sm:grid-cols-[1fr_auto]"
+          >
             <input type="hidden" name="number" value={number} />
             <input type="hidden" name="unitId" value={unit.unitId} />
             <p>
@@ -46,7 +59,11 @@ export function OtherOne({ number, typed, units, isSearched, refused, lines, add
         ))}
         {lines.map((serial, place) =>
           place === 0 ? null : (
-            <form key={serial} action={remove} className="flex items-center justify-between gap-3 border-t border-rule pt-3">
+            <form
+              key={serial}
+              action={remove}
+              className="flex items-center justify-between gap-3 border-t border-rule pt-3"
+            >
               <input type="hidden" name="number" value={number} />
               <input type="hidden" name="place" value={place} />
               <Serial value={serial} />

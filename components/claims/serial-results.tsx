@@ -48,10 +48,19 @@ type ResultsProps = {
 /** What the serial answers: the part, its days, its price and its term. One press confirms. */
 export function SerialResults({ kind, typed, found, locale, start }: ResultsProps) {
   const t = useTranslations("start");
-  if (kind === "unknown") return <Banner kind="wanting" title={t("unknownTitle", { serial: typed })}>{t("unknown")}</Banner>;
+  if (kind === "unknown")
+    return (
+      <Banner kind="wanting" title={t("unknownTitle", { serial: typed })}>
+        {t("unknown")}
+      </Banner>
+    );
   return (
     <>
-      {kind === "similar" ? <Banner kind="wanting" title={t("similarTitle", { serial: typed })}>{t("similar")}</Banner> : null}
+      {kind === "similar" ? (
+        <Banner kind="wanting" title={t("similarTitle", { serial: typed })}>
+          {t("similar")}
+        </Banner>
+      ) : null}
       {found.map(({ unit, coverage }) => (
         <UnitCard key={unit.unitId} unit={unit} coverage={coverage} locale={locale} start={start} />
       ))}
@@ -70,15 +79,26 @@ function UnitCard({ unit, coverage, locale, start }: Found & { locale: Locale; s
       <TermLine coverage={coverage} locale={locale} />
       <Facts>
         <Fact term={t("batch")}>{unit.batchCode ?? t("notGiven")}</Fact>
-        <Fact term={t("bought")}>{t("boughtFrom", { seller: unit.sellerName, day: formatDay(unit.invoicedOn, locale) })}</Fact>
+        <Fact term={t("bought")}>
+          {t("boughtFrom", { seller: unit.sellerName, day: formatDay(unit.invoicedOn, locale) })}
+        </Fact>
         <Fact term={t("invoice")}>{unit.invoiceNumber}</Fact>
         <Fact term={t("price")}>
-          {isCurrency(currency) ? formatMoney(money(BigInt(unit.unitPriceMinor), currency), locale) : unit.unitPriceMinor}
+          {isCurrency(currency)
+            ? formatMoney(money(BigInt(unit.unitPriceMinor), currency), locale)
+            : unit.unitPriceMinor}
         </Fact>
         <Fact term={t("fitted")}>
-          {unit.fittedOn ? t("fittedBy", { day: formatDay(unit.fittedOn, locale), by: unit.installerName ?? t("somebody") }) : t("notRecorded")}
+          {unit.fittedOn
+            ? t("fittedBy", {
+                day: formatDay(unit.fittedOn, locale),
+                by: unit.installerName ?? t("somebody"),
+              })
+            : t("notRecorded")}
         </Fact>
-        <Fact term={t("vehicle")}>{unit.frameSerial ? <Serial value={unit.frameSerial} /> : t("notRecorded")}</Fact>
+        <Fact term={t("vehicle")}>
+          {unit.frameSerial ? <Serial value={unit.frameSerial} /> : t("notRecorded")}
+        </Fact>
       </Facts>
       {unit.ownClaim ? (
         <p className="mt-3">

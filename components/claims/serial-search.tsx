@@ -8,7 +8,15 @@ export function SerialSearch({ serial }: { serial: string }) {
   const t = useTranslations("start");
   return (
     <form action="/claims/new" className="grid gap-4">
-      <TextField name="serial" label={t("serial")} hint={t("serialHint")} isSerial autoFocus defaultValue={serial} maxLength={80} />
+      <TextField
+        name="serial"
+        label={t("serial")}
+        hint={t("serialHint")}
+        isSerial
+        autoFocus
+        defaultValue={serial}
+        maxLength={80}
+      />
       <Button type="submit" kind="primary" wide>
         {t("lookUp")}
       </Button>

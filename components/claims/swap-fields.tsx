@@ -15,7 +15,13 @@ export function SwapFields({ draft }: { draft: ClaimDraft }) {
     <Card title={t("title")}>
       <p className="mb-3 max-w-measure text-ink-2">{t("why")}</p>
       <div className="grid gap-5">
-        <ReadingField name="swapMinutes" label={t("minutes")} unit={t("minutesUnit")} isOptional defaultValue={draft.swapMinutes} />
+        <ReadingField
+          name="swapMinutes"
+          label={t("minutes")}
+          unit={t("minutesUnit")}
+          isOptional
+          defaultValue={draft.swapMinutes}
+        />
         <RadioGroup name="swapHeat" label={t("heat")} chosen={draft.swapHeat} choices={answers} />
         <RadioGroup name="testDrive" label={t("testDrive")} chosen={draft.testDrive} choices={answers} />
       </div>

@@ -31,7 +31,13 @@ export function VehicleFields({ draft, problems, locale, today }: VehicleFieldsP
           error={errorOf("frameSerial")}
           maxLength={80}
         />
-        <TextField name="vehicleModel" label={t("model")} isOptional defaultValue={draft.vehicleModel} maxLength={120} />
+        <TextField
+          name="vehicleModel"
+          label={t("model")}
+          isOptional
+          defaultValue={draft.vehicleModel}
+          maxLength={120}
+        />
         <DateField
           name="repairedOn"
           label={t("repairedOn")}

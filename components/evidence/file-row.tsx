@@ -20,7 +20,13 @@ type FileRowProps = {
   files: readonly EvidenceFileItem[];
 };
 
-type Sending = { id: string; file: File; percent: number; fault: { sentence: string | null; canRetry: boolean } | null; upload: Upload | null };
+type Sending = {
+  id: string;
+  file: File;
+  percent: number;
+  fault: { sentence: string | null; canRetry: boolean } | null;
+  upload: Upload | null;
+};
 
 const ACCEPT = {
   photo: "image/jpeg,image/png,image/webp",
@@ -40,7 +46,8 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
     queryFn: () => fetchJson(`/api/v1/claims/${number}/evidence`),
     select: listedFiles,
     // Until every picture has its view copy, ask again now and then.
-    refetchInterval: (query) => (listedFiles(query.state.data).some((file) => file.viewState === "waiting") ? 2_000 : false),
+    refetchInterval: (query) =>
+      listedFiles(query.state.data).some((file) => file.viewState === "waiting") ? 2_000 : false,
     enabled: sending.length > 0 || files.some((file) => file.viewState === "waiting"),
   });
   const shown = live.data ? live.data.filter((file) => file.rowId === rowId) : files;
@@ -50,7 +57,8 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
   });
 
   const change = useCallback(
-    (id: string, next: Partial<Sending>) => setSending((all) => all.map((one) => (one.id === id ? { ...one, ...next } : one))),
+    (id: string, next: Partial<Sending>) =>
+      setSending((all) => all.map((one) => (one.id === id ? { ...one, ...next } : one))),
     [],
   );
   const send = (id: string, file: File) => {
@@ -64,14 +72,25 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
       .catch((reason: unknown) => change(id, { fault: faultOf(reason), upload: null }));
   };
   const take = (chosen: readonly File[]) => {
-    const added = chosen.map((file) => ({ id: crypto.randomUUID(), file, percent: 0, fault: null, upload: null }));
+    const added = chosen.map((file) => ({
+      id: crypto.randomUUID(),
+      file,
+      percent: 0,
+      fault: null,
+      upload: null,
+    }));
     setSending((all) => [...all, ...added]);
     for (const { id, file } of added) send(id, file);
   };
   const { getRootProps, isDragActive } = useDropzone({ onDrop: take, noClick: true, noKeyboard: true });
 
   return (
-    <div {...getRootProps()} className={isDragActive ? "grid gap-2 outline-2 outline-offset-4 outline-petrol outline-dashed" : "grid gap-2"}>
+    <div
+      {...getRootProps()}
+      className={
+        isDragActive ? "grid gap-2 outline-2 outline-offset-4 outline-petrol outline-dashed" : "grid gap-2"
+      }
+    >
       {shown.length + sending.length > 0 ? (
         <ul>
           {shown.map((file) => (
@@ -100,7 +119,13 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
       ) : null}
       <p className="flex flex-wrap gap-2">
         {kind === "photo" ? (
-          <FilePick id={`${inputId}-camera`} label={t("takePhoto")} accept={ACCEPT.photo} isCamera onTake={take} />
+          <FilePick
+            id={`${inputId}-camera`}
+            label={t("takePhoto")}
+            accept={ACCEPT.photo}
+            isCamera
+            onTake={take}
+          />
         ) : null}
         <FilePick id={`${inputId}-files`} label={t(`choose.${kind}`)} accept={ACCEPT[kind]} onTake={take} />
       </p>
@@ -108,7 +133,15 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
   );
 }
 
-function RowAction({ sending, onRetry, onDrop }: { sending: Sending; onRetry: () => void; onDrop: () => void }) {
+function RowAction({
+  sending,
+  onRetry,
+  onDrop,
+}: {
+  sending: Sending;
+  onRetry: () => void;
+  onDrop: () => void;
+}) {
   const t = useTranslations("live.files");
   return (
     <span className="flex gap-2">
@@ -124,7 +157,13 @@ function RowAction({ sending, onRetry, onDrop }: { sending: Sending; onRetry: ()
   );
 }
 
-type FilePickProps = { id: string; label: string; accept: string; isCamera?: boolean; onTake: (files: readonly File[]) => void };
+type FilePickProps = {
+  id: string;
+  label: string;
+  accept: string;
+  isCamera?: boolean;
+  onTake: (files: readonly File[]) => void;
+};
 
 /** A native picker under a label that looks like a button: a phone offers its camera, a desk its folders. It has no name: the form never carries the bytes. */
 function FilePick({ id, label, accept, isCamera = false, onTake }: FilePickProps) {
@@ -157,6 +196,7 @@ const isFile = (value: unknown): value is EvidenceFileItem =>
 
 /** The files in an answer of the list route; anything else is none. */
 function listedFiles(answer: unknown): EvidenceFileItem[] {
-  if (typeof answer !== "object" || answer === null || !("files" in answer) || !Array.isArray(answer.files)) return [];
+  if (typeof answer !== "object" || answer === null || !("files" in answer) || !Array.isArray(answer.files))
+    return [];
   return answer.files.filter(isFile);
 }

@@ -13,16 +13,27 @@ export function SentFile({ file, onWithdraw }: { file: EvidenceFileItem; onWithd
     <UploadRow
       fileName={file.originalName}
       state="sent"
-      note={t(`view.${file.viewState}`, { size: format.number(file.sizeBytes / 1000, { maximumFractionDigits: 0 }) })}
+      note={t(`view.${file.viewState}`, {
+        size: format.number(file.sizeBytes / 1000, { maximumFractionDigits: 0 }),
+      })}
       picture={
         file.viewState === "ready" ? (
           // The view copy is small and comes from our own store; the framework's optimiser is off for good reason.
           // eslint-disable-next-line @next/next/no-img-element
-          <img src={`/api/v1/evidence/${file.id}/view`} alt="" className="size-16 border border-edge object-cover" />
+          <img
+            src={`/api/v1/evidence/${file.id}/view`}
+            alt=""
+            className="size-16 border border-edge object-cover"
+          />
         ) : undefined
       }
       action={
-        <Button small kind="quiet" onPress={onWithdraw} aria-label={t("withdrawFile", { name: file.originalName })}>
+        <Button
+          small
+          kind="quiet"
+          onPress={onWithdraw}
+          aria-label={t("withdrawFile", { name: file.originalName })}
+        >
           {t("withdraw")}
         </Button>
       }

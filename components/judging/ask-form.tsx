@@ -22,7 +22,9 @@ export function AskForm({ action, number, rows, round, workshop }: AskFormProps)
   const [state, send] = useActionState(action, null);
   const refused = state && !state.ok ? state : null;
   const typed = refused?.typed;
-  const ticked = typed ? [typed.rowIds ?? []].flat() : rows.filter((row) => row.isMissing).map(({ id }) => id);
+  const ticked = typed
+    ? [typed.rowIds ?? []].flat()
+    : rows.filter((row) => row.isMissing).map(({ id }) => id);
   return (
     <form action={send} noValidate className="grid gap-5">
       <input type="hidden" name="number" value={number} />

@@ -15,16 +15,28 @@ import { VERDICT_OUTCOMES, type VerdictOutcome } from "@/lib/claims/lifecycle";
 import { CAUSES, REASONS } from "@/lib/claims/verdict";
 import type { FormAction, Typed } from "@/lib/kernel/action-result";
 
-type Line = { lineId: string; lineNumber: number; name: string; serial: string | null; suggestion: VerdictOutcome | null };
+type Line = {
+  lineId: string;
+  lineNumber: number;
+  name: string;
+  serial: string | null;
+  suggestion: VerdictOutcome | null;
+};
 type DecideFormProps = { action: FormAction; number: string; revision: number; lines: readonly Line[] };
-type LineProps = { line: Line; place: number; typed: Typed | undefined; fields: Readonly<Record<string, string>> };
+type LineProps = {
+  line: Line;
+  place: number;
+  typed: Typed | undefined;
+  fields: Readonly<Record<string, string>>;
+};
 
 const textIn = (typed: Typed | undefined, name: string): string | undefined => {
   const value = typed?.[name];
   return typeof value === "string" ? value : undefined;
 };
 
-const isOutcome = (text: string | undefined): text is VerdictOutcome => VERDICT_OUTCOMES.some((outcome) => outcome === text);
+const isOutcome = (text: string | undefined): text is VerdictOutcome =>
+  VERDICT_OUTCOMES.some((outcome) => outcome === text);
 
 /** The verdict of each line, whose doing it was in exact shares, the reason, and the letter the workshop reads. */
 export function DecideForm({ action, number, revision, lines }: DecideFormProps) {
@@ -79,7 +91,11 @@ function LineVerdict({ line, place, typed, fields }: LineProps) {
   const [outcome, setOutcome] = useState<VerdictOutcome | null>(isOutcome(sent) ? sent : line.suggestion);
   const reasons = outcome ? REASONS[outcome] : Object.values(REASONS).flat();
   return (
-    <Card isInCharge={place === 0} title={line.name} note={line.serial ? <Serial value={line.serial} /> : undefined}>
+    <Card
+      isInCharge={place === 0}
+      title={line.name}
+      note={line.serial ? <Serial value={line.serial} /> : undefined}
+    >
       <input type="hidden" name={name("lineId")} value={line.lineId} />
       <div className="grid gap-5">
         <RadioGroup
@@ -103,11 +119,16 @@ function LineVerdict({ line, place, typed, fields }: LineProps) {
                 label={t(`causes.${cause}`)}
                 inputMode="text"
                 maxLength={20}
-                defaultValue={textIn(typed, name(`shares.${cause}`)) ?? (cause === "maker" && line.suggestion === "upheld" ? "1" : "")}
+                defaultValue={
+                  textIn(typed, name(`shares.${cause}`)) ??
+                  (cause === "maker" && line.suggestion === "upheld" ? "1" : "")
+                }
               />
             ))}
           </div>
-          {fields[name("shares")] ? <p className="font-semibold text-refused">{fields[name("shares")]}</p> : null}
+          {fields[name("shares")] ? (
+            <p className="font-semibold text-refused">{fields[name("shares")]}</p>
+          ) : null}
         </fieldset>
         <Select
           name={name("reasonCode")}

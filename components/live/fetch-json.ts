@@ -15,7 +15,11 @@ const isProblem = (body: unknown): body is { title: string } =>
 export async function fetchJson(path: string, init: RequestInit = {}): Promise<unknown> {
   const response = await fetch(path, {
     ...init,
-    headers: { accept: "application/json", ...(init.body ? { "content-type": "application/json" } : {}), ...init.headers },
+    headers: {
+      accept: "application/json",
+      ...(init.body ? { "content-type": "application/json" } : {}),
+      ...init.headers,
+    },
   });
   const body: unknown = await response.json().catch(() => null);
   if (response.ok) return body;

@@ -23,17 +23,28 @@ export function ConditionCard({ sheet, locale }: SheetProps) {
   return (
     <Card title={t("title")}>
       <Facts>
-        <Fact term={t("note")}>{facts.note ? <span className="whitespace-pre-wrap">{facts.note}</span> : t("notGiven")}</Fact>
-        <Fact term={t("ruledOut")}>{list(facts.ruledOut.map(({ itemId }) => itemId), "ruledOut") ?? t("notGiven")}</Fact>
+        <Fact term={t("note")}>
+          {facts.note ? <span className="whitespace-pre-wrap">{facts.note}</span> : t("notGiven")}
+        </Fact>
+        <Fact term={t("ruledOut")}>
+          {list(
+            facts.ruledOut.map(({ itemId }) => itemId),
+            "ruledOut",
+          ) ?? t("notGiven")}
+        </Fact>
         <Fact term={t("found")}>
-          {list(found.map(({ itemId }) => itemId), "conditionAsFound") ?? t("nothingFound", { looked })}
+          {list(
+            found.map(({ itemId }) => itemId),
+            "conditionAsFound",
+          ) ?? t("nothingFound", { looked })}
           {facts.conditionNote ? <p className="whitespace-pre-wrap">{facts.conditionNote}</p> : null}
         </Fact>
         <Fact term={t("earlierWork")}>{facts.earlierWork || t("notGiven")}</Fact>
         <Fact term={t("swap")}>
           {facts.swap
             ? t("swapRun", {
-                minutes: facts.swap.minutes === null ? t("notGiven") : formatNumber(facts.swap.minutes, locale),
+                minutes:
+                  facts.swap.minutes === null ? t("notGiven") : formatNumber(facts.swap.minutes, locale),
                 heat: facts.swap.abnormalHeat === null ? "open" : String(facts.swap.abnormalHeat),
                 drive: facts.swap.testDrive === null ? "open" : String(facts.swap.testDrive),
               })

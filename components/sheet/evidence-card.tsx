@@ -14,7 +14,9 @@ export function EvidenceCard({ sheet, locale }: SheetProps) {
   const done = sheet.rows.filter((row) => row.state !== "toDo").length;
   return (
     <Card id="evidence" title={t("title")} note={t("count", { done, all: sheet.rows.length })}>
-      {sheet.rows.length === 0 && sheet.otherFiles.length === 0 ? <EmptyState kind="nothingYet" title={t("none")} /> : null}
+      {sheet.rows.length === 0 && sheet.otherFiles.length === 0 ? (
+        <EmptyState kind="nothingYet" title={t("none")} />
+      ) : null}
       <ol className="grid">
         {sheet.rows.map((row) => (
           <EvidenceRow key={row.id} row={row} locale={locale} />
@@ -41,7 +43,9 @@ function EvidenceRow({ row, locale }: { row: EvidenceRowView; locale: Locale }) 
         {row.need === "useful" ? <span className="text-small text-ink-2">{t("useful")}</span> : null}
       </div>
       {row.answer ? <p className="max-w-measure whitespace-pre-wrap">{row.answer}</p> : null}
-      {row.reason ? <p className="max-w-measure text-ink-2">{t("cannotGet", { reason: row.reason })}</p> : null}
+      {row.reason ? (
+        <p className="max-w-measure text-ink-2">{t("cannotGet", { reason: row.reason })}</p>
+      ) : null}
       {row.reading ? <ReadingLine reading={row.reading} locale={locale} /> : null}
       <Files files={row.files} locale={locale} />
     </li>
@@ -60,20 +64,35 @@ const JUDGEMENT = {
 /** What the meter said, what it comes to at 20 °C, and the limits of the part with where they come from. */
 function ReadingLine({ reading, locale }: { reading: ReadingView; locale: Locale }) {
   const t = useTranslations("sheet.reading");
-  const number = (value: number | null) => (value === null ? t("noEnd") : formatNumber(value, locale, { most: 2 }));
+  const number = (value: number | null) =>
+    value === null ? t("noEnd") : formatNumber(value, locale, { most: 2 });
   return (
     <div className="grid gap-1">
       <p className="flex flex-wrap items-baseline gap-x-4 gap-y-1">
-        <span className="text-18 tabular-nums">{reading.value === null ? t("openCircuit") : `${number(reading.value)} ${reading.unit}`}</span>
-        {reading.temperatureCelsius === null ? null : <span>{t("at", { celsius: number(reading.temperatureCelsius) })}</span>}
-        {reading.isCorrectedTo20 ? <strong className="tabular-nums">{t("at20", { value: number(reading.judgedValue), unit: reading.unit })}</strong> : null}
+        <span className="text-18 tabular-nums">
+          {reading.value === null ? t("openCircuit") : `${number(reading.value)} ${reading.unit}`}
+        </span>
+        {reading.temperatureCelsius === null ? null : (
+          <span>{t("at", { celsius: number(reading.temperatureCelsius) })}</span>
+        )}
+        {reading.isCorrectedTo20 ? (
+          <strong className="tabular-nums">
+            {t("at20", { value: number(reading.judgedValue), unit: reading.unit })}
+          </strong>
+        ) : null}
         <Mark {...JUDGEMENT[reading.judgement]} plain>
           {t(`judgement.${reading.judgement}`)}
         </Mark>
       </p>
       <p className="text-small text-ink-2">
         {reading.limit
-          ? t("limit", { low: number(reading.limit.low), high: number(reading.limit.high), unit: reading.unit, rule: reading.limit.rule, source: reading.limit.source })
+          ? t("limit", {
+              low: number(reading.limit.low),
+              high: number(reading.limit.high),
+              unit: reading.unit,
+              rule: reading.limit.rule,
+              source: reading.limit.source,
+            })
           : t("noLimit")}
         {reading.rawText.trim() === String(reading.value) ? null : ` ${t("typed", { raw: reading.rawText })}`}
         {reading.instrument ? ` ${t("instrument", { instrument: reading.instrument })}` : null}
@@ -103,7 +122,9 @@ function Files({ files, locale }: { files: readonly EvidenceFileView[]; locale: 
                     className="aspect-4/3 w-full border border-edge object-cover"
                   />
                 ) : (
-                  <span className="grid aspect-4/3 place-items-center border border-dashed border-edge text-small text-ink-2">{t(`view.${file.viewState}`)}</span>
+                  <span className="grid aspect-4/3 place-items-center border border-dashed border-edge text-small text-ink-2">
+                    {t(`view.${file.viewState}`)}
+                  </span>
                 )}
               </a>
               <FileNote file={file} locale={locale} />
@@ -113,7 +134,9 @@ function Files({ files, locale }: { files: readonly EvidenceFileView[]; locale: 
       ) : null}
       {others.map((file) => (
         <div key={file.id} className="min-w-0">
-          {file.kind === "runLog" ? <RunLogFigure fileId={file.id} summary={file.summary} locale={locale} /> : null}
+          {file.kind === "runLog" ? (
+            <RunLogFigure fileId={file.id} summary={file.summary} locale={locale} />
+          ) : null}
           <FileNote file={file} locale={locale} />
         </div>
       ))}

@@ -16,8 +16,18 @@ export function FlagList({ sheet }: SheetProps) {
           const other = flag.detail.otherClaim;
           return (
             <li key={`${flag.kind}-${flag.lineNumber}-${other ?? ""}`}>
-              {t.has(flag.kind) ? t(flag.kind, { line: flag.lineNumber ?? 1, ...flag.detail, otherClaim: other ? printClaimNumber(other) : "" }) : flag.kind}{" "}
-              {other ? <TextLink href={claimPath({ number: other })}>{t("open", { number: printClaimNumber(other) })}</TextLink> : null}
+              {t.has(flag.kind)
+                ? t(flag.kind, {
+                    line: flag.lineNumber ?? 1,
+                    ...flag.detail,
+                    otherClaim: other ? printClaimNumber(other) : "",
+                  })
+                : flag.kind}{" "}
+              {other ? (
+                <TextLink href={claimPath({ number: other })}>
+                  {t("open", { number: printClaimNumber(other) })}
+                </TextLink>
+              ) : null}
             </li>
           );
         })}

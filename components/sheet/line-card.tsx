@@ -21,20 +21,32 @@ export function LineCard({ line, sheet, locale }: SheetProps & { line: LineView 
       actions={line.verdict ? <ClaimMark state={line.verdict} /> : undefined}
     >
       <p className="mb-3 flex flex-wrap items-baseline gap-3">
-        {line.serial ? <Serial value={line.serial} className="text-20" /> : t("quantity", { quantity: line.quantity })}
+        {line.serial ? (
+          <Serial value={line.serial} className="text-20" />
+        ) : (
+          t("quantity", { quantity: line.quantity })
+        )}
         {line.serial && !line.isKnownUnit ? <span className="text-wanting">{t("unknownUnit")}</span> : null}
       </p>
       <Facts columns={2}>
         <Fact term={t("batch")}>{line.batch ?? t("notGiven")}</Fact>
         <Fact term={t("position")}>{t(`positions.${line.position}`)}</Fact>
-        <Fact term={t("invoice")}>{line.invoice ? t("invoiceLine", { number: line.invoice.number, line: line.invoice.line }) : t("notGiven")}</Fact>
+        <Fact term={t("invoice")}>
+          {line.invoice
+            ? t("invoiceLine", { number: line.invoice.number, line: line.invoice.line })
+            : t("notGiven")}
+        </Fact>
         <Fact term={t("shippedOn")}>{day(line.invoice?.shippedOn ?? null)}</Fact>
         <Fact term={t("fittedOn")}>{day(line.fittedOn)}</Fact>
         <Fact term={t("installer")}>{line.installer ?? t("notGiven")}</Fact>
         <Fact term={t("failedOn")}>{day(sheet.facts?.failedOn ?? null)}</Fact>
-        <Fact term={t("vehicle")}>{sheet.facts ? <Serial value={sheet.facts.vehicle.frameSerial} /> : t("notGiven")}</Fact>
+        <Fact term={t("vehicle")}>
+          {sheet.facts ? <Serial value={sheet.facts.vehicle.frameSerial} /> : t("notGiven")}
+        </Fact>
         <Fact term={t("replacement")}>
-          {line.replacement ? t("replacedBy", { serial: line.replacement.serial, day: day(line.replacement.fittedOn) }) : t("notGiven")}
+          {line.replacement
+            ? t("replacedBy", { serial: line.replacement.serial, day: day(line.replacement.fittedOn) })
+            : t("notGiven")}
         </Fact>
         <Fact term={t("asked")}>{formatMoney(line.asked, locale)}</Fact>
         <Fact term={t("part")}>

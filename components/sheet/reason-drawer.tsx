@@ -25,8 +25,14 @@ export function ReasonDrawer({ action, number, trigger, label, field, submit, ch
   const typed = refused?.typed[field];
   return (
     <details className="group" open={refused !== null}>
-      <summary className={`${buttonStyle({ kind: "quiet" })} list-none [&::-webkit-details-marker]:hidden`}>{trigger}</summary>
-      <form action={send} noValidate className="mt-2 grid w-80 max-w-full gap-3 rounded-sheet border border-rule bg-card p-4">
+      <summary className={`${buttonStyle({ kind: "quiet" })} list-none [&::-webkit-details-marker]:hidden`}>
+        {trigger}
+      </summary>
+      <form
+        action={send}
+        noValidate
+        className="mt-2 grid w-80 max-w-full gap-3 rounded-sheet border border-rule bg-card p-4"
+      >
         <input type="hidden" name="number" value={number} />
         {refused?.message ? (
           <Banner kind="refused" isLive>
@@ -34,7 +40,12 @@ export function ReasonDrawer({ action, number, trigger, label, field, submit, ch
           </Banner>
         ) : null}
         {choices ? (
-          <Select name={choices.name} label={choices.label} options={choices.options} error={refused?.fields[choices.name]} />
+          <Select
+            name={choices.name}
+            label={choices.label}
+            options={choices.options}
+            error={refused?.fields[choices.name]}
+          />
         ) : null}
         <TextArea
           id={`${field}-${trigger}`}

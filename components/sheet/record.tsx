@@ -25,8 +25,16 @@ export function Record({ sheet, locale, timeZone }: SheetProps) {
         {sheet.timeline.map((entry) => (
           <TimelineEntry
             key={entry.seq}
-            what={kinds.has(entry.kind) ? kinds(entry.kind, { revision: textIn(entry.detail, "revision", locale) ?? "" }) : entry.kind}
-            who={entry.actorOrganisation ? t("who", { name: entry.actorName, organisation: entry.actorOrganisation }) : entry.actorName}
+            what={
+              kinds.has(entry.kind)
+                ? kinds(entry.kind, { revision: textIn(entry.detail, "revision", locale) ?? "" })
+                : entry.kind
+            }
+            who={
+              entry.actorOrganisation
+                ? t("who", { name: entry.actorName, organisation: entry.actorOrganisation })
+                : entry.actorName
+            }
             when={formatInstant(new Date(entry.at), locale, timeZone)}
             at={entry.at}
           >
@@ -46,7 +54,10 @@ export function Record({ sheet, locale, timeZone }: SheetProps) {
       <ul className="grid gap-1 text-small">
         {sheet.revisions.map((revision) => (
           <li key={revision.revision}>
-            {t("revision", { revision: revision.revision, at: formatInstant(new Date(revision.sentAt), locale, timeZone) })}{" "}
+            {t("revision", {
+              revision: revision.revision,
+              at: formatInstant(new Date(revision.sentAt), locale, timeZone),
+            })}{" "}
             <span className="font-mono text-ink-2" title={revision.sha256}>
               {revision.sha256.slice(0, 12)}
             </span>

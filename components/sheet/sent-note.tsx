@@ -14,7 +14,10 @@ export function SentNote({ sheet, locale, timeZone }: SheetProps) {
       <p className="text-18 font-semibold">{t("write")}</p>
       <p className="mt-2 text-ink-2">
         {sheet.answerDueAt
-          ? t("answerBy", { seller: sheet.sellerName, at: formatInstant(new Date(sheet.answerDueAt), locale, timeZone) })
+          ? t("answerBy", {
+              seller: sheet.sellerName,
+              at: formatInstant(new Date(sheet.answerDueAt), locale, timeZone),
+            })
           : t("answer", { seller: sheet.sellerName })}
       </p>
     </Card>

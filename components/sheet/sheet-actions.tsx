@@ -5,7 +5,13 @@ import type { FormAction } from "@/lib/kernel/action-result";
 import { MoveButton } from "./move-button";
 import { ReasonDrawer } from "./reason-drawer";
 
-type Actions = { take: FormAction; takeOver: FormAction; putBack: FormAction; park: FormAction; withdraw: FormAction };
+type Actions = {
+  take: FormAction;
+  takeOver: FormAction;
+  putBack: FormAction;
+  park: FormAction;
+  withdraw: FormAction;
+};
 type SheetActionsProps = {
   sheet: SheetView;
   base: `/claims/${string}`;
@@ -22,9 +28,21 @@ export function SheetActions({ sheet, base, colleagues, actions }: SheetActionsP
   return (
     <div className="flex flex-wrap items-start gap-2 print:hidden">
       {can("take") ? <MoveButton action={actions.take} number={number} label={t("take")} /> : null}
-      {can("decide") ? <LinkButton href={`${base}/decide`} kind="primary">{t("decide")}</LinkButton> : null}
-      {can("ask") ? <LinkButton href={`${base}/ask`} kind="secondary">{t("ask")}</LinkButton> : null}
-      {can("answer") ? <LinkButton href={`${base}/evidence`} kind="primary">{t("answer")}</LinkButton> : null}
+      {can("decide") ? (
+        <LinkButton href={`${base}/decide`} kind="primary">
+          {t("decide")}
+        </LinkButton>
+      ) : null}
+      {can("ask") ? (
+        <LinkButton href={`${base}/ask`} kind="secondary">
+          {t("ask")}
+        </LinkButton>
+      ) : null}
+      {can("answer") ? (
+        <LinkButton href={`${base}/evidence`} kind="primary">
+          {t("answer")}
+        </LinkButton>
+      ) : null}
       {can("decide") && colleagues.length > 0 ? (
         <ReasonDrawer
           action={actions.park}
@@ -32,15 +50,33 @@ export function SheetActions({ sheet, base, colleagues, actions }: SheetActionsP
           trigger={t("park")}
           label={t("parkQuestion")}
           field="question"
-          choices={{ name: "colleagueId", label: t("parkWith"), options: colleagues.map(({ id, name }) => ({ value: id, label: name })) }}
+          choices={{
+            name: "colleagueId",
+            label: t("parkWith"),
+            options: colleagues.map(({ id, name }) => ({ value: id, label: name })),
+          }}
           submit={t("park")}
         />
       ) : null}
       {can("putBack") ? (
-        <ReasonDrawer action={actions.putBack} number={number} trigger={t("putBack")} label={t("putBackReason")} field="reason" submit={t("putBack")} />
+        <ReasonDrawer
+          action={actions.putBack}
+          number={number}
+          trigger={t("putBack")}
+          label={t("putBackReason")}
+          field="reason"
+          submit={t("putBack")}
+        />
       ) : null}
       {can("withdraw") ? (
-        <ReasonDrawer action={actions.withdraw} number={number} trigger={t("withdraw")} label={t("withdrawReason")} field="reason" submit={t("withdraw")} />
+        <ReasonDrawer
+          action={actions.withdraw}
+          number={number}
+          trigger={t("withdraw")}
+          label={t("withdrawReason")}
+          field="reason"
+          submit={t("withdraw")}
+        />
       ) : null}
       {sheet.canTakeOver ? (
         <span className="flex flex-wrap items-center gap-3">

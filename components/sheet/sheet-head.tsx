@@ -11,8 +11,15 @@ import type { SheetProps } from "./shared";
 export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
   const t = useTranslations("sheet");
   const words = useTranslations("families");
-  const mark = sheet.state === "decided" && sheet.outcome ? sheet.outcome : sheet.state === "decided" ? "upheld" : sheet.state;
-  const title = sheet.symptom ? words(`${sheet.family}.symptoms.${sheet.symptom}`) : words(`${sheet.family}.name`);
+  const mark =
+    sheet.state === "decided" && sheet.outcome
+      ? sheet.outcome
+      : sheet.state === "decided"
+        ? "upheld"
+        : sheet.state;
+  const title = sheet.symptom
+    ? words(`${sheet.family}.symptoms.${sheet.symptom}`)
+    : words(`${sheet.family}.name`);
   const other = sheet.side === "distributor" ? sheet.workshopName : sheet.sellerName;
   return (
     <div className="grid gap-4">
@@ -39,7 +46,9 @@ export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
       />
       {sheet.safetyReported ? (
         <Banner kind="caution" title={t("safetyTitle")}>
-          {t("safety", { at: sheet.incidentKnownAt ? formatInstant(new Date(sheet.incidentKnownAt), locale, timeZone) : "" })}
+          {t("safety", {
+            at: sheet.incidentKnownAt ? formatInstant(new Date(sheet.incidentKnownAt), locale, timeZone) : "",
+          })}
         </Banner>
       ) : null}
       {sheet.parked ? (

@@ -29,10 +29,15 @@ export function Talk({ number, initial, locale, timeZone }: TalkProps) {
   const form = useRef<HTMLFormElement>(null);
   const [error, setError] = useState<string>();
   const path = `/api/v1/claims/${number}/messages`;
-  const { data } = useQuery({ queryKey: ["talk", number], queryFn: () => fetchJson(path), refetchInterval: 15_000 });
+  const { data } = useQuery({
+    queryKey: ["talk", number],
+    queryFn: () => fetchJson(path),
+    refetchInterval: 15_000,
+  });
   const messages = data === undefined ? initial : messagesIn(data);
   const say = useMutation({
-    mutationFn: (said: { body: string; audience: string }) => fetchJson(path, { method: "POST", body: JSON.stringify(said) }),
+    mutationFn: (said: { body: string; audience: string }) =>
+      fetchJson(path, { method: "POST", body: JSON.stringify(said) }),
     onSuccess: async () => {
       form.current?.reset();
       await client.invalidateQueries({ queryKey: ["talk", number] });
@@ -51,7 +56,10 @@ export function Talk({ number, initial, locale, timeZone }: TalkProps) {
       {messages.length === 0 ? <p className="text-ink-2">{t("nothingYet")}</p> : null}
       <ol aria-live="polite" className="grid gap-3">
         {messages.map((message) => (
-          <li key={message.id} className={message.isOwnOnly ? "rounded-sheet bg-well p-3" : "border-l-4 border-l-petrol pl-3"}>
+          <li
+            key={message.id}
+            className={message.isOwnOnly ? "rounded-sheet bg-well p-3" : "border-l-4 border-l-petrol pl-3"}
+          >
             <p className="text-small text-ink-2">
               {t("who", { name: message.authorName, organisation: message.authorOrganisation })} ·{" "}
               <time dateTime={message.at}>{formatInstant(new Date(message.at), locale, timeZone)}</time>

@@ -17,7 +17,10 @@ export function VerdictCard({ verdict, sheet, locale, timeZone }: SheetProps & {
       isInCharge
       id="verdict"
       title={t("title")}
-      note={t("on", { at: formatInstant(new Date(verdict.decidedAt), locale, timeZone), revision: verdict.revision })}
+      note={t("on", {
+        at: formatInstant(new Date(verdict.decidedAt), locale, timeZone),
+        revision: verdict.revision,
+      })}
       actions={<ClaimMark state={verdict.outcome} />}
     >
       <p className="mb-4 max-w-measure whitespace-pre-wrap">{verdict.letter}</p>
@@ -33,7 +36,11 @@ export function VerdictCard({ verdict, sheet, locale, timeZone }: SheetProps & {
             </Fact>
             <Fact term={t("rule")}>
               {line.rule
-                ? t("ruleCited", { number: line.rule.number, title: line.rule.title, day: formatDay(calendarDay(line.rule.validFrom), locale) })
+                ? t("ruleCited", {
+                    number: line.rule.number,
+                    title: line.rule.title,
+                    day: formatDay(calendarDay(line.rule.validFrom), locale),
+                  })
                 : t("noRule")}
             </Fact>
             <Fact term={t("shares")}>
@@ -44,13 +51,17 @@ export function VerdictCard({ verdict, sheet, locale, timeZone }: SheetProps & {
             {line.returnWaivedReason ? <Fact term={t("returnWaived")}>{line.returnWaivedReason}</Fact> : null}
           </Facts>
           <details className="mt-2">
-            <summary className="min-h-target cursor-pointer py-2 text-petrol underline underline-offset-4">{t("cover")}</summary>
+            <summary className="min-h-target cursor-pointer py-2 text-petrol underline underline-offset-4">
+              {t("cover")}
+            </summary>
             <CoverageSteps coverage={line.coverage} locale={locale} />
           </details>
         </section>
       ))}
       {sheet.state === "decided" && sheet.contestUntil ? (
-        <p className="font-semibold">{t("contestUntil", { day: formatDay(calendarDay(sheet.contestUntil), locale) })}</p>
+        <p className="font-semibold">
+          {t("contestUntil", { day: formatDay(calendarDay(sheet.contestUntil), locale) })}
+        </p>
       ) : null}
     </Card>
   );

@@ -33,7 +33,8 @@ class Reader {
         this.rest = this.rest.subarray(end + 2);
         return text;
       }
-      if (this.rest.length > MOST_HEADER_BYTES || !(await this.more())) throw new StoreError("IncompleteBody", 400);
+      if (this.rest.length > MOST_HEADER_BYTES || !(await this.more()))
+        throw new StoreError("IncompleteBody", 400);
     }
   }
   async bytes(count) {
@@ -51,10 +52,13 @@ async function* decoded(source, signed, trailers) {
   for (;;) {
     const [size, ...extensions] = (await reader.line()).split(";");
     const length = Number.parseInt(size, 16);
-    if (!Number.isInteger(length) || length < 0 || length > MOST_CHUNK_BYTES) throw new StoreError("InvalidRequest", 400);
+    if (!Number.isInteger(length) || length < 0 || length > MOST_CHUNK_BYTES)
+      throw new StoreError("InvalidRequest", 400);
     const data = await reader.bytes(length);
     if (signed) {
-      const given = extensions.find((one) => one.startsWith("chunk-signature="))?.slice("chunk-signature=".length);
+      const given = extensions
+        .find((one) => one.startsWith("chunk-signature="))
+        ?.slice("chunk-signature=".length);
       const expected = chunkSignature(signed, previous, data);
       if (given !== expected) throw new StoreError("SignatureDoesNotMatch", 403);
       previous = expected;
@@ -80,9 +84,13 @@ const STREAMING = /^STREAMING-(UNSIGNED-PAYLOAD-TRAILER|AWS4-HMAC-SHA256-PAYLOAD
 export async function receive(request, headers, signature, sink) {
   const payload = headers["x-amz-content-sha256"] ?? "UNSIGNED-PAYLOAD";
   const streaming = STREAMING.exec(payload);
-  const announced = (headers["x-amz-trailer"] ?? "").split(",").map((name) => name.trim().toLowerCase()).filter(Boolean);
+  const announced = (headers["x-amz-trailer"] ?? "")
+    .split(",")
+    .map((name) => name.trim().toLowerCase())
+    .filter(Boolean);
   const names = [...Object.keys(headers).filter(isChecksumHeader), ...announced.filter(isChecksumHeader)];
-  for (const name of names) if (!isKnownChecksum(name)) throw new StoreError("NotImplemented", 501, `checksum ${name}`);
+  for (const name of names)
+    if (!isKnownChecksum(name)) throw new StoreError("NotImplemented", 501, `checksum ${name}`);
   const trailers = new Map();
   const signed = streaming && payload.includes("AWS4-HMAC") ? signature : null;
   const source = streaming ? decoded(request, signed, trailers) : request;
@@ -95,11 +103,18 @@ export async function receive(request, headers, signature, sink) {
   }
   const digest = sums.digest();
   const expectedLength = headers[streaming ? "x-amz-decoded-content-length" : "content-length"];
-  if (expectedLength !== undefined && Number(expectedLength) !== size) throw new StoreError("IncompleteBody", 400);
-  if (!streaming && payload !== "UNSIGNED-PAYLOAD" && payload !== digest.sha256) throw new StoreError("XAmzContentSHA256Mismatch", 400);
+  if (expectedLength !== undefined && Number(expectedLength) !== size)
+    throw new StoreError("IncompleteBody", 400);
+  if (!streaming && payload !== "UNSIGNED-PAYLOAD" && payload !== digest.sha256)
+    throw new StoreError("XAmzContentSHA256Mismatch", 400);
   for (const [name, value] of digest.named) {
     const given = headers[name] ?? trailers.get(name);
     if (given !== value) throw new StoreError("BadDigest", 400, `${name} does not match`);
   }
-  return { size, etag: digest.md5, sha256: digest.sha256, checksums: Object.fromEntries([...digest.named].filter(([name]) => name !== "content-md5")) };
+  return {
+    size,
+    etag: digest.md5,
+    sha256: digest.sha256,
+    checksums: Object.fromEntries([...digest.named].filter(([name]) => name !== "content-md5")),
+  };
 }

@@ -58,4 +58,7 @@ export class Checksums {
 }
 
 export const isKnownChecksum = (name) => name in ALGORITHMS;
-export const isChecksumHeader = (name) => name === "content-md5" || (name.startsWith("x-amz-checksum-") && !["x-amz-checksum-algorithm", "x-amz-checksum-mode", "x-amz-checksum-type"].includes(name));
+export const isChecksumHeader = (name) =>
+  name === "content-md5" ||
+  (name.startsWith("x-amz-checksum-") &&
+    !["x-amz-checksum-algorithm", "x-amz-checksum-mode", "x-amz-checksum-type"].includes(name));

@@ -22,10 +22,15 @@ export class Disk {
 
   async makeBucket(name) {
     if (!/^[a-z0-9][a-z0-9.-]{2,62}$/.test(name)) throw new StoreError("InvalidBucketName", 400);
-    for (const folder of ["data", "meta", "temp", "parts"]) await mkdir(join(this.bucket(name), folder), { recursive: true });
+    for (const folder of ["data", "meta", "temp", "parts"])
+      await mkdir(join(this.bucket(name), folder), { recursive: true });
   }
 
-  hasBucket = (name) => stat(join(this.bucket(name), "data")).then(() => true, () => false);
+  hasBucket = (name) =>
+    stat(join(this.bucket(name), "data")).then(
+      () => true,
+      () => false,
+    );
 
   /** A new file to write into; `keep` flushes and names it, `drop` forgets it. */
   async sink(bucket) {
@@ -50,7 +55,8 @@ export class Disk {
     const place = this.data(bucket, key);
     await mkdir(dirname(place), { recursive: true });
     const held = await this.head(bucket, key).catch(() => null);
-    if (held?.retainUntil && new Date(held.retainUntil) > new Date()) throw new StoreError("AccessDenied", 403, "the object is locked");
+    if (held?.retainUntil && new Date(held.retainUntil) > new Date())
+      throw new StoreError("AccessDenied", 403, "the object is locked");
     if (onlyNew) {
       await link(path, place).catch((fault) => {
         throw fault.code === "EEXIST" ? new StoreError("PreconditionFailed", 412) : fault;
@@ -77,7 +83,8 @@ export class Disk {
 
   async remove(bucket, key) {
     const meta = await this.head(bucket, key).catch(() => null);
-    if (meta?.retainUntil && new Date(meta.retainUntil) > new Date()) throw new StoreError("AccessDenied", 403, "the object is locked");
+    if (meta?.retainUntil && new Date(meta.retainUntil) > new Date())
+      throw new StoreError("AccessDenied", 403, "the object is locked");
     await rm(this.data(bucket, key), { force: true });
     await rm(this.meta(bucket, key), { force: true });
   }
@@ -85,7 +92,11 @@ export class Disk {
   /** Keys with a prefix, in order. */
   async list(bucket, prefix) {
     const files = await readdir(join(this.bucket(bucket), "meta"));
-    return files.filter((name) => name.endsWith(".json")).map((name) => keyOf(name.slice(0, -5))).filter((key) => key.startsWith(prefix)).sort();
+    return files
+      .filter((name) => name.endsWith(".json"))
+      .map((name) => keyOf(name.slice(0, -5)))
+      .filter((key) => key.startsWith(prefix))
+      .sort();
   }
 
   parts = (bucket, upload) => join(this.bucket(bucket), "parts", upload);
@@ -116,7 +127,11 @@ export class Disk {
   };
 
   partMeta = async (bucket, upload, number) =>
-    JSON.parse(await readFile(join(this.parts(bucket, upload), `${number}.json`), "utf8").catch(() => { throw new StoreError("InvalidPart", 400); }));
+    JSON.parse(
+      await readFile(join(this.parts(bucket, upload), `${number}.json`), "utf8").catch(() => {
+        throw new StoreError("InvalidPart", 400);
+      }),
+    );
 
   readPart = (bucket, upload, number) => createReadStream(join(this.parts(bucket, upload), `${number}.part`));
 

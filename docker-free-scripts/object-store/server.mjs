@@ -19,7 +19,11 @@ const textOf = async (request) => {
 };
 
 const send = (response, status, body = "", headers = {}) => {
-  response.writeHead(status, { "content-type": "application/xml", "content-length": Buffer.byteLength(body), ...headers });
+  response.writeHead(status, {
+    "content-type": "application/xml",
+    "content-length": Buffer.byteLength(body),
+    ...headers,
+  });
   response.end(body);
 };
 
@@ -63,7 +67,13 @@ async function copyObject(disk, { headers, bucket, key }, response) {
     await sink.drop();
     throw fault;
   }
-  send(response, 200, xml(`<CopyObjectResult><ETag>&quot;${meta.etag}&quot;</ETag><LastModified>${modifiedAt}</LastModified></CopyObjectResult>`));
+  send(
+    response,
+    200,
+    xml(
+      `<CopyObjectResult><ETag>&quot;${meta.etag}&quot;</ETag><LastModified>${modifiedAt}</LastModified></CopyObjectResult>`,
+    ),
+  );
 }
 
 function rangeOf(header, size) {
@@ -87,7 +97,9 @@ async function getObject(disk, { headers, params, bucket, key, method }, respons
     ...meta.user,
     ...(headers["x-amz-checksum-mode"] === "ENABLED" && !range ? meta.checksums : {}),
     ...(range ? { "content-range": `bytes ${range.start}-${range.end}/${meta.size}` } : {}),
-    ...(params.get("response-content-disposition") ? { "content-disposition": params.get("response-content-disposition") } : {}),
+    ...(params.get("response-content-disposition")
+      ? { "content-disposition": params.get("response-content-disposition") }
+      : {}),
   };
   response.writeHead(range ? 206 : 200, answer);
   if (method === "HEAD" || meta.size === 0) return response.end();
@@ -100,25 +112,44 @@ async function listObjects(disk, { params, bucket }, response) {
   const after = params.get("continuation-token") ?? params.get("start-after") ?? "";
   const keys = (await disk.list(bucket, prefix)).filter((key) => key > after);
   const page = keys.slice(0, most);
-  const rows = await Promise.all(page.map(async (key) => {
-    const meta = await disk.head(bucket, key);
-    return `<Contents><Key>${escape(key)}</Key><Size>${meta.size}</Size><ETag>&quot;${meta.etag}&quot;</ETag><LastModified>${meta.modifiedAt}</LastModified></Contents>`;
-  }));
+  const rows = await Promise.all(
+    page.map(async (key) => {
+      const meta = await disk.head(bucket, key);
+      return `<Contents><Key>${escape(key)}</Key><Size>${meta.size}</Size><ETag>&quot;${meta.etag}&quot;</ETag><LastModified>${meta.modifiedAt}</LastModified></Contents>`;
+    }),
+  );
   const more = keys.length > page.length;
-  send(response, 200, xml(`<ListBucketResult><Name>${escape(bucket)}</Name><Prefix>${escape(prefix)}</Prefix><KeyCount>${page.length}</KeyCount><MaxKeys>${most}</MaxKeys><IsTruncated>${more}</IsTruncated>${more ? `<NextContinuationToken>${escape(page.at(-1))}</NextContinuationToken>` : ""}${rows.join("")}</ListBucketResult>`));
+  send(
+    response,
+    200,
+    xml(
+      `<ListBucketResult><Name>${escape(bucket)}</Name><Prefix>${escape(prefix)}</Prefix><KeyCount>${page.length}</KeyCount><MaxKeys>${most}</MaxKeys><IsTruncated>${more}</IsTruncated>${more ? `<NextContinuationToken>${escape(page.at(-1))}</NextContinuationToken>` : ""}${rows.join("")}</ListBucketResult>`,
+    ),
+  );
 }
 
 async function deleteObjects(disk, { request, bucket }, response) {
-  const keys = [...(await textOf(request)).matchAll(/<Key>([^<]*)<\/Key>/g)].map((found) => found[1].replace(/&amp;/g, "&"));
+  const keys = [...(await textOf(request)).matchAll(/<Key>([^<]*)<\/Key>/g)].map((found) =>
+    found[1].replace(/&amp;/g, "&"),
+  );
   for (const key of keys) await disk.remove(bucket, key);
-  send(response, 200, xml(`<DeleteResult>${keys.map((key) => `<Deleted><Key>${escape(key)}</Key></Deleted>`).join("")}</DeleteResult>`));
+  send(
+    response,
+    200,
+    xml(
+      `<DeleteResult>${keys.map((key) => `<Deleted><Key>${escape(key)}</Key></Deleted>`).join("")}</DeleteResult>`,
+    ),
+  );
 }
 
 async function completeUpload(disk, { request, params, headers, bucket, key }, response) {
   const upload = params.get("uploadId");
   const { meta } = await disk.upload(bucket, upload);
-  const numbers = [...(await textOf(request)).matchAll(/<PartNumber>(\d+)<\/PartNumber>/g)].map((found) => Number(found[1]));
-  if (numbers.length === 0 || numbers.some((number, place) => place > 0 && number <= numbers[place - 1])) throw new StoreError("InvalidPartOrder", 400);
+  const numbers = [...(await textOf(request)).matchAll(/<PartNumber>(\d+)<\/PartNumber>/g)].map((found) =>
+    Number(found[1]),
+  );
+  if (numbers.length === 0 || numbers.some((number, place) => place > 0 && number <= numbers[place - 1]))
+    throw new StoreError("InvalidPartOrder", 400);
   const sink = await disk.sink(bucket);
   const tags = createHash("md5");
   let size = 0;
@@ -130,14 +161,32 @@ async function completeUpload(disk, { request, params, headers, bucket, key }, r
   }
   await sink.flush();
   const etag = `${tags.digest("hex")}-${numbers.length}`;
-  await disk.keep(bucket, key, sink.path, { ...meta, size, etag, checksums: {}, modifiedAt: new Date().toISOString() }, headers["if-none-match"] === "*");
+  await disk.keep(
+    bucket,
+    key,
+    sink.path,
+    { ...meta, size, etag, checksums: {}, modifiedAt: new Date().toISOString() },
+    headers["if-none-match"] === "*",
+  );
   await disk.dropUpload(bucket, upload);
-  send(response, 200, xml(`<CompleteMultipartUploadResult><Bucket>${escape(bucket)}</Bucket><Key>${escape(key)}</Key><ETag>&quot;${etag}&quot;</ETag></CompleteMultipartUploadResult>`));
+  send(
+    response,
+    200,
+    xml(
+      `<CompleteMultipartUploadResult><Bucket>${escape(bucket)}</Bucket><Key>${escape(key)}</Key><ETag>&quot;${etag}&quot;</ETag></CompleteMultipartUploadResult>`,
+    ),
+  );
 }
 
 async function startUpload(disk, { headers, bucket, key }, response) {
   const upload = await disk.startUpload(bucket, key, metaOf(headers));
-  send(response, 200, xml(`<InitiateMultipartUploadResult><Bucket>${escape(bucket)}</Bucket><Key>${escape(key)}</Key><UploadId>${upload}</UploadId></InitiateMultipartUploadResult>`));
+  send(
+    response,
+    200,
+    xml(
+      `<InitiateMultipartUploadResult><Bucket>${escape(bucket)}</Bucket><Key>${escape(key)}</Key><UploadId>${upload}</UploadId></InitiateMultipartUploadResult>`,
+    ),
+  );
 }
 
 async function uploadPart(disk, asked, response) {
@@ -161,7 +210,13 @@ async function bucketRequest(disk, asked, response) {
   if (method === "HEAD") return send(response, 200);
   if (method === "GET" && params.has("uploads")) {
     const uploads = await disk.listUploads(bucket);
-    return send(response, 200, xml(`<ListMultipartUploadsResult>${uploads.map((id) => `<Upload><UploadId>${id}</UploadId></Upload>`).join("")}</ListMultipartUploadsResult>`));
+    return send(
+      response,
+      200,
+      xml(
+        `<ListMultipartUploadsResult>${uploads.map((id) => `<Upload><UploadId>${id}</UploadId></Upload>`).join("")}</ListMultipartUploadsResult>`,
+      ),
+    );
   }
   if (method === "GET") return listObjects(disk, asked, response);
   if (method === "POST" && params.has("delete")) return deleteObjects(disk, asked, response);
@@ -210,10 +265,18 @@ export function makeStore({ root, credentials }) {
   return createServer({ requestTimeout: 0 }, (request, response) => {
     handle(disk, credentials, request, response).catch((fault) => {
       const { code, status } = fault instanceof StoreError ? fault : { code: "InternalError", status: 500 };
-      if (!(fault instanceof StoreError) && fault.code !== "ERR_STREAM_PREMATURE_CLOSE" && fault.code !== "ECONNRESET") process.stderr.write(`object store: ${fault.stack}\n`);
+      if (
+        !(fault instanceof StoreError) &&
+        fault.code !== "ERR_STREAM_PREMATURE_CLOSE" &&
+        fault.code !== "ECONNRESET"
+      )
+        process.stderr.write(`object store: ${fault.stack}\n`);
       if (response.headersSent) return response.destroy();
       // What is left of a refused body is not read: the connection ends instead.
-      const body = request.method === "HEAD" ? "" : xml(`<Error><Code>${code}</Code><Message>${escape(fault.message)}</Message></Error>`);
+      const body =
+        request.method === "HEAD"
+          ? ""
+          : xml(`<Error><Code>${code}</Code><Message>${escape(fault.message)}</Message></Error>`);
       return send(response, status, body, request.complete ? {} : { connection: "close" });
     });
   });

@@ -9,7 +9,15 @@ export const RIGHTS = {
   importInvoiceLines: ["administrator"],
   keepCatalogue: ["administrator"],
   keepPeople: ["administrator"],
-  seeRuleBook: ["assessor", "administrator", "workshopManager", "technician", "analyst", "accounts", "goodsIn"],
+  seeRuleBook: [
+    "assessor",
+    "administrator",
+    "workshopManager",
+    "technician",
+    "analyst",
+    "accounts",
+    "goodsIn",
+  ],
 } as const satisfies Record<string, readonly Role[]>;
 
 export type Right = keyof typeof RIGHTS;

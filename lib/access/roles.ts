@@ -1,4 +1,12 @@
-export const ROLES = ["technician", "workshopManager", "assessor", "goodsIn", "accounts", "analyst", "administrator"] as const;
+export const ROLES = [
+  "technician",
+  "workshopManager",
+  "assessor",
+  "goodsIn",
+  "accounts",
+  "analyst",
+  "administrator",
+] as const;
 
 export type Role = (typeof ROLES)[number];
 

@@ -1,53 +1,14 @@
-import { z } from "zod";
 import { nestedFields } from "@/lib/kernel/nested-fields";
-
-const typed = (max: number) => z.string().max(max);
-const notesById = z.record(z.string().max(60), z.string().max(1000));
-const yesNo = z.enum(["", "yes", "no"]);
-
-const lineShape = {
-  serial: typed(80),
-  unitId: z.uuid().nullable(),
-  partId: z.uuid().nullable(),
-  invoiceLineId: z.uuid().nullable(),
-  quantity: typed(6),
-  position: z.enum(["", "left", "right", "single"]),
-  fittedOn: typed(40),
-  installer: typed(120),
-  replacementSerial: typed(80),
-  replacementFittedOn: typed(40),
-};
-
-const shape = {
-  frameSerial: typed(80),
-  vehicleModel: typed(120),
-  symptom: typed(40),
-  note: typed(4000),
-  failedOn: typed(40),
-  repairedOn: typed(40),
-  readings: z.record(z.string().max(60), z.strictObject({ raw: typed(60), temperature: typed(20), instrument: typed(120) })),
-  answers: notesById,
-  cannotGet: notesById,
-  ruledOut: notesById,
-  condition: z.record(z.string().max(60), yesNo),
-  conditionNote: typed(1000),
-  earlierWork: typed(1000),
-  swapMinutes: typed(20),
-  swapHeat: yesNo,
-  testDrive: yesNo,
-  incident: yesNo,
-  incidentNote: typed(1000),
-};
-
-const draftShape = z.strictObject({ ...shape, lines: z.array(z.strictObject(lineShape)).max(8) });
+import type { DraftBody, DraftChange } from "./draft-shape";
 
 /**
  * What the workshop has typed so far, kept exactly as typed: a draft is never refused, so nothing can be lost. The
  * day, number and reading it means is read when the claim is checked and sent (`filing/read-draft.ts`).
  */
-export type ClaimDraft = z.infer<typeof draftShape>;
+export type ClaimDraft = DraftBody;
 export type DraftLine = ClaimDraft["lines"][number];
 
+/** A line before anything is typed. */
 export const emptyLine = (): DraftLine => ({
   serial: "",
   unitId: null,
@@ -61,6 +22,7 @@ export const emptyLine = (): DraftLine => ({
   replacementFittedOn: "",
 });
 
+/** A draft before anything is typed. */
 export const emptyDraft = (): ClaimDraft => ({
   lines: [],
   frameSerial: "",
@@ -83,28 +45,11 @@ export const emptyDraft = (): ClaimDraft => ({
   incidentNote: "",
 });
 
-/** A stored draft; a field that did not exist when it was saved is empty. Throws where it does not fit. */
-export const storedDraft = (body: unknown): ClaimDraft =>
-  draftShape.parse({ ...emptyDraft(), ...(typeof body === "object" ? body : {}) });
-
-/**
- * A change to a draft: only what was on the page that sent it. Lines are addressed by place and never re-pointed at
- * another unit; a map named in `replaces` is taken whole (unticked boxes send nothing), the others key by key.
- */
-export const draftChange = z
-  .strictObject({
-    ...shape,
-    lines: z.record(z.string().regex(/^[0-7]$/u), z.strictObject(lineShape).omit({ unitId: true, partId: true, invoiceLineId: true }).partial()),
-    replaces: z.array(z.enum(["ruledOut", "condition"])),
-  })
-  .partial();
-
-export type DraftChange = z.infer<typeof draftChange>;
-
 /** The draft with a change applied. Pure: the same change twice is the same draft. */
 export function changedDraft(draft: ClaimDraft, change: DraftChange): ClaimDraft {
   const { lines, replaces = [], readings, answers, cannotGet, ruledOut, condition, ...texts } = change;
-  const base = <Map extends object>(name: "ruledOut" | "condition", map: Map) => (replaces.includes(name) ? {} : map);
+  const base = <Map extends object>(name: "ruledOut" | "condition", map: Map) =>
+    replaces.includes(name) ? {} : map;
   return {
     ...draft,
     ...texts,

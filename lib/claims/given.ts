@@ -1,5 +1,5 @@
 import type { EvidenceGiven } from "@/lib/evidence/completeness";
-import type { ClaimFacts } from "./facts";
+import type { ClaimFacts } from "./facts-shape";
 
 /** The parts of a claim that answer rows of its Evidence list. */
 export type Given = Pick<ClaimFacts, "readings" | "answers" | "cannotGet" | "evidence" | "ruledOut" | "swap">;

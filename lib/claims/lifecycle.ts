@@ -37,7 +37,15 @@ export const RETURN_STATES = [
 ] as const;
 export type ReturnState = (typeof RETURN_STATES)[number];
 
-export const CREDIT_STATES = ["none", "due", "noteIssued", "allocated", "paidOut", "replaced", "countered"] as const;
+export const CREDIT_STATES = [
+  "none",
+  "due",
+  "noteIssued",
+  "allocated",
+  "paidOut",
+  "replaced",
+  "countered",
+] as const;
 export type CreditState = (typeof CREDIT_STATES)[number];
 
 /** `system` is the clock: a lapse or a settlement that no person presses. */
@@ -55,7 +63,12 @@ export const MOVES = {
   ask: { from: ["beingJudged"], to: "answerNeeded", side: "distributor", by: ["assessor"] },
   answer: { from: ["answerNeeded"], to: "filed", side: "workshop", by: WORKSHOP_PEOPLE },
   decide: { from: ["beingJudged"], to: "decided", side: "distributor", by: ["assessor"] },
-  withdraw: { from: ["filed", "beingJudged", "answerNeeded"], to: "withdrawn", side: "workshop", by: WORKSHOP_PEOPLE },
+  withdraw: {
+    from: ["filed", "beingJudged", "answerNeeded"],
+    to: "withdrawn",
+    side: "workshop",
+    by: WORKSHOP_PEOPLE,
+  },
   lapse: { from: ["answerNeeded"], to: "lapsed", side: "system", by: [] },
   contest: { from: ["decided"], to: "contested", side: "workshop", by: ["workshopManager"] },
   settle: { from: ["decided"], to: "settled", side: "system", by: [] },

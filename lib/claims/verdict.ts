@@ -1,4 +1,13 @@
-import { addFractions, compareFractions, equalFractions, ONE, parseFraction, sumsToOne, ZERO, type Fraction } from "@/lib/kernel/fraction";
+import {
+  addFractions,
+  compareFractions,
+  equalFractions,
+  ONE,
+  parseFraction,
+  sumsToOne,
+  ZERO,
+  type Fraction,
+} from "@/lib/kernel/fraction";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import type { VerdictOutcome } from "./lifecycle";
 
@@ -51,7 +60,8 @@ export function creditedShare(
 ): Outcome<Fraction, "sharesUnread" | "sharesNotOne" | "upheldNotWhole" | "partNotShared"> {
   const shares = CAUSES.map((cause) => parseFraction(attribution[cause] ?? "0"));
   const credited = shareOf(attribution, CREDITED_CAUSES);
-  if (!credited || shares.some((share) => share === null || compareFractions(share, ZERO) < 0)) return refuse("sharesUnread");
+  if (!credited || shares.some((share) => share === null || compareFractions(share, ZERO) < 0))
+    return refuse("sharesUnread");
   if (!sumsToOne(shares.filter((share) => share !== null))) return refuse("sharesNotOne");
   if (outcome === "declined") return ok(ZERO);
   const whole = equalFractions(credited, ONE);

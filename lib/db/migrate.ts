@@ -29,7 +29,11 @@ function migrator(database: Sequelize) {
         };
       },
     },
-    storage: new SequelizeStorage({ sequelize: database, tableName: "schema_migrations", schema: "bookkeeping" }),
+    storage: new SequelizeStorage({
+      sequelize: database,
+      tableName: "schema_migrations",
+      schema: "bookkeeping",
+    }),
     logger: undefined,
   });
 }
@@ -41,7 +45,9 @@ async function prepare(database: Sequelize, workerUrl: string) {
     grant create on database ${name} to worker; reset role;`);
   // The queue's own first step asks for the right to make its schema even where it exists; it keeps it no longer than that.
   await runMigrations({ connectionString: workerUrl, logger: new Logger(() => () => undefined) });
-  await database.query(`set role partproof_owner; revoke create on database ${name} from worker; reset role;`);
+  await database.query(
+    `set role partproof_owner; revoke create on database ${name} from worker; reset role;`,
+  );
 }
 
 /** Brings the schema up to date. Returns the names of the migrations that ran. */

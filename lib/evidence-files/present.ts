@@ -25,7 +25,16 @@ export type EvidenceView = {
   readonly receivedAt: string;
 };
 
-export const presentEvidence = ({ id, rowId, kind, originalName, sizeBytes, sha256, viewState, receivedAt }: EvidenceRow): EvidenceView => ({
+export const presentEvidence = ({
+  id,
+  rowId,
+  kind,
+  originalName,
+  sizeBytes,
+  sha256,
+  viewState,
+  receivedAt,
+}: EvidenceRow): EvidenceView => ({
   id,
   rowId,
   kind,

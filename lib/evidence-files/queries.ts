@@ -1,6 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
+import { serve } from "@/lib/storage/serve";
 import { presentEvidence, type EvidenceRow, type EvidenceView } from "./present";
 
 export const EVIDENCE = `select id, claim_id as "claimId", row_id as "rowId", kind, media_type as "mediaType",
@@ -10,7 +11,9 @@ export const EVIDENCE = `select id, claim_id as "claimId", row_id as "rowId", ki
 /** The files of a claim, oldest first, as far as the asking organisation may see them. */
 export const listEvidence = (actor: Actor, claimId: string): Promise<EvidenceView[]> =>
   unitOfWork(actor, async (work) => {
-    const files = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 order by received_at, id`, [claimId]);
+    const files = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 order by received_at, id`, [
+      claimId,
+    ]);
     return files.map(presentEvidence);
   });
 
@@ -19,14 +22,41 @@ export const listEvidenceOfClaim = (actor: Actor, number: string): Promise<Evide
   unitOfWork(actor, async (work) => {
     const [claim] = await rows<{ id: string }>(work, "select id from claims where number = $1", [number]);
     if (!claim) return null;
-    const files = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 order by received_at, id`, [claim.id]);
+    const files = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 order by received_at, id`, [
+      claim.id,
+    ]);
     return files.map(presentEvidence);
   });
 
 /** A file to be sent out; null for one that is not this organisation's, like one that does not exist. */
-export const findEvidence = (actor: Actor, id: string): Promise<EvidenceRow | null> =>
+const findEvidence = (actor: Actor, id: string): Promise<EvidenceRow | null> =>
   unitOfWork(actor, async (work) => {
     if (!/^[0-9a-f-]{36}$/iu.test(id)) return null;
     const [file] = await rows<EvidenceRow>(work, `${EVIDENCE} and id = $1`, [id]);
     return file ?? null;
   });
+
+/** The original, byte for byte, to be kept and never shown by a browser; null where there is none for this reader. */
+export async function openOriginal(
+  actor: Actor,
+  id: string,
+  range: string | null,
+): Promise<Response | null> {
+  const file = await findEvidence(actor, id);
+  if (!file) return null;
+  const { objectKey: key, mediaType: contentType, originalName: name } = file;
+  return serve({ key, contentType, name, kind: "attachment", range });
+}
+
+/** The copy people look at: made by us from the picture, without anything else the file held. Null until it is ready. */
+export async function openViewCopy(actor: Actor, id: string): Promise<Response | null> {
+  const file = await findEvidence(actor, id);
+  if (!file?.viewKey || file.viewState !== "ready") return null;
+  return serve({
+    key: file.viewKey,
+    contentType: "image/jpeg",
+    name: `${file.id}.jpg`,
+    kind: "inline",
+    range: null,
+  });
+}

@@ -11,15 +11,29 @@ import { undoing } from "@/lib/claims/moves/service";
 import { presentEvidence, type EvidenceRow } from "./present";
 import { EVIDENCE } from "./queries";
 
-const target = z.object({ claimId: z.uuid(), rowId: z.string().regex(/^[a-z][A-Za-z0-9]{0,59}$/u), kind: z.enum(FILE_KINDS) });
+const target = z.object({
+  claimId: z.uuid(),
+  rowId: z.string().regex(/^[a-z][A-Za-z0-9]{0,59}$/u),
+  kind: z.enum(FILE_KINDS),
+});
 const captured = z.object({ takenAt: z.iso.datetime().optional(), by: z.literal("phone").optional() });
 
 type Target = z.infer<typeof target>;
-type ClaimRow = { id: string; sellerId: string; workshopId: string; state: string; files: number; bytes: string };
+type ClaimRow = {
+  id: string;
+  sellerId: string;
+  workshopId: string;
+  state: string;
+  files: number;
+  bytes: string;
+};
 export type EvidenceRefusal = ReceiveRefusal | "notFound" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
 
 /** The claim an upload is for, if it is this workshop's and still takes files, with how much it holds already. */
-async function openClaim(work: Work, claimId: string): Promise<Outcome<ClaimRow, "notFound" | "moveNotOpen">> {
+async function openClaim(
+  work: Work,
+  claimId: string,
+): Promise<Outcome<ClaimRow, "notFound" | "moveNotOpen">> {
   const [claim] = await rows<ClaimRow>(
     work,
     `select c.id, c.seller_id as "sellerId", c.workshop_id as "workshopId", c.state,
@@ -61,7 +75,13 @@ const readCaptured = (text: string | undefined): unknown => {
   }
 };
 
-async function insertRow(work: Work, claim: ClaimRow, to: Target, file: Received, capturedText: string | undefined) {
+async function insertRow(
+  work: Work,
+  claim: ClaimRow,
+  to: Target,
+  file: Received,
+  capturedText: string | undefined,
+) {
   const isPhoto = to.kind === "photo";
   const [made] = await rows<{ id: string }>(
     work,
@@ -88,10 +108,18 @@ async function insertRow(work: Work, claim: ClaimRow, to: Target, file: Received
   if (made) {
     const task = isPhoto ? "viewCopy" : to.kind === "runLog" ? "readRunLog" : null;
     if (task)
-      await rows(work, "select graphile_worker.enqueue($1, $2, $3)", [task, JSON.stringify({ evidenceId: made.id }), `${task}:${made.id}`]);
+      await rows(work, "select graphile_worker.enqueue($1, $2, $3)", [
+        task,
+        JSON.stringify({ evidenceId: made.id }),
+        `${task}:${made.id}`,
+      ]);
     await rows(work, "select guarded.flag_seen_before($1)", [made.id]);
   }
-  const [row] = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 and row_id = $2 and sha256 = $3`, [claim.id, to.rowId, file.sha256]);
+  const [row] = await rows<EvidenceRow>(
+    work,
+    `${EVIDENCE} and claim_id = $1 and row_id = $2 and sha256 = $3`,
+    [claim.id, to.rowId, file.sha256],
+  );
   return row;
 }
 

@@ -6,8 +6,19 @@ import type { RunLog, RunLogRefusal } from "./run-log";
  * the analysis of the whole of it; or why it could not be read.
  */
 export type RunLogSummary =
-  | { readonly shape: 1; readonly isRead: true; readonly log: RunLog; readonly analysis: RunAnalysis; readonly rowCount: number }
-  | { readonly shape: 1; readonly isRead: false; readonly code: RunLogRefusal; readonly detail: Readonly<Record<string, string | number>> };
+  | {
+      readonly shape: 1;
+      readonly isRead: true;
+      readonly log: RunLog;
+      readonly analysis: RunAnalysis;
+      readonly rowCount: number;
+    }
+  | {
+      readonly shape: 1;
+      readonly isRead: false;
+      readonly code: RunLogRefusal;
+      readonly detail: Readonly<Record<string, string | number>>;
+    };
 
 /** Whether a stored value is a summary of the shape this build writes; an older one is read anew. */
 export const isRunLogSummary = (value: unknown): value is RunLogSummary =>
@@ -24,7 +35,8 @@ export function thinnedLog(log: RunLog): RunLog {
     index % every === 0 || index === log.timeS.length - 1 || marked.has(index) ? [index] : [],
   );
   const place = new Map(kept.map((index, position) => [index, position]));
-  const pick = <Value>(values: readonly Value[]): Value[] => kept.flatMap((index) => values.slice(index, index + 1));
+  const pick = <Value>(values: readonly Value[]): Value[] =>
+    kept.flatMap((index) => values.slice(index, index + 1));
   return {
     ...log,
     timeS: pick(log.timeS),

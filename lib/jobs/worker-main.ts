@@ -21,13 +21,17 @@ const runner = await run({
   noHandleSignals: false,
   pollInterval: 1000,
   taskList: { beat, sendMails, viewCopy, readRunLog, sweepUploads },
-  parsedCronItems: parseCronItems([{ task: "sweepUploads", match: "17 * * * *", identifier: "sweepUploads" }]),
+  parsedCronItems: parseCronItems([
+    { task: "sweepUploads", match: "17 * * * *", identifier: "sweepUploads" },
+  ]),
 });
 
 // The first beat makes the product ready; the mail round is asked for often enough that nobody waits for it.
 const every = (milliseconds: number, task: string) => {
   const ask = () =>
-    runner.addJob(task, {}, { jobKey: task, maxAttempts: 1 }).catch((fault: unknown) => log.warn({ event: "worker", task, fault: String(fault) }));
+    runner
+      .addJob(task, {}, { jobKey: task, maxAttempts: 1 })
+      .catch((fault: unknown) => log.warn({ event: "worker", task, fault: String(fault) }));
   void ask();
   return setInterval(() => void ask(), milliseconds);
 };

@@ -1,6 +1,7 @@
 type Tree = { [key: string]: string | readonly string[] | Tree };
 
-const isBranch = (value: Tree[string] | undefined): value is Tree => typeof value === "object" && !Array.isArray(value);
+const isBranch = (value: Tree[string] | undefined): value is Tree =>
+  typeof value === "object" && !Array.isArray(value);
 
 // Names come from a form and so from anybody: these would reach into every object there is.
 const FORBIDDEN = new Set(["__proto__", "constructor", "prototype"]);

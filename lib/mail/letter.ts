@@ -23,7 +23,12 @@ function valuesOf(params: Readonly<Record<string, unknown>>, locale: Locale): Va
   return values;
 }
 
-const htmlPage = (locale: Locale, subject: string, paragraphs: readonly string[], link: { href: string; label: string } | null) => `<!doctype html>
+const htmlPage = (
+  locale: Locale,
+  subject: string,
+  paragraphs: readonly string[],
+  link: { href: string; label: string } | null,
+) => `<!doctype html>
 <html lang="${formatTag(locale)}"><head><meta charset="utf-8"><meta name="color-scheme" content="light dark"><title>${escapeHtml(subject)}</title></head>
 <body style="margin:0;padding:24px;font:16px/1.5 Georgia,serif">
 <div style="max-width:36em;border-top:4px solid #0B5563;padding-top:16px">
@@ -35,7 +40,11 @@ ${link ? `<p><a href="${escapeHtml(link.href)}" style="color:#0B5563">${escapeHt
  * The mail of a kind in the reader's language, as text and as HTML with the same words. Throws for a kind without
  * sentences: it then stays in the outbox and somebody looks.
  */
-export function letterFor(kind: string, params: Readonly<Record<string, unknown>>, locale: Locale): Promise<Letter> {
+export function letterFor(
+  kind: string,
+  params: Readonly<Record<string, unknown>>,
+  locale: Locale,
+): Promise<Letter> {
   const messages = loadMessages(locale);
   const t = createTranslator({
     locale: formatTag(locale),
@@ -53,9 +62,17 @@ export function letterFor(kind: string, params: Readonly<Record<string, unknown>
     outcomeWords: typeof params.outcome === "string" ? t(`ui.mark.claim.${params.outcome}`) : "",
   };
   const subject = t(`mails.${kind}.subject`, withWords);
-  const paragraphs = [t("mails.greeting", withWords), t(`mails.${kind}.body`, withWords), wanted].filter((text) => text !== "");
+  const paragraphs = [t("mails.greeting", withWords), t(`mails.${kind}.body`, withWords), wanted].filter(
+    (text) => text !== "",
+  );
   const href = typeof params.link === "string" ? params.link : null;
   const link = href ? { href, label: t(`mails.${kind}.link`) } : null;
-  const text = [...paragraphs, ...(link ? [`${link.label}: ${link.href}`] : []), t("mails.footer")].join("\n\n");
-  return Promise.resolve({ subject, text, html: htmlPage(locale, subject, [...paragraphs, t("mails.footer")], link) });
+  const text = [...paragraphs, ...(link ? [`${link.label}: ${link.href}`] : []), t("mails.footer")].join(
+    "\n\n",
+  );
+  return Promise.resolve({
+    subject,
+    text,
+    html: htmlPage(locale, subject, [...paragraphs, t("mails.footer")], link),
+  });
 }

@@ -20,7 +20,14 @@ export type MailParams = {
     answerBy: string;
   };
   queryAnswered: { link: string; number: string; workshop: string; revision: number };
-  claimDecided: { link: string; number: string; distributor: string; outcome: string; letter: string; contestUntil: string };
+  claimDecided: {
+    link: string;
+    number: string;
+    distributor: string;
+    outcome: string;
+    letter: string;
+    contestUntil: string;
+  };
 };
 
 export type MailKind = keyof MailParams;

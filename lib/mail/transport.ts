@@ -26,7 +26,11 @@ const open = () =>
     socketTimeout: 20_000,
   });
 
-const oneLine = (text: string) => text.replace(/[\p{Cc}\u2028\u2029]+/gu, " ").trim().slice(0, 200);
+const oneLine = (text: string) =>
+  text
+    .replace(/[\p{Cc}\u2028\u2029]+/gu, " ")
+    .trim()
+    .slice(0, 200);
 
 /** Hands one mail to the mail server. Throws where it is not taken. */
 export async function sendLetter({ id, to, subject, text, html, requestId }: Outgoing): Promise<void> {

@@ -66,7 +66,10 @@ const bySerial = (work: Work, serialNormal: string) =>
 
 /** The unit of that id, if this organisation bought it. */
 export async function findSoldUnit(work: Work, unitId: string): Promise<SoldUnit | null> {
-  const [found] = await rows<SoldUnit>(work, `${SOLD_UNIT} and u.id = $2`, [work.actor.organisationId, unitId]);
+  const [found] = await rows<SoldUnit>(work, `${SOLD_UNIT} and u.id = $2`, [
+    work.actor.organisationId,
+    unitId,
+  ]);
   return found ?? null;
 }
 
@@ -129,17 +132,28 @@ const SOLD_LINE = `
 /** The newest purchases of parts that carry no serial, for a claim on a quantity. */
 export const listLinesWithoutSerial = (actor: Actor): Promise<SoldLine[]> =>
   unitOfWork(actor, (work) =>
-    rows<SoldLine>(work, `${SOLD_LINE} and not p.serial_tracked order by l.invoiced_on desc limit 50`, [actor.organisationId]),
+    rows<SoldLine>(work, `${SOLD_LINE} and not p.serial_tracked order by l.invoiced_on desc limit 50`, [
+      actor.organisationId,
+    ]),
   );
 
 /** A purchase by its line, if it is this organisation's. */
 export async function findSoldLine(work: Work, invoiceLineId: string): Promise<SoldLine | null> {
-  const [found] = await rows<SoldLine>(work, `${SOLD_LINE} and l.id = $2`, [work.actor.organisationId, invoiceLineId]);
+  const [found] = await rows<SoldLine>(work, `${SOLD_LINE} and l.id = $2`, [
+    work.actor.organisationId,
+    invoiceLineId,
+  ]);
   return found ?? null;
 }
 
 export type OfferedPart = { partId: string; partNumber: string; partName: string; family: string };
-export type OfferedAccount = { accountId: string; sellerId: string; sellerName: string; currency: string; parts: OfferedPart[] };
+export type OfferedAccount = {
+  accountId: string;
+  sellerId: string;
+  sellerName: string;
+  currency: string;
+  parts: OfferedPart[];
+};
 
 /** The distributors this workshop buys from, with their parts: for a part whose serial nobody can read any more. */
 export const listAccountsWithParts = (actor: Actor): Promise<OfferedAccount[]> =>

@@ -14,19 +14,26 @@ type Candidate = { user_id: string; password_hash: string | null; organisation_i
 
 /** How long a session lasts at most, and unused: a week at the bench, a working day where money is decided. */
 const lifeOf = (roles: readonly string[]) =>
-  roles.length > 0 && roles.every((role) => role === "technician") ? { hours: 168, idleHours: 168 } : { hours: 12, idleHours: 8 };
+  roles.length > 0 && roles.every((role) => role === "technician")
+    ? { hours: 168, idleHours: 168 }
+    : { hours: 12, idleHours: 8 };
 
 /**
  * Checks a password and starts a session. Returns its id, or null for every reason alike: unknown, wrong, disabled or
  * too many tries (10 an account and 50 an address in 15 minutes, counted in the database).
  */
-export async function signIn(given: { email: string; password: string; address: string; device: string }): Promise<string | null> {
+export async function signIn(given: {
+  email: string;
+  password: string;
+  address: string;
+  device: string;
+}): Promise<string | null> {
   const email = readAddress(given.email);
   const account = sha256(`account:${email ?? given.email.slice(0, 300)}`);
-  const [attempt] = await beforeSignIn<{ allowed: boolean }>("select guarded.begin_attempt($1, $2) as allowed", [
-    account,
-    sha256(`address:${given.address}`),
-  ]);
+  const [attempt] = await beforeSignIn<{ allowed: boolean }>(
+    "select guarded.begin_attempt($1, $2) as allowed",
+    [account, sha256(`address:${given.address}`)],
+  );
   const [candidate] = email
     ? await beforeSignIn<Candidate>("select * from guarded.sign_in_candidate($1)", [email])
     : [];
@@ -37,13 +44,10 @@ export async function signIn(given: { email: string; password: string; address: 
   }
   const { hours, idleHours } = lifeOf(candidate.roles);
   await beforeSignIn("select guarded.clear_attempts($1)", [account]);
-  const [session] = await beforeSignIn<{ id: string | null }>("select guarded.start_session($1, $2, $3, $4, $5) as id", [
-    candidate.user_id,
-    candidate.organisation_id,
-    hours,
-    idleHours,
-    given.device.slice(0, 200),
-  ]);
+  const [session] = await beforeSignIn<{ id: string | null }>(
+    "select guarded.start_session($1, $2, $3, $4, $5) as id",
+    [candidate.user_id, candidate.organisation_id, hours, idleHours, given.device.slice(0, 200)],
+  );
   return session?.id ?? null;
 }
 
@@ -57,8 +61,13 @@ export async function requestReset(typedAddress: string, requestId: string): Pro
   const email = readAddress(typedAddress);
   const token = randomBytes(32).toString("base64url");
   await sequelize.transaction(async (transaction) => {
-    const run = (sql: string, bind: unknown[]) => sequelize.query(sql, { bind, transaction, type: QueryTypes.SELECT });
-    await run("select * from guarded.make_link($1, 'reset', $2, $3)", [email ?? "", sha256(token), RESET_MINUTES]);
+    const run = (sql: string, bind: unknown[]) =>
+      sequelize.query(sql, { bind, transaction, type: QueryTypes.SELECT });
+    await run("select * from guarded.make_link($1, 'reset', $2, $3)", [
+      email ?? "",
+      sha256(token),
+      RESET_MINUTES,
+    ]);
     await run("select guarded.mail_link_owner($1, 'passwordReset', $2, $3)", [
       sha256(token),
       JSON.stringify({ link: publicUrl(`/reset/${token}`), minutes: RESET_MINUTES }),
@@ -78,6 +87,9 @@ export async function findLinkOwner(token: string): Promise<LinkOwner | null> {
 /** Sets the password once; every session of the account ends. Returns the address, or null for a spent link. */
 export async function setPasswordByLink(token: string, password: string): Promise<string | null> {
   const hashed = await hashPassword(password);
-  const [used] = await beforeSignIn<{ email: string | null }>("select guarded.use_link($1, $2) as email", [sha256(token), hashed]);
+  const [used] = await beforeSignIn<{ email: string | null }>("select guarded.use_link($1, $2) as email", [
+    sha256(token),
+    hashed,
+  ]);
   return used?.email ?? null;
 }

@@ -12,7 +12,10 @@ export const store = (): S3Client =>
     forcePathStyle: true,
     requestChecksumCalculation: "WHEN_REQUIRED",
     responseChecksumValidation: "WHEN_REQUIRED",
-    credentials: { accessKeyId: setting("STORE_ACCESS_KEY_ID"), secretAccessKey: setting("STORE_SECRET_ACCESS_KEY") },
+    credentials: {
+      accessKeyId: setting("STORE_ACCESS_KEY_ID"),
+      secretAccessKey: setting("STORE_SECRET_ACCESS_KEY"),
+    },
   }));
 
 export const bucket = (): string => setting("STORE_BUCKET");

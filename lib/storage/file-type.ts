@@ -3,7 +3,8 @@ import { fileTypeFromBuffer } from "file-type";
 import type { FileKind } from "@/lib/kernel/limits";
 import { refuse, ok, type Outcome } from "@/lib/kernel/outcome";
 
-export type MediaType = "image/jpeg" | "image/png" | "image/webp" | "application/pdf" | "text/csv" | "text/plain";
+export type MediaType =
+  "image/jpeg" | "image/png" | "image/webp" | "application/pdf" | "text/csv" | "text/plain";
 
 /** Extensions a media type may come with: the name and the content must say the same. */
 const EXTENSIONS: Readonly<Record<MediaType, readonly string[]>> = {
@@ -23,7 +24,8 @@ const OF_KIND: Readonly<Record<FileKind, readonly MediaType[]>> = {
 
 export type TypeRefusal = "fileTypeNotAllowed" | "fileTypeHeic" | "fileNameDisagrees" | "fileNotText";
 
-export const extensionOf = (name: string): string => /\.([a-z0-9]{1,8})$/iu.exec(name)?.[1]?.toLowerCase() ?? "";
+export const extensionOf = (name: string): string =>
+  /\.([a-z0-9]{1,8})$/iu.exec(name)?.[1]?.toLowerCase() ?? "";
 
 const isMediaType = (text: string): text is MediaType => Object.hasOwn(EXTENSIONS, text);
 
@@ -34,18 +36,27 @@ function textType(head: Buffer, name: string): Outcome<MediaType, TypeRefusal> {
   if ((!isWide && head.includes(0)) || /^(<|%!|#!|MZ|PK)/u.test(text)) return refuse("fileNotText", { name });
   const extension = extensionOf(name);
   if (EXTENSIONS["text/csv"].includes(extension)) return ok("text/csv");
-  return EXTENSIONS["text/plain"].includes(extension) ? ok("text/plain") : refuse("fileNameDisagrees", { name, found: "text" });
+  return EXTENSIONS["text/plain"].includes(extension)
+    ? ok("text/plain")
+    : refuse("fileNameDisagrees", { name, found: "text" });
 }
 
 /**
  * The type of a file by its first bytes, never by what the sender calls it. The name's ending must agree. Refuses types
  * the kind does not take, and photos in HEIC by name, since a phone can send JPEG instead.
  */
-export async function typeOf(head: Buffer, name: string, kind: FileKind): Promise<Outcome<MediaType, TypeRefusal>> {
+export async function typeOf(
+  head: Buffer,
+  name: string,
+  kind: FileKind,
+): Promise<Outcome<MediaType, TypeRefusal>> {
   const found = await fileTypeFromBuffer(head).catch(() => undefined);
-  if (found && ["image/heic", "image/heif", "image/avif"].includes(found.mime)) return refuse("fileTypeHeic", { name });
+  if (found && ["image/heic", "image/heif", "image/avif"].includes(found.mime))
+    return refuse("fileTypeHeic", { name });
   if (!found) return kind === "runLog" ? textType(head, name) : refuse("fileTypeNotAllowed", { name });
-  if (!isMediaType(found.mime) || !OF_KIND[kind].includes(found.mime)) return refuse("fileTypeNotAllowed", { name });
-  if (!EXTENSIONS[found.mime].includes(extensionOf(name))) return refuse("fileNameDisagrees", { name, found: found.ext });
+  if (!isMediaType(found.mime) || !OF_KIND[kind].includes(found.mime))
+    return refuse("fileTypeNotAllowed", { name });
+  if (!EXTENSIONS[found.mime].includes(extensionOf(name)))
+    return refuse("fileNameDisagrees", { name, found: found.ext });
   return ok(found.mime);
 }

@@ -15,7 +15,13 @@ const PART_BYTES = 8 * 1024 * 1024;
 
 /** Streams bytes of unknown length to a key, at most two parts in memory. `abort` leaves nothing behind. */
 export const putStream = (key: string, body: Readable): Upload =>
-  new Upload({ client: store(), params: { Bucket: bucket(), Key: key, Body: body }, partSize: PART_BYTES, queueSize: 1, leavePartsOnError: false });
+  new Upload({
+    client: store(),
+    params: { Bucket: bucket(), Key: key, Body: body },
+    partSize: PART_BYTES,
+    queueSize: 1,
+    leavePartsOnError: false,
+  });
 
 const isStatus = (fault: unknown, status: number): boolean =>
   fault instanceof S3ServiceException && fault.$metadata.httpStatusCode === status;
@@ -38,7 +44,12 @@ export async function exists(key: string): Promise<boolean> {
 }
 
 /** Stores a whole small object, verified by its SHA-256 on arrival; false where the key is taken. */
-export async function putOnce(key: string, body: Buffer, sha256Base64: string, contentType: string): Promise<boolean> {
+export async function putOnce(
+  key: string,
+  body: Buffer,
+  sha256Base64: string,
+  contentType: string,
+): Promise<boolean> {
   try {
     await store().send(
       new PutObjectCommand({
@@ -57,9 +68,14 @@ export async function putOnce(key: string, body: Buffer, sha256Base64: string, c
   }
 }
 
-export const remove = (key: string): Promise<unknown> => store().send(new DeleteObjectCommand({ Bucket: bucket(), Key: key }));
+export const remove = (key: string): Promise<unknown> =>
+  store().send(new DeleteObjectCommand({ Bucket: bucket(), Key: key }));
 
-export type Opened = { readonly body: Readable; readonly sizeBytes: number; readonly range: string | undefined };
+export type Opened = {
+  readonly body: Readable;
+  readonly sizeBytes: number;
+  readonly range: string | undefined;
+};
 
 /** Opens an object for reading, whole or the part a `Range` header names. */
 export async function open(key: string, range?: string): Promise<Opened> {

@@ -19,9 +19,12 @@ export type Received = {
   readonly mediaType: MediaType;
 };
 
-export type ReceiveRefusal = TypeRefusal | "fileMissing" | "fileEmpty" | "fileTooBig" | "uploadBroken" | "uploadTooMany";
+export type ReceiveRefusal =
+  TypeRefusal | "fileMissing" | "fileEmpty" | "fileTooBig" | "uploadBroken" | "uploadTooMany";
 
-type Decide<Code extends string> = (fields: Readonly<Record<string, string>>) => Promise<Outcome<FileKind, Code>>;
+type Decide<Code extends string> = (
+  fields: Readonly<Record<string, string>>,
+) => Promise<Outcome<FileKind, Code>>;
 
 const HEAD_BYTES = 8192;
 const SILENCE_MS = 30_000;
@@ -74,7 +77,8 @@ class Intake extends Writable {
   private async take(data: Buffer): Promise<void> {
     this.sizeBytes += data.length;
     const most = mostBytes(this.kind);
-    if (this.sizeBytes > most) throw new Refused(refuse("fileTooBig", { name: this.name, limitMb: most / 1e6 }));
+    if (this.sizeBytes > most)
+      throw new Refused(refuse("fileTooBig", { name: this.name, limitMb: most / 1e6 }));
     this.hash.update(data);
     if (this.type) return this.pass(data);
     this.head = Buffer.concat([this.head, data]);
@@ -111,7 +115,9 @@ class Intake extends Writable {
 
 /** A refusal found in the middle of a stream. */
 class Refused extends Error {
-  constructor(readonly refusal: { ok: false; code: string; detail: Readonly<Record<string, string | number>> }) {
+  constructor(
+    readonly refusal: { ok: false; code: string; detail: Readonly<Record<string, string | number>> },
+  ) {
     super(refusal.code);
   }
 }
@@ -134,7 +140,10 @@ function watch(request: Request): { readonly body: Readable; readonly stop: () =
     timer = setTimeout(() => source.destroy(new Error("silence")), SILENCE_MS);
   };
   rearm();
-  source.on("data", rearm).on("end", stop).on("error", (fault) => body.destroy(fault));
+  source
+    .on("data", rearm)
+    .on("end", stop)
+    .on("error", (fault) => body.destroy(fault));
   source.pipe(body);
   return { body, stop };
 }
@@ -160,7 +169,11 @@ export async function receiveFile<Code extends string>(
 }
 
 /** The parser, with our intake in place of its temporary files and our decision before a file's first byte. */
-function parserFor<Code extends string>(fields: Record<string, string>, decide: Decide<Code>, onIntake: (intake: Intake) => void) {
+function parserFor<Code extends string>(
+  fields: Record<string, string>,
+  decide: Decide<Code>,
+  onIntake: (intake: Intake) => void,
+) {
   let kind: FileKind = "photo";
   const form = formidable({
     maxFiles: 1,
@@ -218,4 +231,9 @@ async function receive<Code extends string>(
 }
 
 const nameOf = (file: unknown): string =>
-  typeof file === "object" && file !== null && "originalFilename" in file && typeof file.originalFilename === "string" ? file.originalFilename : "";
+  typeof file === "object" &&
+  file !== null &&
+  "originalFilename" in file &&
+  typeof file.originalFilename === "string"
+    ? file.originalFilename
+    : "";

@@ -5,11 +5,20 @@ import { open } from "./objects";
 /** `attachment; filename=…` as RFC 6266 and RFC 8187 write it: a plain name for old clients, the real one beside it. */
 export const disposition = (kind: "attachment" | "inline", name: string): string => {
   const plain = name.replace(/[^\x20-\x7e]|["\\%]/gu, "_");
-  const encoded = encodeURIComponent(name).replace(/['()*]/gu, (sign) => `%${sign.charCodeAt(0).toString(16).toUpperCase()}`);
+  const encoded = encodeURIComponent(name).replace(
+    /['()*]/gu,
+    (sign) => `%${sign.charCodeAt(0).toString(16).toUpperCase()}`,
+  );
   return `${kind}; filename="${plain}"; filename*=UTF-8''${encoded}`;
 };
 
-type Served = { key: string; contentType: string; name: string; kind: "attachment" | "inline"; range: string | null };
+type Served = {
+  key: string;
+  contentType: string;
+  name: string;
+  kind: "attachment" | "inline";
+  range: string | null;
+};
 
 /**
  * Streams an object. Whatever the bytes are, a browser runs none of them: fixed type, no sniffing, an empty sandbox, and

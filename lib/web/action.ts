@@ -15,7 +15,10 @@ import { wordingFor, type RefusalCode } from "./wording";
 type Sentences = (key: string) => string;
 
 /** A shape names its sentence in its message (`forms` in the message files); one that names none says what any field says. */
-const fieldSentences = (error: z.ZodError, t: Sentences & { has(key: string): boolean }): Record<string, string> => {
+const fieldSentences = (
+  error: z.ZodError,
+  t: Sentences & { has(key: string): boolean },
+): Record<string, string> => {
   const fields: Record<string, string> = {};
   for (const issue of error.issues) {
     const name = issue.path.join(".") || "form";
@@ -37,12 +40,14 @@ export function action<Shape extends z.ZodType, T>(
   verb: (actor: Actor, input: z.infer<Shape>) => Promise<Outcome<T, RefusalCode>>,
   after: ((value: T) => string) | After<T> = {},
 ): FormAction<T> {
-  const { toPath, shapeFields } = typeof after === "function" ? { toPath: after, shapeFields: undefined } : after;
+  const { toPath, shapeFields } =
+    typeof after === "function" ? { toPath: after, shapeFields: undefined } : after;
   return async (_previous: unknown, form: FormData): Promise<ActionResult<T>> => {
     const typed = formValues(form);
     const actor = await requireActor();
     const problems = await getTranslations({ locale: actor.locale, namespace: "problems" });
-    if (!isFromOurPages(await headers())) return { ok: false, message: problems("crossSite"), fields: {}, typed };
+    if (!isFromOurPages(await headers()))
+      return { ok: false, message: problems("crossSite"), fields: {}, typed };
 
     const input = shape.safeParse(shapeFields ? shapeFields(typed) : typed);
     if (!input.success) {
@@ -53,12 +58,18 @@ export function action<Shape extends z.ZodType, T>(
       const outcome = await verb(actor, input.data);
       if (!outcome.ok) {
         const message = await wordingFor(outcome, actor.locale);
-        return outcome.field ? { ok: false, fields: { [outcome.field]: message }, typed } : { ok: false, message, fields: {}, typed };
+        return outcome.field
+          ? { ok: false, fields: { [outcome.field]: message }, typed }
+          : { ok: false, message, fields: {}, typed };
       }
       if (toPath) revalidatePath(toPath(outcome.value));
       return outcome;
     } catch (fault) {
-      log.error({ event: "fault", requestId: actor.requestId, fault: fault instanceof Error ? fault.stack : String(fault) });
+      log.error({
+        event: "fault",
+        requestId: actor.requestId,
+        fault: fault instanceof Error ? fault.stack : String(fault),
+      });
       return { ok: false, message: problems("fault", { id: actor.requestId }), fields: {}, typed };
     }
   };

@@ -7,7 +7,9 @@ import { SESSION_COOKIE, SESSION_SECONDS } from "./cookie";
 import { isSecure, setting } from "./settings";
 
 const textHeaders = (incoming: Record<string, unknown> | undefined): [string, string][] =>
-  Object.entries(incoming ?? {}).flatMap(([name, value]) => (typeof value === "string" ? [[name, value]] : []));
+  Object.entries(incoming ?? {}).flatMap(([name, value]) =>
+    typeof value === "string" ? [[name, value]] : [],
+  );
 
 /**
  * The cookie holds one thing: the id of a session row. Everything else, roles above all, is read from the database on
@@ -19,7 +21,10 @@ export const authOptions = (): NextAuthOptions => ({
   useSecureCookies: isSecure(),
   pages: { signIn: "/sign-in", error: "/sign-in" },
   cookies: {
-    sessionToken: { name: SESSION_COOKIE(), options: { httpOnly: true, sameSite: "lax", path: "/", secure: isSecure() } },
+    sessionToken: {
+      name: SESSION_COOKIE(),
+      options: { httpOnly: true, sameSite: "lax", path: "/", secure: isSecure() },
+    },
   },
   providers: [
     Credentials({

@@ -21,24 +21,22 @@ const claimKey = ({ actor, route, key, fingerprint }: Keyed) =>
 
 const find = async ({ actor, route, key }: Keyed): Promise<Kept | undefined> => {
   const [kept] = await unitOfWork(actor, (work) =>
-    rows<Kept>(work, `select fingerprint, status, response from idempotency_keys where organisation_id = $1 and route = $2 and key = $3`, [
-      actor.organisationId,
-      route,
-      key,
-    ]),
+    rows<Kept>(
+      work,
+      `select fingerprint, status, response from idempotency_keys where organisation_id = $1 and route = $2 and key = $3`,
+      [actor.organisationId, route, key],
+    ),
   );
   return kept;
 };
 
 const keep = ({ actor, route, key }: Keyed, status: number, response: unknown) =>
   unitOfWork(actor, (work) =>
-    rows(work, `update idempotency_keys set status = $4, response = $5 where organisation_id = $1 and route = $2 and key = $3 returning key`, [
-      actor.organisationId,
-      route,
-      key,
-      status,
-      JSON.stringify(response),
-    ]),
+    rows(
+      work,
+      `update idempotency_keys set status = $4, response = $5 where organisation_id = $1 and route = $2 and key = $3 returning key`,
+      [actor.organisationId, route, key, status, JSON.stringify(response)],
+    ),
   );
 
 const refuse = async (keyed: Keyed, code: "keyMissing" | "keyReused" | "keyRunning", status: number) => {
@@ -61,7 +59,11 @@ export async function withIdempotency(keyed: Keyed, act: () => Promise<Response>
     if (!kept || kept.status === null) return refuse(keyed, "keyRunning", 409);
     return Response.json(kept.response, {
       status: kept.status,
-      headers: { "cache-control": "private, no-store", "x-request-id": keyed.actor.requestId, "idempotent-replay": "true" },
+      headers: {
+        "cache-control": "private, no-store",
+        "x-request-id": keyed.actor.requestId,
+        "idempotent-replay": "true",
+      },
     });
   }
   const response = await act();

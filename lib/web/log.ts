@@ -7,5 +7,14 @@ export const log = pino({
   base: { process: process.env.PROCESS_NAME ?? "web" },
   timestamp: pino.stdTimeFunctions.isoTime,
   formatters: { level: (label) => ({ level: label }) },
-  redact: ["password", "*.password", "token", "*.token", "cookie", "*.cookie", "authorization", "*.authorization"],
+  redact: [
+    "password",
+    "*.password",
+    "token",
+    "*.token",
+    "cookie",
+    "*.cookie",
+    "authorization",
+    "*.authorization",
+  ],
 });

@@ -14,8 +14,23 @@ export type Problem = {
 /** A problem document (RFC 9457). `type` is a relative reference that names the problem, not a page to fetch. */
 export const problemResponse = (problem: Problem, requestId: string): Response => {
   const { status, code, title, detail, errors } = problem;
-  return new Response(JSON.stringify({ type: `/problems/${code}`, title, status, detail, instance: `urn:uuid:${requestId}`, code, errors }), {
-    status,
-    headers: { "content-type": "application/problem+json", "cache-control": "private, no-store", "x-request-id": requestId },
-  });
+  return new Response(
+    JSON.stringify({
+      type: `/problems/${code}`,
+      title,
+      status,
+      detail,
+      instance: `urn:uuid:${requestId}`,
+      code,
+      errors,
+    }),
+    {
+      status,
+      headers: {
+        "content-type": "application/problem+json",
+        "cache-control": "private, no-store",
+        "x-request-id": requestId,
+      },
+    },
+  );
 };

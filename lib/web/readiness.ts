@@ -22,7 +22,10 @@ export async function readiness(): Promise<Readiness> {
   const [database, migrations, storage, worker] = await Promise.all([
     holds(async () => (await beforeSignIn("select 1 as one", [])).length === 1),
     holds(async () => {
-      const [row] = await beforeSignIn<{ count: number }>("select count(*)::int as count from bookkeeping.schema_migrations", []);
+      const [row] = await beforeSignIn<{ count: number }>(
+        "select count(*)::int as count from bookkeeping.schema_migrations",
+        [],
+      );
       return row?.count === expected();
     }),
     holds(async () => {
@@ -30,7 +33,10 @@ export async function readiness(): Promise<Readiness> {
       return true;
     }),
     holds(async () => {
-      const seen = await beforeSignIn("select name from worker_heartbeats where seen_at > now() - interval '1 minute'", []);
+      const seen = await beforeSignIn(
+        "select name from worker_heartbeats where seen_at > now() - interval '1 minute'",
+        [],
+      );
       return seen.length > 0;
     }),
   ]);

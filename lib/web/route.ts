@@ -47,7 +47,9 @@ type Options<Shape extends z.ZodType | undefined> = {
 };
 
 type BodyOf<Shape> = Shape extends z.ZodType ? z.infer<Shape> : undefined;
-type Handler<Body, Params> = (asked: Asked<Body, Params>) => Promise<Outcome<unknown, RefusalCode> | Response>;
+type Handler<Body, Params> = (
+  asked: Asked<Body, Params>,
+) => Promise<Outcome<unknown, RefusalCode> | Response>;
 
 const MAX_JSON_BYTES = 256 * 1024;
 
@@ -56,10 +58,19 @@ const words = (locale: Locale) => getTranslations({ locale, namespace: "problems
 const json = (value: unknown, requestId: string, status = 200) =>
   new Response(JSON.stringify(value), {
     status,
-    headers: { "content-type": "application/json", "cache-control": "private, no-store", "x-request-id": requestId },
+    headers: {
+      "content-type": "application/json",
+      "cache-control": "private, no-store",
+      "x-request-id": requestId,
+    },
   });
 
-async function refusal(code: "signedOut" | "crossSite" | "tooLarge" | "notJson" | "fault", status: number, locale: Locale, requestId: string) {
+async function refusal(
+  code: "signedOut" | "crossSite" | "tooLarge" | "notJson" | "fault",
+  status: number,
+  locale: Locale,
+  requestId: string,
+) {
   const t = await words(locale);
   return problemResponse({ status, code, title: t(code, { id: requestId }) }, requestId);
 }
@@ -94,7 +105,10 @@ const parseJson = (text: string): unknown => {
   }
 };
 
-async function answer(outcome: Outcome<unknown, RefusalCode> | Response, session: Session): Promise<Response> {
+async function answer(
+  outcome: Outcome<unknown, RefusalCode> | Response,
+  session: Session,
+): Promise<Response> {
   const { requestId, locale } = session.actor;
   if (outcome instanceof Response) {
     outcome.headers.set("x-request-id", requestId);
@@ -104,7 +118,10 @@ async function answer(outcome: Outcome<unknown, RefusalCode> | Response, session
   if (outcome.ok) return json(outcome.value, requestId);
   const sentence = await wordingFor(outcome, locale);
   const errors = outcome.field ? [{ pointer: `/${outcome.field}`, detail: sentence }] : undefined;
-  return problemResponse({ status: statusOf(outcome.code), code: outcome.code, title: sentence, errors }, requestId);
+  return problemResponse(
+    { status: statusOf(outcome.code), code: outcome.code, title: sentence, errors },
+    requestId,
+  );
 }
 
 /**
@@ -126,8 +143,18 @@ export function route<Params = Record<string, never>, Shape extends z.ZodType | 
         ? await serve(options, handler, { session, request, params: await context.params })
         : await refusal("signedOut", 401, "en", requestId);
     } catch (fault) {
-      log.error({ event: "fault", requestId, route: options.name, fault: fault instanceof Error ? fault.stack : String(fault) });
-      response = await refusal("fault", 500, session?.actor.locale ?? "en", session?.actor.requestId ?? requestId);
+      log.error({
+        event: "fault",
+        requestId,
+        route: options.name,
+        fault: fault instanceof Error ? fault.stack : String(fault),
+      });
+      response = await refusal(
+        "fault",
+        500,
+        session?.actor.locale ?? "en",
+        session?.actor.requestId ?? requestId,
+      );
     }
     log.info({
       event: "request",
@@ -167,5 +194,8 @@ async function serve<Params, Shape extends z.ZodType | undefined>(
   const act = async () => answer(await handler({ ...asked, body: body.data as BodyOf<Shape> }), session);
   if (!options.idempotent) return act();
   const fingerprint = createHash("sha256").update(text).digest("hex");
-  return withIdempotency({ actor: session.actor, route: options.name, key: request.headers.get("idempotency-key"), fingerprint }, act);
+  return withIdempotency(
+    { actor: session.actor, route: options.name, key: request.headers.get("idempotency-key"), fingerprint },
+    act,
+  );
 }

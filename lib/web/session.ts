@@ -18,7 +18,11 @@ export type Session = {
   readonly email: string;
   readonly theme: string;
   readonly density: string | null;
-  readonly organisation: Organisation & { readonly id: string; readonly name: string; readonly currency: string };
+  readonly organisation: Organisation & {
+    readonly id: string;
+    readonly name: string;
+    readonly currency: string;
+  };
 };
 
 type ContextRow = {
@@ -48,7 +52,13 @@ const present = (id: string, row: ContextRow, requestId: string): Session => ({
   email: row.email,
   theme: row.theme,
   density: row.density,
-  organisation: { id: row.organisation_id, name: row.organisation_name, sells: row.sells, buys: row.buys, currency: row.currency },
+  organisation: {
+    id: row.organisation_id,
+    name: row.organisation_name,
+    sells: row.sells,
+    buys: row.buys,
+    currency: row.currency,
+  },
   actor: {
     userId: row.user_id,
     name: row.name,
@@ -90,4 +100,5 @@ export async function requireSession(): Promise<Session> {
 export const requireActor = async (): Promise<Actor> => (await requireSession()).actor;
 
 /** Whether this person may; draws buttons and guards pages. */
-export const may = (session: Session, right: Right): boolean => hasRight(session.actor.roles, right, session.organisation);
+export const may = (session: Session, right: Right): boolean =>
+  hasRight(session.actor.roles, right, session.organisation);

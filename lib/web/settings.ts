@@ -15,9 +15,12 @@ const settings = z.object({
 });
 
 /** The settings of this process, checked when they are first asked for. Throws, naming what is missing. */
-export const setting = <Name extends keyof z.infer<typeof settings>>(name: Name): z.infer<typeof settings>[Name] => {
+export const setting = <Name extends keyof z.infer<typeof settings>>(
+  name: Name,
+): z.infer<typeof settings>[Name] => {
   const read = settings.shape[name].safeParse(process.env[name]);
-  if (!read.success) throw new Error(`The setting ${name} is missing or wrong: start the product with npm start`);
+  if (!read.success)
+    throw new Error(`The setting ${name} is missing or wrong: start the product with npm start`);
   return read.data as z.infer<typeof settings>[Name];
 };
 

@@ -1,5 +1,5 @@
 import { createHash } from "node:crypto";
-import { canonicalText, type ClaimFacts } from "@/lib/claims/facts";
+import { canonicalText, type ClaimFacts } from "@/lib/claims/facts-shape";
 import type { ClaimDraft } from "@/lib/claims/draft";
 import { readDraft, type FoundLine } from "@/lib/claims/filing/read-draft";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";

@@ -1,5 +1,5 @@
 import type { ClaimDraft } from "@/lib/claims/draft";
-import type { ClaimFacts } from "@/lib/claims/facts";
+import type { ClaimFacts } from "@/lib/claims/facts-shape";
 import type { CreditState, ReturnState, VerdictOutcome } from "@/lib/claims/lifecycle";
 import type { Attribution } from "@/lib/claims/verdict";
 import type { MadeFile } from "../evidence/made";

@@ -1,4 +1,4 @@
-import type { ClaimFacts } from "@/lib/claims/facts";
+import type { ClaimFacts } from "@/lib/claims/facts-shape";
 import { originalKey, viewKey } from "@/lib/storage/keys";
 import { FAMILIES } from "@/lib/parts/families";
 import { symptomOf } from "@/lib/parts/family";

@@ -12,7 +12,8 @@ import { formValues } from "@/lib/web/form-values";
 import { isFromOurPages } from "@/lib/web/origin";
 import { isSecure, setting } from "@/lib/web/settings";
 
-const textOf = (value: string | readonly string[] | undefined): string => (typeof value === "string" ? value : "");
+const textOf = (value: string | readonly string[] | undefined): string =>
+  typeof value === "string" ? value : "";
 
 /** Signs in with the same cookie the session route reads; works as a plain form before any script has loaded. */
 export async function signInAction(_previous: unknown, form: FormData): Promise<ActionResult> {
@@ -30,6 +31,12 @@ export async function signInAction(_previous: unknown, form: FormData): Promise<
 
   const token = await encode({ token: { sid }, secret: setting("NEXTAUTH_SECRET"), maxAge: SESSION_SECONDS });
   const jar = await cookies();
-  jar.set(SESSION_COOKIE(), token, { httpOnly: true, sameSite: "lax", path: "/", secure: isSecure(), maxAge: SESSION_SECONDS });
+  jar.set(SESSION_COOKIE(), token, {
+    httpOnly: true,
+    sameSite: "lax",
+    path: "/",
+    secure: isSecure(),
+    maxAge: SESSION_SECONDS,
+  });
   return redirect("/");
 }

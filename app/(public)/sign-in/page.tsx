@@ -16,7 +16,11 @@ export async function generateMetadata(): Promise<Metadata> {
 export const dynamic = "force-dynamic";
 
 export default async function SignInPage({ searchParams }: { searchParams: Promise<{ note?: string }> }) {
-  const [session, t, { note }] = await Promise.all([currentSession(), getTranslations("signIn"), searchParams]);
+  const [session, t, { note }] = await Promise.all([
+    currentSession(),
+    getTranslations("signIn"),
+    searchParams,
+  ]);
   if (session) redirect("/");
   const texts = { email: t("email"), password: t("password"), submit: t("submit") };
   return (

@@ -4,7 +4,6 @@ import { getTranslations } from "next-intl/server";
 import { ClaimList } from "@/components/claims/claim-list";
 import { PageHeader } from "@/components/ui/page-header";
 import { listReceivedClaims } from "@/lib/claims/lists/queries";
-import { presentList } from "@/lib/claims/lists/present";
 import { JUDGING_VIEWS, listQuery } from "@/lib/claims/lists/schema";
 import { may, requireSession } from "@/lib/web/session";
 
@@ -21,11 +20,22 @@ export default async function JudgingPage({ searchParams }: Props) {
   if (!may(session, "seeReceivedClaims")) notFound();
   const query = listQuery.parse(search);
   const view = JUDGING_VIEWS.find((one) => one === query.view) ?? "toJudge";
-  const list = presentList(await listReceivedClaims(session.actor, { ...query, view }), query.page);
+  const list = await listReceivedClaims(session.actor, { ...query, view });
   return (
     <>
-      <PageHeader title={t("judgingTitle")} note={t("clearDesk", { waiting: list.counts.toJudge ?? 0, held: list.counts.held ?? 0 })} />
-      <ClaimList path="/judging" views={JUDGING_VIEWS} query={{ ...query, view }} initial={list} side="distributor" locale={session.actor.locale} timeZone={session.actor.timeZone} />
+      <PageHeader
+        title={t("judgingTitle")}
+        note={t("clearDesk", { waiting: list.counts.toJudge ?? 0, held: list.counts.held ?? 0 })}
+      />
+      <ClaimList
+        path="/judging"
+        views={JUDGING_VIEWS}
+        query={{ ...query, view }}
+        initial={list}
+        side="distributor"
+        locale={session.actor.locale}
+        timeZone={session.actor.timeZone}
+      />
     </>
   );
 }

@@ -5,7 +5,6 @@ import { ClaimList } from "@/components/claims/claim-list";
 import { LinkButton } from "@/components/ui/link-button";
 import { PageHeader } from "@/components/ui/page-header";
 import { listOwnClaims } from "@/lib/claims/lists/queries";
-import { presentList } from "@/lib/claims/lists/present";
 import { listQuery, WORKSHOP_VIEWS } from "@/lib/claims/lists/schema";
 import { may, requireSession } from "@/lib/web/session";
 
@@ -22,15 +21,29 @@ export default async function WorkshopTodayPage({ searchParams }: Props) {
   if (!may(session, "seeOwnClaims")) notFound();
   const query = listQuery.parse(search);
   const view = WORKSHOP_VIEWS.find((one) => one === query.view) ?? "onUs";
-  const list = presentList(await listOwnClaims(session.actor, { ...query, view }), query.page);
+  const list = await listOwnClaims(session.actor, { ...query, view });
   return (
     <>
       <PageHeader
         title={t("workshopTitle")}
         note={t("workshopNote", { onUs: list.counts.onUs ?? 0, onThem: list.counts.onThem ?? 0 })}
-        actions={may(session, "startClaim") ? <LinkButton href="/claims/new" kind="primary">{t("start")}</LinkButton> : undefined}
+        actions={
+          may(session, "startClaim") ? (
+            <LinkButton href="/claims/new" kind="primary">
+              {t("start")}
+            </LinkButton>
+          ) : undefined
+        }
       />
-      <ClaimList path="/workshop-today" views={WORKSHOP_VIEWS} query={{ ...query, view }} initial={list} side="workshop" locale={session.actor.locale} timeZone={session.actor.timeZone} />
+      <ClaimList
+        path="/workshop-today"
+        views={WORKSHOP_VIEWS}
+        query={{ ...query, view }}
+        initial={list}
+        side="workshop"
+        locale={session.actor.locale}
+        timeZone={session.actor.timeZone}
+      />
     </>
   );
 }

@@ -1,7 +1,12 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { coverageOn, type Coverage } from "@/lib/coverage/coverage";
-import { asSeenByWorkshop, type CoverageFacts, type EarlierUnit, type TermsInForce } from "@/lib/coverage/facts";
+import {
+  asSeenByWorkshop,
+  type CoverageFacts,
+  type EarlierUnit,
+  type TermsInForce,
+} from "@/lib/coverage/facts";
 import { chainTo } from "@/lib/coverage/replacement-chain";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { calendarDay, dayInZone, parseCalendarDay, type CalendarDay } from "@/lib/kernel/calendar-day";
@@ -28,7 +33,12 @@ export type LineToCover = {
 export type CoveredLine = { readonly coverage: Coverage; readonly terms: Rule<"terms"> | null };
 
 type UnitRow = { id: string; buyerId: string | null; shippedOn: CalendarDay | null };
-type ChainRow = { id: string; replaces: string | null; shippedOn: CalendarDay | null; fittedOn: CalendarDay | null };
+type ChainRow = {
+  id: string;
+  replaces: string | null;
+  shippedOn: CalendarDay | null;
+  fittedOn: CalendarDay | null;
+};
 
 const citing = (rule: Rule<"terms"> | null): TermsInForce | null =>
   rule && { terms: rule.body, version: `${rule.ruleNumber} (${rule.validFrom})` };
@@ -58,7 +68,9 @@ async function findChain(work: Work, sellerId: string, unitId: string): Promise<
     [sellerId, unitId],
   );
   const byId = new Map(found.map((unit) => [unit.id, unit]));
-  const replaced = new Map(found.flatMap((unit) => (unit.replaces ? [[unit.id, unit.replaces] as const] : [])));
+  const replaced = new Map(
+    found.flatMap((unit) => (unit.replaces ? [[unit.id, unit.replaces] as const] : [])),
+  );
   return chainTo(unitId, replaced).flatMap((id) => {
     const unit = byId.get(id);
     return unit?.shippedOn ? [{ shippedOn: unit.shippedOn, fittedOn: unit.fittedOn }] : [];
@@ -79,20 +91,37 @@ const listOthers = (work: Work, line: LineToCover, unitId: string): Promise<Othe
   );
 
 async function zoneOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ zone: string }>(work, "select time_zone as zone from organisations where id = $1", [organisationId]);
+  const [found] = await rows<{ zone: string }>(
+    work,
+    "select time_zone as zone from organisations where id = $1",
+    [organisationId],
+  );
   return found?.zone ?? "UTC";
 }
 
-type Gathered = { unit: UnitRow | null; chain: EarlierUnit[]; others: Other[]; terms: Rule<"terms"> | null; rootTerms: Rule<"terms"> | null };
+type Gathered = {
+  unit: UnitRow | null;
+  chain: EarlierUnit[];
+  others: Other[];
+  terms: Rule<"terms"> | null;
+  rootTerms: Rule<"terms"> | null;
+};
 
 async function gather(work: Work, line: LineToCover): Promise<Gathered> {
   const unit = line.unitId || line.serialTyped ? await findUnit(work, line) : null;
   const chain = unit ? await findChain(work, line.sellerId, unit.id) : [];
   const others = unit ? await listOthers(work, line, unit.id) : [];
   const shippedOn = unit?.shippedOn ?? parseCalendarDay(line.shippedOn ?? "");
-  const termsOn = (on: CalendarDay) => findRule(work, "terms", { sellerId: line.sellerId, family: line.family, partId: line.partId, on });
+  const termsOn = (on: CalendarDay) =>
+    findRule(work, "terms", { sellerId: line.sellerId, family: line.family, partId: line.partId, on });
   const root = chain[0];
-  return { unit, chain, others, terms: shippedOn ? await termsOn(shippedOn) : null, rootTerms: root ? await termsOn(root.shippedOn) : null };
+  return {
+    unit,
+    chain,
+    others,
+    terms: shippedOn ? await termsOn(shippedOn) : null,
+    rootTerms: root ? await termsOn(root.shippedOn) : null,
+  };
 }
 
 function factsOf(line: LineToCover, known: Gathered, timeZone: string): CoverageFacts {
@@ -102,7 +131,10 @@ function factsOf(line: LineToCover, known: Gathered, timeZone: string): Coverage
   const holder = others.find((other) => other.holds);
   return {
     serial: line.serialTyped,
-    shipment: shippedOn && { shippedOn, to: !unit || unit.buyerId === line.workshopId ? "claimant" : "otherOrganisation" },
+    shipment: shippedOn && {
+      shippedOn,
+      to: !unit || unit.buyerId === line.workshopId ? "claimant" : "otherOrganisation",
+    },
     terms: citing(terms),
     chain,
     rootTerms: citing(rootTerms),
@@ -111,7 +143,10 @@ function factsOf(line: LineToCover, known: Gathered, timeZone: string): Coverage
     filing: { filedOn: line.filedOn, timeZone, lateReasonGiven: false },
     todayOn: dayInZone(new Date(), timeZone),
     creditedUnder: credited
-      ? { claimNumber: printClaimNumber(credited.number), ofClaimant: credited.workshopId === line.workshopId }
+      ? {
+          claimNumber: printClaimNumber(credited.number),
+          ofClaimant: credited.workshopId === line.workshopId,
+        }
       : null,
     heldBy: holder ? { claimNumber: printClaimNumber(holder.number) } : null,
     price: shippedOn ? "invoiceLine" : "unknown",

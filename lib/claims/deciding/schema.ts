@@ -9,7 +9,12 @@ const share = z.string().trim().max(20).default("");
 const lineVerdict = z.strictObject({
   lineId: z.uuid(),
   outcome: z.enum(VERDICT_OUTCOMES, "outcomeMissing"),
-  shares: z.strictObject(Object.fromEntries(CAUSES.map((cause) => [cause, share])) as Record<(typeof CAUSES)[number], typeof share>),
+  shares: z.strictObject(
+    Object.fromEntries(CAUSES.map((cause) => [cause, share])) as Record<
+      (typeof CAUSES)[number],
+      typeof share
+    >,
+  ),
   reasonCode: z.enum(REASON_CODES, "reasonCodeMissing"),
   reason: z.string().trim().min(1, "missing").max(4000, "tooLong"),
 });
@@ -21,7 +26,11 @@ export const decideInput = z.strictObject({
   // Fields named `lines.0.outcome` come as a record by place.
   lines: z
     .record(z.string().regex(/^[0-7]$/u), lineVerdict)
-    .transform((byPlace) => Object.entries(byPlace).sort(([a], [b]) => Number(a) - Number(b)).map(([, line]) => line))
+    .transform((byPlace) =>
+      Object.entries(byPlace)
+        .sort(([a], [b]) => Number(a) - Number(b))
+        .map(([, line]) => line),
+    )
     .refine((lines) => lines.length > 0),
   letter: z.string().trim().min(1, "missing").max(4000, "tooLong"),
   returnWaivedReason: z.string().trim().min(1, "missing").max(1000, "tooLong"),

@@ -7,7 +7,7 @@ import { mailClaimPeople } from "@/lib/mail/outbox";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
 import { coverageOfLine, type CoveredLine } from "../cover/queries";
-import { claimFacts, type ClaimFacts } from "../facts";
+import { claimFacts, type ClaimFacts } from "../facts-shape";
 import { nameOf } from "../judging/queries";
 import { todayOf } from "../judging/service";
 import { moveClaim } from "../moves/service";
@@ -16,7 +16,13 @@ import { claimPath } from "../paths";
 import { creditedShare, outcomeOfLines, REASONS, type Attribution } from "../verdict";
 import type { DecideInput } from "./schema";
 
-type LineRefusal = "sharesUnread" | "sharesNotOne" | "upheldNotWhole" | "partNotShared" | "reasonOfOtherOutcome" | "linesIncomplete";
+type LineRefusal =
+  | "sharesUnread"
+  | "sharesNotOne"
+  | "upheldNotWhole"
+  | "partNotShared"
+  | "reasonOfOtherOutcome"
+  | "linesIncomplete";
 type Seen = { facts: ClaimFacts; sha256: string };
 type LineIds = { id: string; lineNumber: number };
 
@@ -26,12 +32,14 @@ const attributionOf = (shares: DecideInput["lines"][number]["shares"]): Attribut
 /** Every line answered once, shares that add to one, a reason that belongs to the outcome. */
 function checkLines(input: DecideInput, lines: readonly LineIds[]): Outcome<true, LineRefusal> {
   const answered = new Set(input.lines.map((line) => line.lineId));
-  if (answered.size !== lines.length || lines.some(({ id }) => !answered.has(id))) return refuse("linesIncomplete");
+  if (answered.size !== lines.length || lines.some(({ id }) => !answered.has(id)))
+    return refuse("linesIncomplete");
   for (const [index, line] of input.lines.entries()) {
     const share = creditedShare(line.outcome, attributionOf(line.shares));
     if (!share.ok) return { ...share, field: `lines.${index}.shares` };
     const allowed: readonly string[] = REASONS[line.outcome];
-    if (!allowed.includes(line.reasonCode)) return refuse("reasonOfOtherOutcome", {}, `lines.${index}.reasonCode`);
+    if (!allowed.includes(line.reasonCode))
+      return refuse("reasonOfOtherOutcome", {}, `lines.${index}.reasonCode`);
   }
   return ok(true);
 }
@@ -46,7 +54,12 @@ async function findSeen(work: Work, claim: Claim): Promise<Seen> {
   return { facts: claimFacts.parse(revision.facts), sha256: revision.sha256 };
 }
 
-async function coverLine(work: Work, claim: Claim, facts: ClaimFacts, lineNumber: number): Promise<CoveredLine> {
+async function coverLine(
+  work: Work,
+  claim: Claim,
+  facts: ClaimFacts,
+  lineNumber: number,
+): Promise<CoveredLine> {
   const line = facts.lines.find((one) => one.lineNumber === lineNumber);
   if (!line) throw new Error(`claim ${claim.number} has no line ${lineNumber} in its facts`);
   return coverageOfLine(work, {
@@ -68,7 +81,13 @@ async function coverLine(work: Work, claim: Claim, facts: ClaimFacts, lineNumber
 type Written = { verdictId: string; contestDays: number };
 
 /** The verdict with its lines: what was seen, what rule, what the cover was, word for word and for good. */
-async function writeVerdict(work: Work, claim: Claim, input: DecideInput, lines: readonly LineIds[], seen: Seen): Promise<Written> {
+async function writeVerdict(
+  work: Work,
+  claim: Claim,
+  input: DecideInput,
+  lines: readonly LineIds[],
+  seen: Seen,
+): Promise<Written> {
   const parties = [claim.sellerId, claim.workshopId] as const;
   const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
   const [verdict] = await rows<{ id: string }>(
@@ -122,9 +141,11 @@ const DAYS_TO_CONTEST = 14;
 export const decideClaim = (actor: Actor, input: DecideInput) =>
   moveClaim<LineRefusal | "staleVersion">(actor, input.number, "decide", async (claim, work) => {
     if (claim.revision !== input.revision) return refuse("staleVersion");
-    const lines = await rows<LineIds>(work, `select id, line_number as "lineNumber" from claim_lines where claim_id = $1 order by line_number`, [
-      claim.id,
-    ]);
+    const lines = await rows<LineIds>(
+      work,
+      `select id, line_number as "lineNumber" from claim_lines where claim_id = $1 order by line_number`,
+      [claim.id],
+    );
     const checked = checkLines(input, lines);
     if (!checked.ok) return checked;
 
@@ -145,7 +166,16 @@ export const decideClaim = (actor: Actor, input: DecideInput) =>
       },
     });
     return ok({
-      changes: { outcome, decidedAt: new Date(), decidedById: actor.userId, contestUntil, holderId: null, heldUntil: null, parkedWithId: null, parkedQuestion: null },
+      changes: {
+        outcome,
+        decidedAt: new Date(),
+        decidedById: actor.userId,
+        contestUntil,
+        holderId: null,
+        heldUntil: null,
+        parkedWithId: null,
+        parkedQuestion: null,
+      },
       detail: { outcome, revision: input.revision, contestUntil },
     });
   });

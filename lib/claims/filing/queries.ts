@@ -8,33 +8,37 @@ import { findSoldLine, findSoldUnit, type SoldUnit } from "@/lib/parts/queries";
 import { evidenceListOn } from "@/lib/rule-book/queries";
 import { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
-import { storedDraft, type ClaimDraft, type DraftLine } from "../draft";
-import type { ClaimFacts } from "../facts";
+import { type ClaimDraft, type DraftLine } from "../draft";
+import { storedDraft } from "../draft-shape";
+import type { ClaimFacts } from "../facts-shape";
 import { readDraft, type DraftContext, type DraftProblem, type FoundLine } from "./read-draft";
 
 type Installer = { id: string; code: string };
 
 /** The installer of that name, if the workshop has one: the code is what the other side sees. */
 async function findInstaller(work: Work, name: string): Promise<Installer | null> {
-  const [found] = await rows<Installer>(work, "select id, code from installers where workshop_id = $1 and lower(name) = lower($2)", [
-    work.actor.organisationId,
-    name.trim(),
-  ]);
+  const [found] = await rows<Installer>(
+    work,
+    "select id, code from installers where workshop_id = $1 and lower(name) = lower($2)",
+    [work.actor.organisationId, name.trim()],
+  );
   return found ?? null;
 }
 
 async function findReplacement(work: Work, line: DraftLine, sellerId: string): Promise<string | null> {
   const serial = normaliseSerial(line.replacementSerial);
   if (serial === "") return null;
-  const [found] = await rows<{ id: string }>(work, "select id from units where buyer_id = $1 and seller_id = $2 and serial_normal = $3", [
-    work.actor.organisationId,
-    sellerId,
-    serial,
-  ]);
+  const [found] = await rows<{ id: string }>(
+    work,
+    "select id from units where buyer_id = $1 and seller_id = $2 and serial_normal = $3",
+    [work.actor.organisationId, sellerId, serial],
+  );
   return found?.id ?? null;
 }
 
-const invoiceLineOf = (sold: Omit<SoldUnit, "unitId"> | Awaited<ReturnType<typeof findSoldLine>>): FoundLine["invoiceLine"] =>
+const invoiceLineOf = (
+  sold: Omit<SoldUnit, "unitId"> | Awaited<ReturnType<typeof findSoldLine>>,
+): FoundLine["invoiceLine"] =>
   sold && {
     id: sold.invoiceLineId,
     invoiceNumber: sold.invoiceNumber,
@@ -46,10 +50,11 @@ const invoiceLineOf = (sold: Omit<SoldUnit, "unitId"> | Awaited<ReturnType<typeo
   };
 
 async function findPart(work: Work, partId: string, sellerId: string): Promise<FoundLine["part"] | null> {
-  const [part] = await rows<FoundLine["part"]>(work, "select id, part_number as number, name from parts where id = $1 and seller_id = $2", [
-    partId,
-    sellerId,
-  ]);
+  const [part] = await rows<FoundLine["part"]>(
+    work,
+    "select id, part_number as number, name from parts where id = $1 and seller_id = $2",
+    [partId, sellerId],
+  );
   return part ?? null;
 }
 
@@ -66,7 +71,10 @@ async function findLine(work: Work, line: DraftLine, sellerId: string): Promise<
   if (!part) return null;
   return {
     part,
-    unit: unit && unit.sellerId === sellerId ? { id: unit.unitId, serial: unit.serial, batch: unit.batchCode } : null,
+    unit:
+      unit && unit.sellerId === sellerId
+        ? { id: unit.unitId, serial: unit.serial, batch: unit.batchCode }
+        : null,
     invoiceLine: invoiceLineOf(unit ?? sold),
     installer,
     replacementUnitId,
@@ -82,16 +90,30 @@ const listEvidence = (work: Work, claimId: string) =>
   );
 
 async function zoneOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ zone: string }>(work, "select time_zone as zone from organisations where id = $1", [organisationId]);
+  const [found] = await rows<{ zone: string }>(
+    work,
+    "select time_zone as zone from organisations where id = $1",
+    [organisationId],
+  );
   return found?.zone ?? "UTC";
 }
 
 /** Everything a draft is read against, as it stands now. */
-export async function draftContext(work: Work, claim: Claim, draft: ClaimDraft, now: Date): Promise<DraftContext> {
+export async function draftContext(
+  work: Work,
+  claim: Claim,
+  draft: ClaimDraft,
+  now: Date,
+): Promise<DraftContext> {
   const family = familyOf(claim.family ?? "");
   if (!family) throw new Error(`claim ${claim.number} has no known family`);
   const filedOn = dayInZone(now, await zoneOf(work, claim.sellerId));
-  const list = await evidenceListOn(work, { sellerId: claim.sellerId, family: family.code, symptom: draft.symptom, on: filedOn });
+  const list = await evidenceListOn(work, {
+    sellerId: claim.sellerId,
+    family: family.code,
+    symptom: draft.symptom,
+    on: filedOn,
+  });
   const lines: (FoundLine | null)[] = [];
   for (const line of draft.lines) lines.push(await findLine(work, line, claim.sellerId));
   return {
@@ -127,7 +149,6 @@ export const checkDraft = (actor: Actor, number: string): Promise<CheckedDraft |
     return { claim, draft, savedAt: kept.savedAt, context, ...readDraft(draft, context) };
   });
 
-
 /** The units behind the lines of a draft, as the workshop bought them: for the first page of the flow. */
 export const listUnitsOfDraft = (actor: Actor, draft: ClaimDraft): Promise<(SoldUnit | null)[]> =>
   unitOfWork(actor, async (work) => {
@@ -139,12 +160,13 @@ export const listUnitsOfDraft = (actor: Actor, draft: ClaimDraft): Promise<(Sold
 /** Names to offer where an installer is asked for. */
 export const listInstallers = (actor: Actor): Promise<string[]> =>
   unitOfWork(actor, async (work) => {
-    const found = await rows<{ name: string }>(work, "select name from installers where workshop_id = $1 and left_on is null order by name", [
-      actor.organisationId,
-    ]);
+    const found = await rows<{ name: string }>(
+      work,
+      "select name from installers where workshop_id = $1 and left_on is null order by name",
+      [actor.organisationId],
+    );
     return found.map((installer) => installer.name);
   });
-
 
 export type OpenQuery = { round: number; question: string; rowIds: string[] };
 

@@ -6,7 +6,7 @@ import { readTypedDay } from "@/lib/kernel/typed-day";
 import { readingKindOf, symptomOf, type PartFamily } from "@/lib/parts/family";
 import type { EvidenceRow } from "@/lib/rule-book/evidence-list-shape";
 import type { ClaimDraft, DraftLine } from "../draft";
-import type { ClaimFacts, FactLine } from "../facts";
+import type { ClaimFacts, FactLine } from "../facts-shape";
 import { givenByRow, type Given } from "../given";
 import type { DraftStep } from "../paths";
 
@@ -55,9 +55,14 @@ class Problems {
  * Reads a draft into the facts that are sent. Returns facts where nothing stops it, and in any case the whole list of
  * problems, each at its field. Soft doubts (an odd reading) are not problems: they never stop a claim.
  */
-export function readDraft(draft: ClaimDraft, context: DraftContext): { facts: ClaimFacts | null; problems: DraftProblem[] } {
+export function readDraft(
+  draft: ClaimDraft,
+  context: DraftContext,
+): { facts: ClaimFacts | null; problems: DraftProblem[] } {
   const problems = new Problems();
-  const failedOn = readPastDay(draft.failedOn, "fault", "failedOn", context, problems) ?? missingDay(draft.failedOn, problems);
+  const failedOn =
+    readPastDay(draft.failedOn, "fault", "failedOn", context, problems) ??
+    missingDay(draft.failedOn, problems);
   const repairedOn = readPastDay(draft.repairedOn, "part", "repairedOn", context, problems);
   const lines = draft.lines.map((line, index) => readLine(line, index, failedOn, context, problems));
   const readings = readReadings(draft, context, problems);
@@ -76,7 +81,13 @@ const missingDay = (typed: string, problems: Problems): null =>
   typed.trim() === "" ? problems.add("fault", "failedOn", "failedOnMissing") : null;
 
 /** Null for an empty field and for a day that cannot be: the latter leaves a problem at the field. */
-function readPastDay(typed: string, step: DraftStep, field: string, context: DraftContext, problems: Problems): CalendarDay | null {
+function readPastDay(
+  typed: string,
+  step: DraftStep,
+  field: string,
+  context: DraftContext,
+  problems: Problems,
+): CalendarDay | null {
   if (typed.trim() === "") return null;
   const day = readTypedDay(typed, context.locale, context.today);
   if (day === null) return problems.add(step, field, "dayUnread", { typed: typed.slice(0, 40) });
@@ -94,9 +105,16 @@ function readLine(
   const found = context.lines[index] ?? null;
   if (!found) return problems.add("part", field("serial"), "partMissing");
   const fittedOn = readPastDay(line.fittedOn, "part", field("fittedOn"), context, problems);
-  const replacedOn = readPastDay(line.replacementFittedOn, "part", field("replacementFittedOn"), context, problems);
+  const replacedOn = readPastDay(
+    line.replacementFittedOn,
+    "part",
+    field("replacementFittedOn"),
+    context,
+    problems,
+  );
   if (!QUANTITY.test(line.quantity.trim())) problems.add("part", field("quantity"), "quantityUnread");
-  if (fittedOn && failedOn && isBefore(failedOn, fittedOn)) problems.add("fault", "failedOn", "failedBeforeFitting");
+  if (fittedOn && failedOn && isBefore(failedOn, fittedOn))
+    problems.add("fault", "failedOn", "failedBeforeFitting");
   const quantity = Number(line.quantity) || 1;
   return {
     lineNumber: index + 1,
@@ -139,7 +157,12 @@ function readReadings(draft: ClaimDraft, context: DraftContext, problems: Proble
   return readings;
 }
 
-const TEMPERATURE = { code: "temperature", dimension: "temperature", unit: "°C", temperature: "notNeeded" } as const;
+const TEMPERATURE = {
+  code: "temperature",
+  dimension: "temperature",
+  unit: "°C",
+  temperature: "notNeeded",
+} as const;
 
 function readTemperature(typed: string, field: string, problems: Problems): number | null {
   if (typed.trim() === "") return null;
@@ -196,7 +219,11 @@ function factsOf(draft: ClaimDraft, context: DraftContext, read: ReadParts): Cla
 const answerOf = (typed: "" | "yes" | "no"): boolean | null => (typed === "" ? null : typed === "yes");
 
 function swapOf(draft: ClaimDraft): ClaimFacts["swap"] {
-  const minutes = NUMBER.test(draft.swapMinutes.trim()) ? Number(draft.swapMinutes.trim().replace(",", ".")) : null;
+  const minutes = NUMBER.test(draft.swapMinutes.trim())
+    ? Number(draft.swapMinutes.trim().replace(",", "."))
+    : null;
   const [abnormalHeat, testDrive] = [answerOf(draft.swapHeat), answerOf(draft.testDrive)];
-  return minutes === null && abnormalHeat === null && testDrive === null ? null : { minutes, abnormalHeat, testDrive };
+  return minutes === null && abnormalHeat === null && testDrive === null
+    ? null
+    : { minutes, abnormalHeat, testDrive };
 }

@@ -8,7 +8,8 @@ import { claimNumberFrom } from "@/lib/labels/check-digit";
 import { findSoldLine, findSoldUnit } from "@/lib/parts/queries";
 import { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
-import { changedDraft, emptyDraft, emptyLine, storedDraft, type ClaimDraft, type DraftChange, type DraftLine } from "../draft";
+import { changedDraft, emptyDraft, emptyLine, type ClaimDraft, type DraftLine } from "../draft";
+import { storedDraft, type DraftChange } from "../draft-shape";
 import { moveClaim, undoing, type Moved } from "../moves/service";
 import type { DraftStart } from "../schema";
 
@@ -16,7 +17,14 @@ import type { DraftStart } from "../schema";
 const SEVEN_DIGITS = [1_000_000, 10_000_000] as const;
 const DRAWS = 20;
 
-type Start = { sellerId: string; accountId: string; currency: string; family: string; line: DraftLine; draft: Partial<ClaimDraft> };
+type Start = {
+  sellerId: string;
+  accountId: string;
+  currency: string;
+  family: string;
+  line: DraftLine;
+  draft: Partial<ClaimDraft>;
+};
 
 async function startFromUnit(work: Work, unitId: string): Promise<Start | null> {
   const unit = await findSoldUnit(work, unitId);
@@ -32,17 +40,36 @@ async function startFromUnit(work: Work, unitId: string): Promise<Start | null> 
     installer: unit.installerName ?? "",
   };
   const draft = { frameSerial: unit.frameSerial ?? "", vehicleModel: unit.vehicleModel ?? "" };
-  return { sellerId: unit.sellerId, accountId: unit.accountId, currency: unit.currency.trim(), family: unit.family, line, draft };
+  return {
+    sellerId: unit.sellerId,
+    accountId: unit.accountId,
+    currency: unit.currency.trim(),
+    family: unit.family,
+    line,
+    draft,
+  };
 }
 
 async function startFromLine(work: Work, invoiceLineId: string): Promise<Start | null> {
   const sold = await findSoldLine(work, invoiceLineId);
   if (!sold) return null;
   const line = { ...emptyLine(), partId: sold.partId, invoiceLineId };
-  return { sellerId: sold.sellerId, accountId: sold.accountId, currency: sold.currency.trim(), family: sold.family, line, draft: {} };
+  return {
+    sellerId: sold.sellerId,
+    accountId: sold.accountId,
+    currency: sold.currency.trim(),
+    family: sold.family,
+    line,
+    draft: {},
+  };
 }
 
-async function startFromPart(work: Work, accountId: string, partId: string, serial: string): Promise<Start | null> {
+async function startFromPart(
+  work: Work,
+  accountId: string,
+  partId: string,
+  serial: string,
+): Promise<Start | null> {
   const [found] = await rows<{ sellerId: string; currency: string; family: string }>(
     work,
     `select t.seller_id as "sellerId", t.currency, p.family from trading_accounts t
@@ -51,7 +78,13 @@ async function startFromPart(work: Work, accountId: string, partId: string, seri
     [accountId, partId, work.actor.organisationId],
   );
   if (!found) return null;
-  return { ...found, currency: found.currency.trim(), accountId, line: { ...emptyLine(), serial, partId }, draft: {} };
+  return {
+    ...found,
+    currency: found.currency.trim(),
+    accountId,
+    line: { ...emptyLine(), serial, partId },
+    draft: {},
+  };
 }
 
 const startFrom = (work: Work, from: DraftStart): Promise<Start | null> => {
@@ -68,7 +101,15 @@ async function insertNumbered(work: Work, start: Start): Promise<string> {
       work,
       `insert into claims (number, seller_id, workshop_id, account_id, family, currency, created_by_id)
        values ($1, $2, $3, $4, $5, $6, $7) on conflict (number) do nothing returning number`,
-      [number, start.sellerId, work.actor.organisationId, start.accountId, start.family, start.currency, work.actor.userId],
+      [
+        number,
+        start.sellerId,
+        work.actor.organisationId,
+        start.accountId,
+        start.family,
+        start.currency,
+        work.actor.userId,
+      ],
     );
     if (made[0]) return made[0].number;
   }
@@ -79,16 +120,29 @@ async function insertNumbered(work: Work, start: Start): Promise<string> {
  * Starts a draft for a unit, for a purchase without serial, or for a part chosen by hand. What the serial answers is
  * filled in. Refuses `notFound` where the thing is not this organisation's.
  */
-export const startClaim = (actor: Actor, from: DraftStart): Promise<Outcome<Moved, "notFound" | "notAllowed">> =>
+export const startClaim = (
+  actor: Actor,
+  from: DraftStart,
+): Promise<Outcome<Moved, "notFound" | "notAllowed">> =>
   undoing(actor, async (work) => {
     if (!hasRight(actor.roles, "startClaim", { sells: false, buys: true })) return refuse("notAllowed");
     const start = await startFrom(work, from);
     if (!start) return refuse("notFound");
     const number = await insertNumbered(work, start);
-    const claim = await Claim.findOne({ where: { number }, transaction: work.transaction, rejectOnEmpty: true });
+    const claim = await Claim.findOne({
+      where: { number },
+      transaction: work.transaction,
+      rejectOnEmpty: true,
+    });
     const body = { ...emptyDraft(), ...start.draft, lines: [start.line] };
     await DraftRow.create(
-      { claimId: claim.id, sellerId: claim.sellerId, workshopId: claim.workshopId, body, savedAt: new Date() },
+      {
+        claimId: claim.id,
+        sellerId: claim.sellerId,
+        workshopId: claim.workshopId,
+        body,
+        savedAt: new Date(),
+      },
       { transaction: work.transaction },
     );
     return ok({ number });
@@ -107,7 +161,11 @@ const changeDraft = <Code extends string>(
   undoing<Saved, Code | DraftRefusal>(actor, async (work) => {
     const { transaction } = work;
     if (!hasRight(actor.roles, "startClaim", { sells: false, buys: true })) return refuse("notAllowed");
-    const claim = await Claim.findOne({ where: { number, workshopId: actor.organisationId }, transaction, lock: transaction.LOCK.UPDATE });
+    const claim = await Claim.findOne({
+      where: { number, workshopId: actor.organisationId },
+      transaction,
+      lock: transaction.LOCK.UPDATE,
+    });
     if (!claim) return refuse("notFound");
     if (claim.state !== "draft" && claim.state !== "answerNeeded") return refuse("moveNotOpen");
     const kept = await DraftRow.findOne({ where: { claimId: claim.id }, transaction });
@@ -146,7 +204,9 @@ export const withdrawClaim = (actor: Actor, { number, reason }: { number: string
 
 /** A claim that ended without a verdict lets go of its units, so that they can be claimed again. */
 export const releaseUnits = (work: Work, claimId: string): Promise<unknown> =>
-  rows(work, "update claim_lines set holds_unit = false where claim_id = $1 and holds_unit returning id", [claimId]);
+  rows(work, "update claim_lines set holds_unit = false where claim_id = $1 and holds_unit returning id", [
+    claimId,
+  ]);
 
 /**
  * Adds the other part of a pair to a draft ("add the other one"): a second line for a unit of the same distributor.
@@ -157,14 +217,19 @@ export const addLine = (
   number: string,
   unitId: string,
 ): Promise<Outcome<Saved, DraftRefusal | "unitOfOtherSeller" | "lineTwice" | "linesFull">> =>
-  changeLines<"notFound" | "unitOfOtherSeller" | "lineTwice" | "linesFull">(actor, number, async (claim, draft, work) => {
-    const start = await startFromUnit(work, unitId);
-    if (!start) return refuse("notFound");
-    if (start.sellerId !== claim.sellerId || start.family !== claim.family) return refuse("unitOfOtherSeller");
-    if (draft.lines.some((line) => line.unitId === unitId)) return refuse("lineTwice");
-    if (draft.lines.length >= MOST_LINES) return refuse("linesFull", { most: MOST_LINES });
-    return ok([...draft.lines, start.line]);
-  });
+  changeLines<"notFound" | "unitOfOtherSeller" | "lineTwice" | "linesFull">(
+    actor,
+    number,
+    async (claim, draft, work) => {
+      const start = await startFromUnit(work, unitId);
+      if (!start) return refuse("notFound");
+      if (start.sellerId !== claim.sellerId || start.family !== claim.family)
+        return refuse("unitOfOtherSeller");
+      if (draft.lines.some((line) => line.unitId === unitId)) return refuse("lineTwice");
+      if (draft.lines.length >= MOST_LINES) return refuse("linesFull", { most: MOST_LINES });
+      return ok([...draft.lines, start.line]);
+    },
+  );
 
 /** Takes the last added line off a draft again; the first one stays, it is what the claim is about. */
 export const removeLine = (actor: Actor, number: string, place: number) =>

@@ -4,7 +4,9 @@ import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 
 /** The short name of an organisation the actor belongs to or trades with. */
 export async function nameOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ name: string }>(work, "select name from organisations where id = $1", [organisationId]);
+  const [found] = await rows<{ name: string }>(work, "select name from organisations where id = $1", [
+    organisationId,
+  ]);
   return found?.name ?? "";
 }
 

@@ -21,7 +21,9 @@ export const todayOf = (actor: Actor): CalendarDay => dayInZone(new Date(), acto
 
 /** Takes a claim from the list: from now on this assessor holds it, for ten minutes at a time. */
 export const takeClaim = (actor: Actor, { number }: { number: string }) =>
-  moveClaim<never>(actor, number, "take", () => ok({ changes: { holderId: actor.userId, heldUntil: holdFromNow() } }));
+  moveClaim<never>(actor, number, "take", () =>
+    ok({ changes: { holderId: actor.userId, heldUntil: holdFromNow() } }),
+  );
 
 /** Gives a claim back to the list, with a reason only the distributor reads. */
 export const putBackClaim = (actor: Actor, { number, reason }: { number: string; reason: string }) =>
@@ -78,9 +80,11 @@ type Ask = { number: string; question: string; rowIds: readonly string[] };
 const DAYS_TO_ANSWER = 30;
 
 const nextRound = async (work: Work, claimId: string): Promise<number> => {
-  const [last] = await rows<{ round: number }>(work, "select coalesce(max(round), 0) + 1 as round from claim_queries where claim_id = $1", [
-    claimId,
-  ]);
+  const [last] = await rows<{ round: number }>(
+    work,
+    "select coalesce(max(round), 0) + 1 as round from claim_queries where claim_id = $1",
+    [claimId],
+  );
   return Number(last?.round ?? 1);
 };
 
@@ -88,7 +92,11 @@ const nextRound = async (work: Work, claimId: string): Promise<number> => {
 export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
   moveClaim<never>(actor, number, "ask", async (claim, work) => {
     const round = await nextRound(work, claim.id);
-    const terms = await findRule(work, "terms", { sellerId: claim.sellerId, family: claim.family, on: todayOf(actor) });
+    const terms = await findRule(work, "terms", {
+      sellerId: claim.sellerId,
+      family: claim.family,
+      on: todayOf(actor),
+    });
     const lapsesOn = addDays(todayOf(actor), terms?.body.queryLapseDays ?? DAYS_TO_ANSWER);
     await rows(
       work,
@@ -114,4 +122,3 @@ export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
       detail: { round, question, rowIds, answerBy: lapsesOn },
     });
   });
-

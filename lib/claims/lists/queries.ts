@@ -3,7 +3,9 @@ import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { normaliseSerial } from "@/lib/labels/serial";
 import type { ClaimState, VerdictOutcome } from "../lifecycle";
+import { presentList } from "./present";
 import { PAGE_SIZE, type ListOrder, type ListQuery, type ListView } from "./schema";
+import type { ClaimItems } from "./view";
 
 export type ListedClaim = {
   number: string;
@@ -86,14 +88,25 @@ const escapeLike = (text: string) => text.replace(/[\\%_]/gu, (sign) => `\\${sig
 
 const bindings = (work: Work, { q }: ListQuery): unknown[] => {
   const typed = q.trim();
-  return [work.actor.organisationId, work.actor.userId, typed, typed.replace(/\D/gu, ""), normaliseSerial(typed), `%${escapeLike(typed)}%`];
+  return [
+    work.actor.organisationId,
+    work.actor.userId,
+    typed,
+    typed.replace(/\D/gu, ""),
+    normaliseSerial(typed),
+    `%${escapeLike(typed)}%`,
+  ];
 };
 
 type Side = { mine: "seller" | "workshop"; other: "seller" | "workshop"; views: typeof JUDGING };
+type Asked = ListQuery & { view: ListView };
 
-async function listSide(work: Work, side: Side, view: ListView, query: ListQuery): Promise<ClaimList> {
+const RECEIVED: Side = { mine: "seller", other: "workshop", views: JUDGING };
+const SENT: Side = { mine: "workshop", other: "seller", views: OWN };
+
+async function listSide(work: Work, side: Side, query: Asked): Promise<ClaimList> {
   const bind = bindings(work, query);
-  const where = `c.${side.mine}_id = $1 and ${side.views[view] ?? "false"} and ${search}`;
+  const where = `c.${side.mine}_id = $1 and ${side.views[query.view] ?? "false"} and ${search}`;
   const claims = await rows<ListedClaim>(
     work,
     `${columns(side.other)} where ${where} order by ${ORDER[query.order]} limit ${PAGE_SIZE} offset $7`,
@@ -124,10 +137,13 @@ async function countViews(work: Work, side: Side): Promise<ClaimList["counts"]> 
   return counts;
 }
 
+const pageOf = (actor: Actor, side: Side, query: Asked): Promise<ClaimItems> =>
+  unitOfWork(actor, async (work) => presentList(await listSide(work, side, query), query.page));
+
 /** Claims as the distributor works them. */
-export const listReceivedClaims = (actor: Actor, query: ListQuery): Promise<ClaimList> =>
-  unitOfWork(actor, (work) => listSide(work, { mine: "seller", other: "workshop", views: JUDGING }, query.view ?? "toJudge", query));
+export const listReceivedClaims = (actor: Actor, query: ListQuery): Promise<ClaimItems> =>
+  pageOf(actor, RECEIVED, { ...query, view: query.view ?? "toJudge" });
 
 /** Claims as the workshop follows them. */
-export const listOwnClaims = (actor: Actor, query: ListQuery): Promise<ClaimList> =>
-  unitOfWork(actor, (work) => listSide(work, { mine: "workshop", other: "seller", views: OWN }, query.view ?? "onUs", query));
+export const listOwnClaims = (actor: Actor, query: ListQuery): Promise<ClaimItems> =>
+  pageOf(actor, SENT, { ...query, view: query.view ?? "onUs" });

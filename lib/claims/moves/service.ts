@@ -61,7 +61,10 @@ export function moveClaim<Code extends string>(
     const decision = await decide(claim, work);
     if (!decision.ok) return decision;
 
-    await claim.update({ ...decision.value.changes, state: MOVES[move].to }, { transaction: work.transaction });
+    await claim.update(
+      { ...decision.value.changes, state: MOVES[move].to },
+      { transaction: work.transaction },
+    );
     await appendToTimeline(work, claim, { kind: move, detail: decision.value.detail });
     return ok({ number });
   });

@@ -6,7 +6,7 @@ import { calendarDay } from "@/lib/kernel/calendar-day";
 import { familyOf } from "@/lib/parts/families";
 import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
 import { coverageOfLine } from "../cover/queries";
-import type { ClaimFacts } from "../facts";
+import type { ClaimFacts } from "../facts-shape";
 import { judgeReading, type LimitsInForce } from "../sheet/judge-reading";
 import { factsOf, presentFile, presentSheet, type WorkedOut } from "../sheet/present";
 import { sheetRows, type SheetRows } from "../sheet/queries";
@@ -40,7 +40,12 @@ async function workOutRows(work: Work, sheet: SheetRows, facts: ClaimFacts): Pro
   });
 }
 
-async function workOutCoverage(work: Work, sheet: SheetRows, facts: ClaimFacts, missing: number): Promise<Map<number, Coverage>> {
+async function workOutCoverage(
+  work: Work,
+  sheet: SheetRows,
+  facts: ClaimFacts,
+  missing: number,
+): Promise<Map<number, Coverage>> {
   const { claim } = sheet;
   const covered = new Map<number, Coverage>();
   for (const line of facts.lines) {

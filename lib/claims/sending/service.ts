@@ -10,20 +10,28 @@ import { answerDueAt } from "@/lib/rule-book/queries";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
-import { storedDraft } from "../draft";
-import { canonicalText, type ClaimFacts } from "../facts";
+import { storedDraft } from "../draft-shape";
+import { canonicalText, type ClaimFacts } from "../facts-shape";
 import { draftContext } from "../filing/queries";
 import { readDraft } from "../filing/read-draft";
 import { nameOf } from "../judging/queries";
 import { moveClaim } from "../moves/service";
 import { printClaimNumber } from "../number";
 import { claimPath } from "../paths";
-import { flagDoubts } from "./doubts";
-import { recordService, writeLines } from "./records";
+import { flagDoubts } from "./doubts-queries";
+import { recordService, writeLines } from "./records-service";
 
 /** Freezes what the draft says into the next revision of the claim, with its lines, readings and evidence. */
-async function sendRevision(claim: Claim, work: Work, now: Date): Promise<Outcome<ClaimFacts, "draftIncomplete">> {
-  const kept = await DraftRow.findOne({ where: { claimId: claim.id }, transaction: work.transaction, rejectOnEmpty: true });
+async function sendRevision(
+  claim: Claim,
+  work: Work,
+  now: Date,
+): Promise<Outcome<ClaimFacts, "draftIncomplete">> {
+  const kept = await DraftRow.findOne({
+    where: { claimId: claim.id },
+    transaction: work.transaction,
+    rejectOnEmpty: true,
+  });
   const draft = storedDraft(kept.body);
   const { facts, problems } = readDraft(draft, await draftContext(work, claim, draft, now));
   if (!facts) return refuse("draftIncomplete", { count: problems.length });
@@ -101,13 +109,20 @@ export const fileClaim = (actor: Actor, { number }: { number: string }) =>
       },
     });
     return ok({
-      changes: { ...changesOf(claim, sent.value, now), filedAt: now, filedOn: sent.value.filedOn as Claim["filedOn"], answerDueAt: dueAt },
+      changes: {
+        ...changesOf(claim, sent.value, now),
+        filedAt: now,
+        filedOn: sent.value.filedOn as Claim["filedOn"],
+        answerDueAt: dueAt,
+      },
       detail: { revision: claim.revision + 1, incident: sent.value.incident !== null },
     });
   });
 
 const pausedMinutes = (claim: Claim, now: Date): number =>
-  claim.clockStoppedAt ? Math.max(0, Math.round((now.getTime() - claim.clockStoppedAt.getTime()) / 60_000)) : 0;
+  claim.clockStoppedAt
+    ? Math.max(0, Math.round((now.getTime() - claim.clockStoppedAt.getTime()) / 60_000))
+    : 0;
 
 /** Answers a query by sending the next revision; the distributor's clock runs again, later by as long as it stood. */
 export const answerQuery = (actor: Actor, { number }: { number: string }) =>

@@ -2,7 +2,7 @@ import { resistanceAt20 } from "@/lib/evidence/winding";
 import { approximate, fractionFrom } from "@/lib/kernel/fraction";
 import { readingKindOf, type PartFamily } from "@/lib/parts/family";
 import type { Limits } from "@/lib/rule-book/limits-shape";
-import type { ClaimFacts } from "../facts";
+import type { ClaimFacts } from "../facts-shape";
 import type { Judgement, ReadingView } from "./view";
 
 type Reading = ClaimFacts["readings"][number];
@@ -33,7 +33,11 @@ function comparable({ canonicalValue, temperatureCelsius }: Reading, isCopper: b
 }
 
 /** A reading beside the limits of the Rule book version in force on the fitting day. It informs; a person judges. */
-export function judgeReading(reading: Reading, family: PartFamily, inForce: LimitsInForce | null): ReadingView {
+export function judgeReading(
+  reading: Reading,
+  family: PartFamily,
+  inForce: LimitsInForce | null,
+): ReadingView {
   const isCopper = readingKindOf(family, reading.kind)?.temperature === "copperTo20";
   const value = comparable(reading, isCopper);
   const limit = inForce && limitFor(reading.kind, isCopper, inForce.limits);
@@ -56,6 +60,9 @@ export function judgeReading(reading: Reading, family: PartFamily, inForce: Limi
     judgedValue: value,
     isCorrectedTo20: isCopper && value !== null,
     judgement,
-    limit: limit && inForce ? { low: limit.low, high: limit.high, source: limit.source, rule: inForce.rule } : null,
+    limit:
+      limit && inForce
+        ? { low: limit.low, high: limit.high, source: limit.source, rule: inForce.rule }
+        : null,
   };
 }

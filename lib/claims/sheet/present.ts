@@ -3,11 +3,18 @@ import type { Actor } from "@/lib/access/actor";
 import type { Coverage } from "@/lib/coverage/coverage";
 import { isCurrency, type Currency } from "@/lib/kernel/currency";
 import { money, type Money } from "@/lib/kernel/money";
-import { claimFacts, type ClaimFacts, type FactLine } from "../facts";
+import { claimFacts, type ClaimFacts, type FactLine } from "../facts-shape";
 import { movesOpenTo } from "../lifecycle";
 import { printClaimNumber } from "../number";
 import type { Attribution } from "../verdict";
-import type { SheetClaim, SheetEvidence, SheetLine, SheetRows, SheetVerdict, SheetVerdictLine } from "./queries";
+import type {
+  SheetClaim,
+  SheetEvidence,
+  SheetLine,
+  SheetRows,
+  SheetVerdict,
+  SheetVerdictLine,
+} from "./queries";
 import type { CaseLine, EvidenceFileView, EvidenceRowView, LineView, SheetView, VerdictView } from "./view";
 
 /** What is worked out beside the rows: cover of each line, the Evidence list, the case in one line. */
@@ -33,7 +40,10 @@ export const factsOf = ({ revisions }: SheetRows): ClaimFacts | null => {
 };
 
 const capturedAt = (captured: unknown): string | null =>
-  typeof captured === "object" && captured !== null && "takenAt" in captured && typeof captured.takenAt === "string"
+  typeof captured === "object" &&
+  captured !== null &&
+  "takenAt" in captured &&
+  typeof captured.takenAt === "string"
     ? captured.takenAt
     : null;
 
@@ -54,7 +64,12 @@ export const presentFile = (file: SheetEvidence, facts: ClaimFacts | null): Evid
   isInRevision: facts?.evidence.some((one) => one.id === file.id) ?? false,
 });
 
-function presentLine(line: FactLine, row: SheetLine | undefined, claim: SheetClaim, context: LineContext): LineView {
+function presentLine(
+  line: FactLine,
+  row: SheetLine | undefined,
+  claim: SheetClaim,
+  context: LineContext,
+): LineView {
   return {
     lineId: row?.id ?? "",
     lineNumber: line.lineNumber,
@@ -113,10 +128,18 @@ const presentHolder = (claim: SheetClaim, actor: Actor, isSeller: boolean) => ({
   holderName: isSeller ? claim.holderName : null,
   isHeldByMe: claim.holderId === actor.userId,
   heldUntil: isSeller ? iso(claim.heldUntil) : null,
-  canTakeOver: isSeller && claim.state === "beingJudged" && claim.holderId !== actor.userId && actor.roles.has("assessor"),
+  canTakeOver:
+    isSeller &&
+    claim.state === "beingJudged" &&
+    claim.holderId !== actor.userId &&
+    actor.roles.has("assessor"),
   parked:
     isSeller && claim.parkedWithName && claim.parkedQuestion
-      ? { withName: claim.parkedWithName, isMe: claim.parkedWithId === actor.userId, question: claim.parkedQuestion }
+      ? {
+          withName: claim.parkedWithName,
+          isMe: claim.parkedWithId === actor.userId,
+          question: claim.parkedQuestion,
+        }
       : null,
 });
 
@@ -129,9 +152,22 @@ const presentRecord = (sheet: SheetRows) => ({
     answeredAt: iso(query.answeredAt),
     answeredRevision: query.answeredRevision,
   })),
-  messages: sheet.messages.map(({ audience, at, ...message }) => ({ ...message, isOwnOnly: audience === "own", at: at.toISOString() })),
-  timeline: sheet.timeline.map(({ onlyForId, at, ...entry }) => ({ ...entry, isOwnOnly: onlyForId !== null, at: at.toISOString() })),
-  revisions: sheet.revisions.map(({ revision, sentAt, sentBy, sha256 }) => ({ revision, sentAt: sentAt.toISOString(), sentBy, sha256 })),
+  messages: sheet.messages.map(({ audience, at, ...message }) => ({
+    ...message,
+    isOwnOnly: audience === "own",
+    at: at.toISOString(),
+  })),
+  timeline: sheet.timeline.map(({ onlyForId, at, ...entry }) => ({
+    ...entry,
+    isOwnOnly: onlyForId !== null,
+    at: at.toISOString(),
+  })),
+  revisions: sheet.revisions.map(({ revision, sentAt, sentBy, sha256 }) => ({
+    revision,
+    sentAt: sentAt.toISOString(),
+    sentBy,
+    sha256,
+  })),
 });
 
 /** The sheet as one party may see it: the only way from rows to a page. */
@@ -167,7 +203,12 @@ export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOu
     contestUntil: claim.contestUntil,
     facts,
     lines: (facts?.lines ?? []).map((line) =>
-      presentLine(line, sheet.lines.find((row) => row.lineNumber === line.lineNumber), claim, context),
+      presentLine(
+        line,
+        sheet.lines.find((row) => row.lineNumber === line.lineNumber),
+        claim,
+        context,
+      ),
     ),
     rows: workedOut.rows,
     otherFiles: files.filter((file) => !rowIds.has(file.rowId)),

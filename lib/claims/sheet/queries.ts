@@ -50,7 +50,13 @@ export type SheetLine = {
   creditState: CreditState;
 };
 
-export type SheetRevision = { revision: number; facts: unknown; sha256: string; sentAt: Date; sentBy: string | null };
+export type SheetRevision = {
+  revision: number;
+  facts: unknown;
+  sha256: string;
+  sentAt: Date;
+  sentBy: string | null;
+};
 export type SheetQuery = {
   round: number;
   items: unknown;

@@ -1,6 +1,6 @@
 import { completeness } from "@/lib/evidence/completeness";
 import type { EvidenceRow } from "@/lib/rule-book/evidence-list-shape";
-import type { ClaimFacts } from "../facts";
+import type { ClaimFacts } from "../facts-shape";
 import { givenByRow } from "../given";
 import type { EvidenceFileView, EvidenceRowView, ReadingView } from "./view";
 
@@ -11,7 +11,10 @@ type Shown = {
 };
 
 /** The Evidence list of a claim as sent: each row Done, To do or Cannot get, with what was given for it. */
-export const evidenceRows = (list: readonly EvidenceRow[], { facts, files, readings }: Shown): EvidenceRowView[] =>
+export const evidenceRows = (
+  list: readonly EvidenceRow[],
+  { facts, files, readings }: Shown,
+): EvidenceRowView[] =>
   completeness(list, givenByRow(facts)).rows.map((row) => ({
     id: row.id,
     need: row.need,

@@ -1,6 +1,6 @@
 import type { Coverage } from "@/lib/coverage/coverage";
 import type { Money } from "@/lib/kernel/money";
-import type { ClaimFacts } from "../facts";
+import type { ClaimFacts } from "../facts-shape";
 import type { ClaimMove, ClaimState, CreditState, ReturnState, VerdictOutcome } from "../lifecycle";
 import type { Attribution } from "../verdict";
 
@@ -22,7 +22,12 @@ export type ReadingView = {
   readonly judgedValue: number | null;
   readonly isCorrectedTo20: boolean;
   readonly judgement: Judgement;
-  readonly limit: { readonly low: number | null; readonly high: number | null; readonly source: string; readonly rule: string } | null;
+  readonly limit: {
+    readonly low: number | null;
+    readonly high: number | null;
+    readonly source: string;
+    readonly rule: string;
+  } | null;
 };
 
 export type EvidenceFileView = {
@@ -64,7 +69,12 @@ export type LineView = {
   readonly batch: string | null;
   readonly quantity: number;
   readonly position: "left" | "right" | "single";
-  readonly invoice: { readonly number: string; readonly line: number; readonly invoicedOn: string; readonly shippedOn: string } | null;
+  readonly invoice: {
+    readonly number: string;
+    readonly line: number;
+    readonly invoicedOn: string;
+    readonly shippedOn: string;
+  } | null;
   readonly fittedOn: string | null;
   /** The name for the workshop, the code for the distributor. */
   readonly installer: string | null;
@@ -174,7 +184,12 @@ export type SheetView = {
   readonly rows: readonly EvidenceRowView[];
   readonly otherFiles: readonly EvidenceFileView[];
   readonly caseLine: CaseLine | null;
-  readonly revisions: readonly { readonly revision: number; readonly sentAt: string; readonly sentBy: string | null; readonly sha256: string }[];
+  readonly revisions: readonly {
+    readonly revision: number;
+    readonly sentAt: string;
+    readonly sentBy: string | null;
+    readonly sha256: string;
+  }[];
   readonly queries: readonly QueryView[];
   readonly verdicts: readonly VerdictView[];
   readonly flags: readonly FlagView[];

@@ -16,5 +16,9 @@ export const listMessages = (actor: Actor, number: string): Promise<MessageView[
        from claim_messages m join organisations o on o.id = m.author_organisation_id where m.claim_id = $1 order by m.at, m.id`,
       [claim.id],
     );
-    return said.map(({ audience, at, ...message }) => ({ ...message, isOwnOnly: audience === "own", at: at.toISOString() }));
+    return said.map(({ audience, at, ...message }) => ({
+      ...message,
+      isOwnOnly: audience === "own",
+      at: at.toISOString(),
+    }));
   });

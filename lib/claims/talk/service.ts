@@ -16,7 +16,16 @@ export const sayOnClaim = (actor: Actor, { number, body, audience }: Said) =>
       work,
       `insert into claim_messages (claim_id, seller_id, workshop_id, author_id, author_name, author_organisation_id, audience, body)
        values ($1, $2, $3, $4, $5, $6, $7, $8)`,
-      [claim.id, claim.sellerId, claim.workshopId, actor.userId, actor.name, actor.organisationId, audience, body],
+      [
+        claim.id,
+        claim.sellerId,
+        claim.workshopId,
+        actor.userId,
+        actor.name,
+        actor.organisationId,
+        audience,
+        body,
+      ],
     );
     return ok({ number });
   });

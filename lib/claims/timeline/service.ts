@@ -11,7 +11,11 @@ type Entry = {
 };
 
 /** Adds an entry nobody can change. Its number, its time and its place in the chain are the database's. */
-export const appendToTimeline = (work: Work, claim: Parties, { kind, detail = {}, onlyForId }: Entry): Promise<unknown> =>
+export const appendToTimeline = (
+  work: Work,
+  claim: Parties,
+  { kind, detail = {}, onlyForId }: Entry,
+): Promise<unknown> =>
   rows(
     work,
     `insert into timeline_entries (claim_id, seq, seller_id, workshop_id, kind, actor_id, actor_name,
@@ -31,5 +35,8 @@ export const appendToTimeline = (work: Work, claim: Parties, { kind, detail = {}
   );
 
 /** Notes in the organisation's own chain who did what: sign-ins, permissions, exports, refusals worth keeping. */
-export const appendToAudit = (work: Work, action: string, detail: Readonly<Record<string, unknown>> = {}): Promise<unknown> =>
-  rows(work, "select guarded.append_audit($1, $2)", [action, JSON.stringify(detail)]);
+export const appendToAudit = (
+  work: Work,
+  action: string,
+  detail: Readonly<Record<string, unknown>> = {},
+): Promise<unknown> => rows(work, "select guarded.append_audit($1, $2)", [action, JSON.stringify(detail)]);

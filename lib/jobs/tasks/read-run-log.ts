@@ -13,7 +13,13 @@ function summaryOf(bytes: Buffer, coilOhm: number | null): RunLogSummary {
   const parsed = parseRunLog(bytes);
   if (!parsed.ok) return { shape: 1, isRead: false, code: parsed.code, detail: parsed.detail };
   const analysis = analyseRun(parsed.value, coilOhm === null ? {} : { coil: { ohmAt20: coilOhm } });
-  return { shape: 1, isRead: true, log: thinnedLog(parsed.value), analysis, rowCount: parsed.value.timeS.length };
+  return {
+    shape: 1,
+    isRead: true,
+    log: thinnedLog(parsed.value),
+    analysis,
+    rowCount: parsed.value.timeS.length,
+  };
 }
 
 /** Reads a run log once, so that every page draws it without reading the file again. */

@@ -5,7 +5,15 @@ import { letterFor } from "@/lib/mail/letter";
 import { sendLetter } from "@/lib/mail/transport";
 import { log } from "@/lib/web/log";
 
-type Waiting = { id: string; kind: string; recipient: string; locale: string; params: Record<string, unknown>; request_id: string | null; tries: number };
+type Waiting = {
+  id: string;
+  kind: string;
+  recipient: string;
+  locale: string;
+  params: Record<string, unknown>;
+  request_id: string | null;
+  tries: number;
+};
 
 const AT_ONCE = 20;
 const MOST_TRIES = 8;
@@ -33,7 +41,13 @@ async function sendOne(client: PoolClient, mail: Waiting): Promise<void> {
          parked_at = case when tries + 1 >= $3 then now() end where id = $1`,
       [mail.id, String(fault).slice(0, 500), MOST_TRIES],
     );
-    log.warn({ event: "mailNotSent", mail: mail.id, kind: mail.kind, requestId: mail.request_id, fault: String(fault) });
+    log.warn({
+      event: "mailNotSent",
+      mail: mail.id,
+      kind: mail.kind,
+      requestId: mail.request_id,
+      fault: String(fault),
+    });
   }
 }
 

@@ -22,7 +22,10 @@ const made = async (original: Buffer): Promise<ViewCopy | null> => {
 /** Makes the copy of a photo that people look at. A file that is no picture stays as evidence and is said to be unreadable. */
 export const viewCopy: Task = async (payload, { query }) => {
   const { evidenceId } = payloadShape.parse(payload);
-  const { rows } = await query<FileRow>("select sha256, object_key, view_state from evidence_files where id = $1", [evidenceId]);
+  const { rows } = await query<FileRow>(
+    "select sha256, object_key, view_state from evidence_files where id = $1",
+    [evidenceId],
+  );
   const [file] = rows;
   if (!file || file.view_state !== "waiting") return;
   const copy = await made(await readAll(file.object_key, LIMITS.photoBytes));
@@ -32,10 +35,8 @@ export const viewCopy: Task = async (payload, { query }) => {
   }
   const key = viewKey(file.sha256);
   await putOnce(key, copy.jpeg, createHash("sha256").update(copy.jpeg).digest("base64"), "image/jpeg");
-  await query("update evidence_files set view_state = 'ready', view_key = $2, width_px = $3, height_px = $4 where id = $1", [
-    evidenceId,
-    key,
-    copy.widthPx,
-    copy.heightPx,
-  ]);
+  await query(
+    "update evidence_files set view_state = 'ready', view_key = $2, width_px = $3, height_px = $4 where id = $1",
+    [evidenceId, key, copy.widthPx, copy.heightPx],
+  );
 };

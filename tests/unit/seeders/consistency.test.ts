@@ -1,7 +1,7 @@
 import { createHash } from "node:crypto";
 import { describe, expect, it } from "vitest";
-import { storedDraft } from "@/lib/claims/draft";
-import { canonicalText, claimFacts } from "@/lib/claims/facts";
+import { storedDraft } from "@/lib/claims/draft-shape";
+import { canonicalText, claimFacts } from "@/lib/claims/facts-shape";
 import { CLAIM_STATES, holdsItsUnit, MOVES, VERDICT_OUTCOMES } from "@/lib/claims/lifecycle";
 import { REASONS } from "@/lib/claims/verdict";
 import { addDays, calendarDay } from "@/lib/kernel/calendar-day";

@@ -2,7 +2,7 @@ import { beforeAll, describe, expect, it } from "vitest";
 import { analyseRun } from "@/lib/evidence/run-analysis";
 import { parseRunLog } from "@/lib/evidence/run-log-parser";
 import { resistanceAt20, withinTolerance } from "@/lib/evidence/winding";
-import { claimFacts } from "@/lib/claims/facts";
+import { claimFacts } from "@/lib/claims/facts-shape";
 import { calendarDay } from "@/lib/kernel/calendar-day";
 import { storyOn, type Story } from "@/seeders/demo-story";
 import { isUnsent } from "@/seeders/claims/plots";

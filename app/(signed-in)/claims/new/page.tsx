@@ -20,15 +20,23 @@ type Search = { searchParams: Promise<{ serial?: string; way?: string }> };
 
 /** Starts with the serial: it answers most of what a claim would otherwise ask. */
 export default async function StartClaimPage({ searchParams }: Search) {
-  const [session, t, { serial = "", way }] = await Promise.all([requireSession(), getTranslations("start"), searchParams]);
+  const [session, t, { serial = "", way }] = await Promise.all([
+    requireSession(),
+    getTranslations("start"),
+    searchParams,
+  ]);
   if (!may(session, "startClaim")) notFound();
   const { actor } = session;
   const typed = serial.slice(0, 80);
   const answer = typed.trim() ? await lookUpSerial(actor, typed) : null;
   const units = answer && answer.kind !== "unknown" ? answer.units : [];
-  const found = await Promise.all(units.map(async (unit) => ({ unit, coverage: await previewCover(actor, unit) })));
+  const found = await Promise.all(
+    units.map(async (unit) => ({ unit, coverage: await previewCover(actor, unit) })),
+  );
   const isByHand = way === "hand" || answer?.kind === "unknown";
-  const [accounts, purchases] = isByHand ? await Promise.all([listAccountsWithParts(actor), listLinesWithoutSerial(actor)]) : [[], []];
+  const [accounts, purchases] = isByHand
+    ? await Promise.all([listAccountsWithParts(actor), listLinesWithoutSerial(actor)])
+    : [[], []];
   return (
     <>
       <PageHeader title={t("title")} />
@@ -36,9 +44,23 @@ export default async function StartClaimPage({ searchParams }: Search) {
         <Card isInCharge>
           <SerialSearch serial={typed} />
         </Card>
-        {answer ? <SerialResults kind={answer.kind} typed={typed} found={found} locale={actor.locale} start={startClaimAction} /> : null}
+        {answer ? (
+          <SerialResults
+            kind={answer.kind}
+            typed={typed}
+            found={found}
+            locale={actor.locale}
+            start={startClaimAction}
+          />
+        ) : null}
         {isByHand ? (
-          <HandPicker serial={typed} accounts={accounts} purchases={purchases} locale={actor.locale} start={startClaimAction} />
+          <HandPicker
+            serial={typed}
+            accounts={accounts}
+            purchases={purchases}
+            locale={actor.locale}
+            start={startClaimAction}
+          />
         ) : null}
       </div>
     </>

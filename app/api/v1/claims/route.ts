@@ -1,7 +1,6 @@
 import { z } from "zod";
 import { startClaim } from "@/lib/claims/filing/service";
 import { listOwnClaims, listReceivedClaims } from "@/lib/claims/lists/queries";
-import { presentList } from "@/lib/claims/lists/present";
 import { JUDGING_VIEWS, listQuery } from "@/lib/claims/lists/schema";
 import { draftStartInput } from "@/lib/claims/schema";
 import { ok } from "@/lib/kernel/outcome";
@@ -13,12 +12,14 @@ const side = z.enum(["received", "own"]).catch("own");
 export const GET = route({ name: "GET /claims" }, async ({ session, request }) => {
   const search = Object.fromEntries(new URL(request.url).searchParams);
   const query = listQuery.parse(search);
-  const isReceived = side.parse(search.side ?? (JUDGING_VIEWS.some((view) => view === query.view) ? "received" : "own")) === "received";
-  const list = await (isReceived ? listReceivedClaims : listOwnClaims)(session.actor, query);
-  return ok(presentList(list, query.page));
+  const isReceived =
+    side.parse(search.side ?? (JUDGING_VIEWS.some((view) => view === query.view) ? "received" : "own")) ===
+    "received";
+  return ok(await (isReceived ? listReceivedClaims : listOwnClaims)(session.actor, query));
 });
 
 /** Starts a draft once, however often the request is sent with the same key. */
-export const POST = route({ name: "POST /claims", body: draftStartInput, idempotent: true }, ({ session, body }) =>
-  startClaim(session.actor, body),
+export const POST = route(
+  { name: "POST /claims", body: draftStartInput, idempotent: true },
+  ({ session, body }) => startClaim(session.actor, body),
 );

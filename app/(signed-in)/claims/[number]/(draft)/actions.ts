@@ -1,7 +1,8 @@
 "use server";
 
 import { redirect } from "next/navigation";
-import { changeFromFields, draftChange } from "@/lib/claims/draft";
+import { changeFromFields } from "@/lib/claims/draft";
+import { draftChange } from "@/lib/claims/draft-shape";
 import { checkDraft } from "@/lib/claims/filing/queries";
 import { isUnread } from "@/lib/claims/filing/problems";
 import { addLine, discardDraft, removeLine, saveDraft } from "@/lib/claims/filing/service";
@@ -26,7 +27,8 @@ export async function saveStepAction(form: FormData): Promise<void> {
   if (!saved.ok) redirect(claimPath({ number }));
 
   const checked = await checkDraft(actor, number);
-  const unread = checked?.problems.some((problem) => problem.step === step && isUnread(problem.code)) ?? false;
+  const unread =
+    checked?.problems.some((problem) => problem.step === step && isUnread(problem.code)) ?? false;
   if (unread) redirect(`${draftStepPath({ number }, step)}?show=typed`);
   const next = form.get("go") === "check" ? "check" : (DRAFT_STEPS[DRAFT_STEPS.indexOf(step) + 1] ?? "check");
   redirect(draftStepPath({ number }, next));
@@ -54,7 +56,11 @@ export async function addLineAction(form: FormData): Promise<void> {
   await guardOrigin();
   const number = digitsOf(form);
   const added = await addLine(actor, number, String(form.get("unitId") ?? ""));
-  redirect(added.ok ? draftStepPath({ number }, "part") : `${draftStepPath({ number }, "part")}?refused=${added.code}`);
+  redirect(
+    added.ok
+      ? draftStepPath({ number }, "part")
+      : `${draftStepPath({ number }, "part")}?refused=${added.code}`,
+  );
 }
 
 export async function removeLineAction(form: FormData): Promise<void> {

@@ -34,13 +34,24 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
   if (!sheet) notFound();
   if (sheet.state === "draft") redirect(draftStepPath({ number: digits }, "part"));
   const colleagues = sheet.moves.includes("decide") ? await listColleagues(actor) : [];
-  const actions = { take: takeAction, takeOver: takeOverAction, putBack: putBackAction, park: parkAction, withdraw: withdrawAction };
+  const actions = {
+    take: takeAction,
+    takeOver: takeOverAction,
+    putBack: putBackAction,
+    park: parkAction,
+    withdraw: withdrawAction,
+  };
   const shared = { sheet, locale: actor.locale, timeZone: actor.timeZone };
   return (
     <>
       {sent && sheet.side === "workshop" ? <SentNote {...shared} /> : null}
       <SheetHead {...shared} />
-      <SheetActions sheet={sheet} base={claimPath({ number: digits })} colleagues={colleagues} actions={actions} />
+      <SheetActions
+        sheet={sheet}
+        base={claimPath({ number: digits })}
+        colleagues={colleagues}
+        actions={actions}
+      />
       <FlagList {...shared} />
       <CaseLineView {...shared} />
       <div className="grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
@@ -53,7 +64,12 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
           <ConditionCard {...shared} />
         </div>
         <div className="grid min-w-0 gap-6">
-          <Talk number={sheet.number} initial={sheet.messages} locale={actor.locale} timeZone={actor.timeZone} />
+          <Talk
+            number={sheet.number}
+            initial={sheet.messages}
+            locale={actor.locale}
+            timeZone={actor.timeZone}
+          />
           <Record {...shared} />
         </div>
       </div>

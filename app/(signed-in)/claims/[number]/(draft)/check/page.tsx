@@ -7,7 +7,7 @@ import { Button } from "@/components/ui/button";
 import { Card } from "@/components/ui/card";
 import { TextLink } from "@/components/ui/link-button";
 import { SubmitButton } from "@/components/ui/submit-button";
-import { draftSentences } from "@/lib/claims/filing/wording";
+import { draftSentences } from "@/lib/web/draft-wording";
 import { draftStepPath } from "@/lib/claims/paths";
 import { discardAction, sendAction } from "../actions";
 import { loadStep, type StepProps } from "../load-step";
@@ -34,7 +34,9 @@ export default async function CheckStepPage(props: StepProps) {
           <ul className="grid gap-2">
             {sentences.map((sentence) => (
               <li key={sentence.fieldId} id={sentence.fieldId}>
-                <TextLink href={`${draftStepPath(claim, sentence.step)}?show=all#${sentence.fieldId}`}>{sentence.text}</TextLink>
+                <TextLink href={`${draftStepPath(claim, sentence.step)}?show=all#${sentence.fieldId}`}>
+                  {sentence.text}
+                </TextLink>
               </li>
             ))}
           </ul>
@@ -42,7 +44,14 @@ export default async function CheckStepPage(props: StepProps) {
       ) : (
         <Banner kind="proven">{t("check.complete")}</Banner>
       )}
-      <CheckFacts number={claim.number} draft={draft} family={context.family} lines={context.lines} evidence={context.evidence} rows={context.rows} />
+      <CheckFacts
+        number={claim.number}
+        draft={draft}
+        family={context.family}
+        lines={context.lines}
+        evidence={context.evidence}
+        rows={context.rows}
+      />
       <form action={sendAction} className="grid gap-3">
         <input type="hidden" name="number" value={claim.number} />
         <input type="hidden" name="as" value={isAnswer ? "answer" : "file"} />

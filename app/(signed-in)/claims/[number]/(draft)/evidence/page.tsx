@@ -7,7 +7,7 @@ import { StepButtons } from "@/components/claims/step-buttons";
 import { StepHead } from "@/components/claims/step-head";
 import { Banner } from "@/components/ui/banner";
 import { findOpenQuery } from "@/lib/claims/filing/queries";
-import { draftSentences } from "@/lib/claims/filing/wording";
+import { draftSentences } from "@/lib/web/draft-wording";
 import { listEvidence } from "@/lib/evidence-files/queries";
 import { saveStepAction } from "../actions";
 import { loadStep, type StepProps } from "../load-step";
@@ -29,7 +29,12 @@ export default async function EvidenceStepPage(props: StepProps) {
   ]);
   return (
     <div className="grid max-w-2xl gap-6">
-      <StepHead number={claim.number} step="evidence" problems={sentences} isAnswer={claim.state === "answerNeeded"} />
+      <StepHead
+        number={claim.number}
+        step="evidence"
+        problems={sentences}
+        isAnswer={claim.state === "answerNeeded"}
+      />
       {query ? (
         <Banner kind="wanting" title={t("queryTitle")}>
           {query.question}

@@ -7,7 +7,7 @@ import { FaultFields } from "@/components/claims/fault-fields";
 import { StepButtons } from "@/components/claims/step-buttons";
 import { StepHead } from "@/components/claims/step-head";
 import { SwapFields } from "@/components/claims/swap-fields";
-import { draftSentences } from "@/lib/claims/filing/wording";
+import { draftSentences } from "@/lib/web/draft-wording";
 import { todayOf } from "@/lib/claims/judging/service";
 import { saveStepAction } from "../actions";
 import { loadStep, type StepProps } from "../load-step";
@@ -24,7 +24,12 @@ export default async function FaultStepPage(props: StepProps) {
   const sentences = await draftSentences(checked.problems, "fault", showsAll, session.actor.locale);
   return (
     <div className="grid max-w-2xl gap-6">
-      <StepHead number={claim.number} step="fault" problems={sentences} isAnswer={claim.state === "answerNeeded"} />
+      <StepHead
+        number={claim.number}
+        step="fault"
+        problems={sentences}
+        isAnswer={claim.state === "answerNeeded"}
+      />
       <Cautions family={context.family} />
       <DraftForm number={claim.number} action={saveStepAction} savedAt={checked.savedAt.toISOString()}>
         <input type="hidden" name="step" value="fault" />

@@ -7,7 +7,7 @@ import { StepButtons } from "@/components/claims/step-buttons";
 import { StepHead } from "@/components/claims/step-head";
 import { VehicleFields } from "@/components/claims/vehicle-fields";
 import { listInstallers, listUnitsOfDraft } from "@/lib/claims/filing/queries";
-import { draftSentences } from "@/lib/claims/filing/wording";
+import { draftSentences } from "@/lib/web/draft-wording";
 import { todayOf } from "@/lib/claims/judging/service";
 import { lookUpSerial } from "@/lib/parts/queries";
 import { addLineAction, removeLineAction, saveStepAction } from "../actions";
@@ -34,7 +34,12 @@ export default async function PartStepPage(props: StepProps & { searchParams: Pr
   const other = search.other?.trim() ? await lookUpSerial(actor, search.other.slice(0, 80)) : null;
   return (
     <div className="grid max-w-2xl gap-6">
-      <StepHead number={claim.number} step="part" problems={sentences} isAnswer={claim.state === "answerNeeded"} />
+      <StepHead
+        number={claim.number}
+        step="part"
+        problems={sentences}
+        isAnswer={claim.state === "answerNeeded"}
+      />
       <DraftForm number={claim.number} action={saveStepAction} savedAt={checked.savedAt.toISOString()}>
         <input type="hidden" name="step" value="part" />
         {draft.lines.map((line, place) => (

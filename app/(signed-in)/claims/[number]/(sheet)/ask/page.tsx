@@ -15,7 +15,11 @@ export async function generateMetadata(): Promise<Metadata> {
 
 /** One query for all that is missing; what is not given yet is ticked already. */
 export default async function AskPage({ params }: { params: Promise<{ number: string }> }) {
-  const [{ actor }, { number }, t] = await Promise.all([requireSession(), params, getTranslations("judging.ask")]);
+  const [{ actor }, { number }, t] = await Promise.all([
+    requireSession(),
+    params,
+    getTranslations("judging.ask"),
+  ]);
   const sheet = await findClaimSheet(actor, number.replace(/\D/gu, ""));
   if (!sheet?.moves.includes("ask")) notFound();
   const words = await getTranslations("evidence.rows");
@@ -26,7 +30,11 @@ export default async function AskPage({ params }: { params: Promise<{ number: st
         <AskForm
           action={askAction}
           number={sheet.number}
-          rows={sheet.rows.map((row) => ({ id: row.id, name: words(`${row.id}.name`), isMissing: row.state === "toDo" }))}
+          rows={sheet.rows.map((row) => ({
+            id: row.id,
+            name: words(`${row.id}.name`),
+            isMissing: row.state === "toDo",
+          }))}
           round={sheet.queries.length + 1}
           workshop={sheet.workshopName}
         />

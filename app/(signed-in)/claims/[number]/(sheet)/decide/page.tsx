@@ -17,12 +17,20 @@ export async function generateMetadata(): Promise<Metadata> {
 
 /** The verdict, line by line, with the cover of each beside it. It binds to the revision shown here. */
 export default async function DecidePage({ params }: { params: Promise<{ number: string }> }) {
-  const [{ actor }, { number }, t] = await Promise.all([requireSession(), params, getTranslations("judging.decide")]);
+  const [{ actor }, { number }, t] = await Promise.all([
+    requireSession(),
+    params,
+    getTranslations("judging.decide"),
+  ]);
   const sheet = await findClaimSheet(actor, number.replace(/\D/gu, ""));
   if (!sheet?.moves.includes("decide")) notFound();
   return (
     <>
-      <PageHeader eyebrow={`${sheet.number} · ${sheet.workshopName}`} title={t("title")} note={t("revision", { revision: sheet.revision })} />
+      <PageHeader
+        eyebrow={`${sheet.number} · ${sheet.workshopName}`}
+        title={t("title")}
+        note={t("revision", { revision: sheet.revision })}
+      />
       <CaseLineView sheet={sheet} locale={actor.locale} timeZone={actor.timeZone} />
       <div className="grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
         <DecideForm

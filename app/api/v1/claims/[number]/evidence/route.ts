@@ -2,7 +2,10 @@ import { listEvidenceOfClaim } from "@/lib/evidence-files/queries";
 import { ok, refuse } from "@/lib/kernel/outcome";
 import { route } from "@/lib/web/route";
 
-export const GET = route<{ number: string }>({ name: "GET /claims/{number}/evidence" }, async ({ session, params }) => {
-  const files = await listEvidenceOfClaim(session.actor, params.number.replace(/\D/gu, ""));
-  return files ? ok({ files }) : refuse("notFound");
-});
+export const GET = route<{ number: string }>(
+  { name: "GET /claims/{number}/evidence" },
+  async ({ session, params }) => {
+    const files = await listEvidenceOfClaim(session.actor, params.number.replace(/\D/gu, ""));
+    return files ? ok({ files }) : refuse("notFound");
+  },
+);

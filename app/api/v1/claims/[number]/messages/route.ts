@@ -13,6 +13,7 @@ export const GET = route<Params>({ name: "GET /claims/{number}/messages" }, asyn
   return messages ? ok({ messages }) : refuse("notFound");
 });
 
-export const POST = route<Params, typeof said>({ name: "POST /claims/{number}/messages", body: said }, ({ session, params, body }) =>
-  sayOnClaim(session.actor, { number: digits(params.number), ...body }),
+export const POST = route<Params, typeof said>(
+  { name: "POST /claims/{number}/messages", body: said },
+  ({ session, params, body }) => sayOnClaim(session.actor, { number: digits(params.number), ...body }),
 );

@@ -23,7 +23,9 @@ const factLine = z.strictObject({
   position: z.enum(["left", "right", "single"]),
   fittedOn: day.nullable(),
   installer: z.strictObject({ id: z.uuid(), code: z.string() }).nullable(),
-  replacement: z.strictObject({ serial: z.string(), unitId: z.uuid().nullable(), fittedOn: day.nullable() }).nullable(),
+  replacement: z
+    .strictObject({ serial: z.string(), unitId: z.uuid().nullable(), fittedOn: day.nullable() })
+    .nullable(),
   askedMinor: minor,
 });
 
@@ -61,7 +63,11 @@ export const claimFacts = z.strictObject({
   conditionNote: z.string(),
   earlierWork: z.string(),
   swap: z
-    .strictObject({ minutes: z.number().nullable(), abnormalHeat: z.boolean().nullable(), testDrive: z.boolean().nullable() })
+    .strictObject({
+      minutes: z.number().nullable(),
+      abnormalHeat: z.boolean().nullable(),
+      testDrive: z.boolean().nullable(),
+    })
     .nullable(),
   incident: z.strictObject({ note: z.string() }).nullable(),
   evidence: z.array(

@@ -1,14 +1,17 @@
 import "server-only";
 import { getTranslations } from "next-intl/server";
 import type { Locale } from "@/lib/kernel/locale";
-import type { DraftStep } from "../paths";
-import { isUnread } from "./problems";
-import type { DraftProblem } from "./read-draft";
+import type { DraftStep } from "@/lib/claims/paths";
+import { isUnread } from "@/lib/claims/filing/problems";
+import type { DraftProblem } from "@/lib/claims/filing/read-draft";
 
 /** A problem ready to be shown: beside its field and, in the same words, at the top of the page. */
 export type DraftSentence = { readonly fieldId: string; readonly step: DraftStep; readonly text: string };
 
-type Translate = { (key: string, values?: Record<string, string | number>): string; has(key: string): boolean };
+type Translate = {
+  (key: string, values?: Record<string, string | number>): string;
+  has(key: string): boolean;
+};
 
 /**
  * The sentences of one page of a draft. What was typed and cannot be read is always told; what is only missing is told
@@ -27,6 +30,8 @@ export async function draftSentences(
     .map((problem) => ({
       fieldId: problem.field,
       step: problem.step,
-      text: t.has(problem.code) ? t(problem.code, { ...problem.detail }) : readings(problem.code, { ...problem.detail }),
+      text: t.has(problem.code)
+        ? t(problem.code, { ...problem.detail })
+        : readings(problem.code, { ...problem.detail }),
     }));
 }

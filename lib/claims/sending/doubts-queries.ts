@@ -2,7 +2,7 @@ import "server-only";
 import { rows, type Work } from "@/lib/db/unit-of-work";
 import { normaliseSerial } from "@/lib/labels/serial";
 import type { Claim } from "@/models/claim";
-import type { ClaimFacts, FactLine } from "../facts";
+import type { ClaimFacts, FactLine } from "../facts-shape";
 
 type Doubt = { readonly kind: string; readonly detail: Readonly<Record<string, string>> };
 
@@ -10,7 +10,8 @@ type Doubt = { readonly kind: string; readonly detail: Readonly<Record<string, s
 export function doubtsOfDays(line: FactLine, failedOn: string): Doubt[] {
   const shippedOn = line.invoiceLine?.shippedOn;
   const doubts: Doubt[] = [];
-  if (shippedOn && shippedOn > failedOn) doubts.push({ kind: "shippedAfterFailure", detail: { shippedOn, failedOn } });
+  if (shippedOn && shippedOn > failedOn)
+    doubts.push({ kind: "shippedAfterFailure", detail: { shippedOn, failedOn } });
   if (shippedOn && line.fittedOn && line.fittedOn < shippedOn)
     doubts.push({ kind: "fittedBeforeShipment", detail: { shippedOn, fittedOn: line.fittedOn } });
   return doubts;
@@ -23,8 +24,17 @@ export function doubtsOfDays(line: FactLine, failedOn: string): Doubt[] {
 export async function flagDoubts(work: Work, claim: Claim, facts: ClaimFacts): Promise<void> {
   for (const line of facts.lines) {
     for (const doubt of doubtsOfDays(line, facts.failedOn))
-      await rows(work, "select guarded.flag_claim($1, $2, $3, $4)", [claim.id, line.lineNumber, doubt.kind, JSON.stringify(doubt.detail)]);
+      await rows(work, "select guarded.flag_claim($1, $2, $3, $4)", [
+        claim.id,
+        line.lineNumber,
+        doubt.kind,
+        JSON.stringify(doubt.detail),
+      ]);
     if (!line.unit && line.serialTyped)
-      await rows(work, "select guarded.flag_serial($1, $2, $3)", [claim.id, line.lineNumber, normaliseSerial(line.serialTyped)]);
+      await rows(work, "select guarded.flag_serial($1, $2, $3)", [
+        claim.id,
+        line.lineNumber,
+        normaliseSerial(line.serialTyped),
+      ]);
   }
 }

@@ -3,7 +3,7 @@ import { rows, type Work } from "@/lib/db/unit-of-work";
 import { normaliseSerial } from "@/lib/labels/serial";
 import type { Claim } from "@/models/claim";
 import type { ClaimDraft } from "../draft";
-import type { ClaimFacts, FactLine } from "../facts";
+import type { ClaimFacts, FactLine } from "../facts-shape";
 
 /** The vehicle of that frame serial at this workshop, made on first sight. */
 async function keepVehicle(work: Work, facts: ClaimFacts): Promise<string | null> {
@@ -13,7 +13,12 @@ async function keepVehicle(work: Work, facts: ClaimFacts): Promise<string | null
      on conflict (workshop_id, frame_serial_normal)
        do update set model = case when excluded.model = '' then vehicles.model else excluded.model end
      returning id`,
-    [work.actor.organisationId, facts.vehicle.frameSerial, normaliseSerial(facts.vehicle.frameSerial), facts.vehicle.model],
+    [
+      work.actor.organisationId,
+      facts.vehicle.frameSerial,
+      normaliseSerial(facts.vehicle.frameSerial),
+      facts.vehicle.model,
+    ],
   );
   return vehicle?.id ?? null;
 }
@@ -21,10 +26,11 @@ async function keepVehicle(work: Work, facts: ClaimFacts): Promise<string | null
 /** A name typed for the first time becomes an installer of the workshop, under a code that says nothing about the person. */
 async function keepInstaller(work: Work, name: string): Promise<string | null> {
   if (name.trim() === "") return null;
-  const [known] = await rows<{ id: string }>(work, "select id from installers where workshop_id = $1 and lower(name) = lower($2)", [
-    work.actor.organisationId,
-    name.trim(),
-  ]);
+  const [known] = await rows<{ id: string }>(
+    work,
+    "select id from installers where workshop_id = $1 and lower(name) = lower($2)",
+    [work.actor.organisationId, name.trim()],
+  );
   if (known) return known.id;
   const [made] = await rows<{ id: string }>(
     work,
@@ -36,7 +42,14 @@ async function keepInstaller(work: Work, name: string): Promise<string | null> {
   return made?.id ?? null;
 }
 
-type Fitting = { unitId: string; vehicleId: string | null; position: string; fittedOn: string; removedOn: string | null; installerId: string | null };
+type Fitting = {
+  unitId: string;
+  vehicleId: string | null;
+  position: string;
+  fittedOn: string;
+  removedOn: string | null;
+  installerId: string | null;
+};
 
 /** The unit's fitting in this workshop: the running one is corrected, otherwise a new one begins. */
 async function keepFitting(work: Work, sellerId: string, fitting: Fitting): Promise<string | null> {
@@ -76,7 +89,12 @@ const removalOf = (line: FactLine, facts: ClaimFacts): string | null =>
  * Keeps what a claim tells about units in service: the vehicle, who fitted the part and when, and that the replacement's
  * own life has begun. Later claims and the life data of the part start from these.
  */
-export async function recordService(work: Work, claim: Claim, facts: ClaimFacts, draft: ClaimDraft): Promise<void> {
+export async function recordService(
+  work: Work,
+  claim: Claim,
+  facts: ClaimFacts,
+  draft: ClaimDraft,
+): Promise<void> {
   const vehicleId = await keepVehicle(work, facts);
   await rows(work, "update claims set vehicle_id = $2 where id = $1 returning id", [claim.id, vehicleId]);
   for (const line of facts.lines) {
