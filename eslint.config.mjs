@@ -3,7 +3,10 @@ import nextTypescript from "eslint-config-next/typescript";
 import tseslint from "typescript-eslint";
 
 // `lib` has two kinds of files: pure ones, and those that touch the world. Only the latter may ask the clock or the dice.
-const EDGES = ["lib/**/{queries,service,present,report,*-queries,*-service,*-present}.ts", "lib/{db,web,storage,mail,documents,jobs}/**"];
+const EDGES = [
+  "lib/**/{queries,service,present,report,*-queries,*-service,*-present}.ts",
+  "lib/{db,web,storage,mail,documents,jobs}/**",
+];
 
 /** The places where a type may be asserted: brands are minted there, or a row becomes a typed thing. */
 const ASSERTING = ["lib/kernel/**", "lib/db/**", "lib/web/session.ts", "models/**", "tests/support/**"];
@@ -162,6 +165,15 @@ const config = [
     name: "house/off-screen",
     files: ["{lib,models,migrations,seeders,tests,docker-free-scripts}/**/*.{ts,mjs}"],
     rules: offScreen,
+  },
+  {
+    // A command is read from top to bottom, step after step, and what it starts is told much.
+    name: "house/commands",
+    files: ["docker-free-scripts/**"],
+    rules: {
+      "max-params": ["error", 5],
+      "max-lines-per-function": ["error", { max: 110, skipBlankLines: true, skipComments: true }],
+    },
   },
   {
     // Statements about roles and databases take no bound values, and nothing a person typed comes near them.

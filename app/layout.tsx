@@ -44,7 +44,6 @@ export default async function RootLayout({ children }: { children: ReactNode }) 
       className={fontVariables}
       suppressHydrationWarning
     >
-      <head>{nonce ? <meta property="csp-nonce" content={nonce} /> : null}</head>
       <body>
         <NextIntlClientProvider messages={inBrowser}>
           <UiRoot locale={locale} nonce={nonce} preferredTheme={session?.theme}>

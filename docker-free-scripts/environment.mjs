@@ -104,8 +104,9 @@ export function environmentFor({ secrets, ports, folder, database = "partproof" 
 
 /** What one process gets of it: the web never holds the worker's or the owner's keys to the database. */
 export function only(environment, role) {
-  const { DATABASE_URL_ADMIN, DATABASE_URL_MIGRATOR, DATABASE_URL_WEB, DATABASE_URL_WORKER, ...shared } =
-    environment;
-  const database = { web: DATABASE_URL_WEB, worker: DATABASE_URL_WORKER }[role];
+  const shared = Object.fromEntries(
+    Object.entries(environment).filter(([name]) => !name.startsWith("DATABASE_URL_")),
+  );
+  const database = { web: environment.DATABASE_URL_WEB, worker: environment.DATABASE_URL_WORKER }[role];
   return { ...process.env, ...shared, DATABASE_URL: database, PROCESS_NAME: role };
 }

@@ -1,14 +1,13 @@
-/** The first claim of a view, as the person signed in sees it; null where there is none. */
-const firstOf = async (page, side, view) => {
-  const answer = await page.request.get(`/api/v1/claims?side=${side}&view=${view}`);
-  return answer.ok() ? ((await answer.json()).items[0]?.number ?? null) : null;
-};
+/** The first claim of a view (with one of these marks), as the person signed in sees it, and a page of it. */
 const claim =
-  (side, view, rest = "") =>
+  (side, view, { marks = null, rest = "" } = {}) =>
   async (page) => {
-    const number = await firstOf(page, side, view);
-    return number && `/claims/${number}${rest}`;
+    const answer = await page.request.get(`/api/v1/claims?side=${side}&view=${view}`);
+    const { items } = answer.ok() ? await answer.json() : { items: [] };
+    const found = items.find(({ mark }) => marks === null || marks.includes(mark));
+    return found && `/claims/${found.number}${rest}`;
   };
+const draft = (step) => claim("own", "onUs", { marks: ["draft"], rest: `/${step}` });
 
 /** Every screen by the person who lives in it. A path may be found out first; what has no claim to show is left out. */
 export const SCREENS = [
@@ -28,15 +27,16 @@ export const SCREENS = [
     screens: {
       today: "/workshop-today",
       "start-a-claim": "/claims/new",
-      "serial-found": "/claims/new?q=OSB7",
+      "serial-found": "/claims/new?q=R2614661KM",
       "serial-unknown": "/claims/new?q=ZZZZ9999",
-      "draft-part": claim("own", "drafts", "/part"),
-      "draft-fault": claim("own", "drafts", "/fault"),
-      "draft-evidence": claim("own", "drafts", "/evidence"),
-      "draft-check": claim("own", "drafts", "/check"),
-      "claim-answer-needed": claim("own", "onUs"),
+      "draft-part": draft("part"),
+      "draft-fault": draft("fault"),
+      "draft-evidence": draft("evidence"),
+      "draft-check": draft("check"),
+      "claim-answer-needed": claim("own", "onUs", { marks: ["answerNeeded"] }),
       "claim-with-the-distributor": claim("own", "onThem"),
-      "claim-decided": claim("own", "decided"),
+      "claim-upheld": claim("own", "decided", { marks: ["upheld", "upheldInPart"] }),
+      "claim-declined": claim("own", "decided", { marks: ["declined"] }),
       "nothing-found": "/workshop-today?view=all&q=nothing-like-it",
       account: "/account",
       help: "/help",
@@ -47,11 +47,11 @@ export const SCREENS = [
     email: "ada.merrow@larkmoor.example",
     screens: {
       "to-judge": "/judging",
-      "to-judge-mine": "/judging?view=mine",
+      "to-judge-mine": "/judging?view=held",
       "claim-filed": claim("received", "toJudge"),
-      "claim-in-hand": claim("received", "mine"),
-      ask: claim("received", "mine", "/ask"),
-      decide: claim("received", "mine", "/decide"),
+      "claim-in-hand": claim("received", "held"),
+      ask: claim("received", "held", { rest: "/ask" }),
+      decide: claim("received", "held", { rest: "/decide" }),
       "claim-decided": claim("received", "decided"),
       "rule-book": "/rule-book",
     },

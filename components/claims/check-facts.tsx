@@ -1,13 +1,11 @@
 import { useTranslations } from "next-intl";
-import type { ReactNode } from "react";
-import { Card } from "@/components/ui/card";
-import { Fact, Facts } from "@/components/ui/facts";
-import { TextLink } from "@/components/ui/link-button";
+import { Fact } from "@/components/ui/facts";
 import { Serial } from "@/components/ui/serial";
 import type { ClaimDraft } from "@/lib/claims/draft";
-import { draftStepPath, type DraftStep } from "@/lib/claims/paths";
 import type { PartFamily } from "@/lib/parts/family";
 import type { EvidenceRow } from "@/lib/rule-book/evidence-list-shape";
+import { CheckCard, Given } from "./check-card";
+import { CheckLine } from "./check-line";
 
 type CheckFactsProps = {
   number: string;
@@ -19,97 +17,89 @@ type CheckFactsProps = {
 };
 
 /** Everything that goes out, read once more; each card leads back to its page in one press. */
-export function CheckFacts({ number, draft, family, lines, evidence, rows }: CheckFactsProps) {
-  const t = useTranslations("draft");
-  const words = useTranslations("families");
-  const evidenceWords = useTranslations("evidence.rows");
-  const given = (text: ReactNode) => text || <span className="text-ink-3">{t("check.notGiven")}</span>;
-  const sheet = (step: DraftStep, children: ReactNode) => (
-    <Card
-      title={t(`steps.${step}`)}
-      actions={
-        <TextLink href={draftStepPath({ number }, step)}>
-          {t("check.change", { step: t(`steps.${step}`) })}
-        </TextLink>
-      }
-    >
-      <Facts>{children}</Facts>
-    </Card>
-  );
-  const symptom = family.symptoms.find(({ code }) => code === draft.symptom);
+export function CheckFacts(props: CheckFactsProps) {
   return (
     <>
-      {sheet(
-        "part",
-        <>
-          {draft.lines.map((line, place) => (
-            <Fact key={line.unitId ?? place} term={lines[place]?.part.name ?? t("line.unknownPart")}>
-              {line.serial ? (
-                <Serial value={line.serial} />
-              ) : (
-                t("check.quantity", { quantity: line.quantity })
-              )}
-              <span className="block text-small text-ink-2">
-                {t("check.fitting", {
-                  day: line.fittedOn || t("check.notGiven"),
-                  by: line.installer || t("check.notGiven"),
-                })}
-              </span>
-              {line.replacementSerial ? (
-                <span className="block text-small text-ink-2">
-                  {t("check.replacement", {
-                    serial: line.replacementSerial,
-                    day: line.replacementFittedOn || t("check.notGiven"),
-                  })}
-                </span>
-              ) : null}
-            </Fact>
-          ))}
-          <Fact term={t("vehicle.frameSerial")}>
-            {given(draft.frameSerial && <Serial value={draft.frameSerial} />)}
-          </Fact>
-          <Fact term={t("vehicle.repairedOn")}>{given(draft.repairedOn)}</Fact>
-        </>,
-      )}
-      {sheet(
-        "fault",
-        <>
-          <Fact term={t("fault.symptom")}>
-            {given(symptom && words(`${family.code}.symptoms.${symptom.code}`))}
-          </Fact>
-          <Fact term={t("fault.failedOn")}>{given(draft.failedOn)}</Fact>
-          <Fact term={t("fault.note")}>{given(draft.note)}</Fact>
-          <Fact term={t("exclusion.ruledOutTitle")}>
-            {given(
-              Object.keys(draft.ruledOut)
-                .filter((item) => family.ruledOut.includes(item))
-                .map((item) => words(`${family.code}.ruledOut.${item}`))
-                .join("; "),
-            )}
-          </Fact>
-          <Fact term={t("exclusion.earlierWork")}>{given(draft.earlierWork)}</Fact>
-          <Fact term={t("fault.incident")}>{given(draft.incident && t(`fault.${draft.incident}`))}</Fact>
-        </>,
-      )}
-      {sheet(
-        "evidence",
-        rows
-          .filter((row) => row.need !== "notNeeded")
-          .map((row) => (
-            <Fact key={row.id} term={evidenceWords(`${row.id}.name`)}>
-              {given(
-                draft.readings[row.id]?.raw ||
-                  draft.answers[row.id] ||
-                  evidence
-                    .filter((file) => file.rowId === row.id)
-                    .map((file) => file.originalName)
-                    .join(", ") ||
-                  (draft.cannotGet[row.id] &&
-                    t("check.cannotGet", { reason: draft.cannotGet[row.id] ?? "" })),
-              )}
-            </Fact>
-          )),
-      )}
+      <PartFacts {...props} />
+      <FaultFacts {...props} />
+      <EvidenceFacts {...props} />
     </>
+  );
+}
+
+function PartFacts({ number, draft, lines }: CheckFactsProps) {
+  const t = useTranslations("draft");
+  return (
+    <CheckCard number={number} step="part">
+      {draft.lines.map((line, place) => (
+        <Fact key={line.unitId ?? place} term={lines[place]?.part.name ?? t("line.unknownPart")}>
+          <CheckLine line={line} />
+        </Fact>
+      ))}
+      <Fact term={t("vehicle.frameSerial")}>
+        <Given>{draft.frameSerial && <Serial value={draft.frameSerial} />}</Given>
+      </Fact>
+      <Fact term={t("vehicle.repairedOn")}>
+        <Given>{draft.repairedOn}</Given>
+      </Fact>
+    </CheckCard>
+  );
+}
+
+function FaultFacts({ number, draft, family }: CheckFactsProps) {
+  const t = useTranslations("draft");
+  const words = useTranslations("families");
+  const symptom = family.symptoms.find(({ code }) => code === draft.symptom);
+  const ruledOut = Object.keys(draft.ruledOut)
+    .filter((item) => family.ruledOut.includes(item))
+    .map((item) => words(`${family.code}.ruledOut.${item}`))
+    .join("; ");
+  return (
+    <CheckCard number={number} step="fault">
+      <Fact term={t("fault.symptom")}>
+        <Given>{symptom && words(`${family.code}.symptoms.${symptom.code}`)}</Given>
+      </Fact>
+      <Fact term={t("fault.failedOn")}>
+        <Given>{draft.failedOn}</Given>
+      </Fact>
+      <Fact term={t("fault.note")}>
+        <Given>{draft.note}</Given>
+      </Fact>
+      <Fact term={t("exclusion.ruledOutTitle")}>
+        <Given>{ruledOut}</Given>
+      </Fact>
+      <Fact term={t("exclusion.earlierWork")}>
+        <Given>{draft.earlierWork}</Given>
+      </Fact>
+      <Fact term={t("fault.incident")}>
+        <Given>{draft.incident && t(`fault.${draft.incident}`)}</Given>
+      </Fact>
+    </CheckCard>
+  );
+}
+
+function EvidenceFacts({ number, draft, evidence, rows }: CheckFactsProps) {
+  const t = useTranslations("draft.check");
+  const words = useTranslations("evidence.rows");
+  const namesOf = (rowId: string) =>
+    evidence
+      .filter((file) => file.rowId === rowId)
+      .map((file) => file.originalName)
+      .join(", ");
+  return (
+    <CheckCard number={number} step="evidence">
+      {rows
+        .filter((row) => row.need !== "notNeeded")
+        .map(({ id }) => (
+          <Fact key={id} term={words(`${id}.name`)}>
+            <Given>
+              {draft.readings[id]?.raw ||
+                draft.answers[id] ||
+                namesOf(id) ||
+                (draft.cannotGet[id] && t("cannotGet", { reason: draft.cannotGet[id] ?? "" }))}
+            </Given>
+          </Fact>
+        ))}
+    </CheckCard>
   );
 }

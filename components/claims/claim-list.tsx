@@ -2,7 +2,6 @@
 
 import { useQuery } from "@tanstack/react-query";
 import { createColumnHelper, tableFeatures, useTable } from "@tanstack/react-table";
-import type { Route } from "next";
 import { useTranslations } from "next-intl";
 import { useMemo } from "react";
 import { fetchJson } from "@/components/live/fetch-json";
@@ -25,7 +24,7 @@ type Query = { view: string; order: string; q: string; page: number };
 type Reader = { locale: Locale; timeZone: string };
 type ClaimListProps = Reader & {
   path: "/judging" | "/workshop-today";
-  views: readonly string[];
+  views: readonly (keyof ClaimItems["counts"])[];
   query: Query;
   initial: ClaimItems;
   side: "workshop" | "distributor";
@@ -36,14 +35,18 @@ const helper = createColumnHelper<typeof features, ClaimItem>();
 const REFRESH_MS = 20_000;
 
 /** The address of the list in another state; what is usual stays out of it. */
-function addressOf(path: string, query: Query, change: Partial<Query>): Route {
+function addressOf<Path extends string>(
+  path: Path,
+  query: Query,
+  change: Partial<Query>,
+): `${Path}?${string}` {
   const next = { ...query, page: 1, ...change };
   const search = new URLSearchParams();
   search.set("view", next.view);
   if (next.order !== "urgent") search.set("order", next.order);
   if (next.q) search.set("q", next.q);
   if (next.page > 1) search.set("page", String(next.page));
-  return `${path}?${search.toString()}` as Route;
+  return `${path}?${search.toString()}`;
 }
 
 const isItems = (value: unknown): value is ClaimItems =>
@@ -97,9 +100,7 @@ function ListHead({ path, views, query, list, side }: ClaimListProps & { list: C
                 aria-current={view === query.view ? "true" : undefined}
               >
                 {t(`${side}.${view}`)}{" "}
-                <span className="text-ink-2 tabular-nums">
-                  {list.counts[view as keyof ClaimItems["counts"]] ?? ""}
-                </span>
+                <span className="text-ink-2 tabular-nums">{list.counts[view] ?? ""}</span>
               </LinkButton>
             </li>
           ))}
@@ -197,7 +198,7 @@ function ClaimRow({
   return (
     <Row>
       <RowHead>
-        <TextLink href={`/claims/${item.number}` as Route}>
+        <TextLink href={`/claims/${item.number}`}>
           <span className="font-mono">{item.number}</span>
         </TextLink>
       </RowHead>

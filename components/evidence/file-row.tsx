@@ -2,7 +2,7 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { useTranslations } from "next-intl";
-import { useCallback, useId, useState } from "react";
+import { useId } from "react";
 import { useDropzone } from "react-dropzone";
 import { fetchJson } from "@/components/live/fetch-json";
 import { Button } from "@/components/ui/button";
@@ -10,7 +10,7 @@ import { buttonStyle } from "@/components/ui/button-style";
 import { UploadRow } from "@/components/ui/upload-row";
 import type { EvidenceFileItem } from "./file-item";
 import { SentFile } from "./sent-file";
-import { faultOf, sendFile, type Upload } from "./upload";
+import { useSending, type Sending } from "./use-sending";
 
 type FileRowProps = {
   claimId: string;
@@ -18,14 +18,6 @@ type FileRowProps = {
   rowId: string;
   kind: "photo" | "runLog" | "document";
   files: readonly EvidenceFileItem[];
-};
-
-type Sending = {
-  id: string;
-  file: File;
-  percent: number;
-  fault: { sentence: string | null; canRetry: boolean } | null;
-  upload: Upload | null;
 };
 
 const ACCEPT = {
@@ -39,8 +31,9 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
   const t = useTranslations("live.files");
   const client = useQueryClient();
   const inputId = useId();
-  const [sending, setSending] = useState<readonly Sending[]>([]);
   const key = ["evidence", number];
+  const onSent = () => client.invalidateQueries({ queryKey: key });
+  const { sending, take, retry, drop } = useSending({ claimId, rowId, kind }, onSent);
   const live = useQuery({
     queryKey: key,
     queryFn: () => fetchJson(`/api/v1/claims/${number}/evidence`),
@@ -53,35 +46,9 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
   const shown = live.data ? live.data.filter((file) => file.rowId === rowId) : files;
   const withdraw = useMutation({
     mutationFn: (id: string) => fetchJson(`/api/v1/evidence/${id}`, { method: "DELETE" }),
-    onSuccess: () => client.invalidateQueries({ queryKey: key }),
+    onSuccess: onSent,
   });
 
-  const change = useCallback(
-    (id: string, next: Partial<Sending>) =>
-      setSending((all) => all.map((one) => (one.id === id ? { ...one, ...next } : one))),
-    [],
-  );
-  const send = (id: string, file: File) => {
-    const upload = sendFile(file, { claimId, rowId, kind }, (percent) => change(id, { percent }));
-    change(id, { upload, fault: null, percent: 0 });
-    upload.done
-      .then(async () => {
-        await client.invalidateQueries({ queryKey: key });
-        setSending((all) => all.filter((one) => one.id !== id));
-      })
-      .catch((reason: unknown) => change(id, { fault: faultOf(reason), upload: null }));
-  };
-  const take = (chosen: readonly File[]) => {
-    const added = chosen.map((file) => ({
-      id: crypto.randomUUID(),
-      file,
-      percent: 0,
-      fault: null,
-      upload: null,
-    }));
-    setSending((all) => [...all, ...added]);
-    for (const { id, file } of added) send(id, file);
-  };
   const { getRootProps, isDragActive } = useDropzone({ onDrop: take, noClick: true, noKeyboard: true });
 
   return (
@@ -103,16 +70,7 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
               state={one.fault ? "failed" : one.upload ? "sending" : "waiting"}
               percent={one.percent}
               note={one.fault ? (one.fault.sentence ?? t("interrupted")) : undefined}
-              action={
-                <RowAction
-                  sending={one}
-                  onRetry={() => send(one.id, one.file)}
-                  onDrop={() => {
-                    one.upload?.cancel();
-                    setSending((all) => all.filter(({ id }) => id !== one.id));
-                  }}
-                />
-              }
+              action={<RowAction sending={one} onRetry={() => retry(one)} onDrop={() => drop(one)} />}
             />
           ))}
         </ul>

@@ -1,3 +1,4 @@
+import { keysOf } from "@/lib/kernel/keys";
 import { type Role } from "./roles";
 
 /** What a person may do besides the moves of a claim. The same table draws the navigation and guards the services. */
@@ -43,4 +44,4 @@ export function hasRight(roles: ReadonlySet<Role>, right: Right, organisation: O
 
 /** Every right of a person, for drawing the navigation. */
 export const rightsOf = (roles: ReadonlySet<Role>, organisation: Organisation): Right[] =>
-  (Object.keys(RIGHTS) as Right[]).filter((right) => hasRight(roles, right, organisation));
+  keysOf(RIGHTS).filter((right) => hasRight(roles, right, organisation));

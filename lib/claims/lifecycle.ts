@@ -1,4 +1,5 @@
 import type { Role } from "@/lib/access/roles";
+import { keysOf } from "@/lib/kernel/keys";
 
 /*
  * Words. unit: one physical part · part: a catalogue item · family: brake, motor, ... · batch: the maker's lot ·
@@ -112,4 +113,4 @@ const isOpenTo = (mover: Mover, claim: ClaimParties, name: ClaimMove): boolean =
 
 /** Draws the buttons and guards the services: one answer for both. */
 export const movesOpenTo = (mover: Mover, claim: ClaimParties): ClaimMove[] =>
-  (Object.keys(MOVES) as ClaimMove[]).filter((name) => isOpenTo(mover, claim, name));
+  keysOf(MOVES).filter((name) => isOpenTo(mover, claim, name));

@@ -17,10 +17,10 @@ const sqlState = (fault: unknown): string | undefined => {
   return undefined;
 };
 
-const setContext = (transaction: Transaction, actorId: string, organisationId: string, requestId: string) =>
+const setContext = (transaction: Transaction, { userId, organisationId, requestId }: Actor) =>
   sequelize.query(
     `select set_config('app.actor_id', $1, true), set_config('app.organisation_id', $2, true), set_config('app.request_id', $3, true)`,
-    { bind: [actorId, organisationId, requestId], transaction, type: QueryTypes.SELECT },
+    { bind: [userId, organisationId, requestId], transaction, type: QueryTypes.SELECT },
   );
 
 /**
@@ -32,7 +32,7 @@ export async function unitOfWork<T>(actor: Actor, act: (work: Work) => Promise<T
   for (let attempt = 1; ; attempt += 1) {
     try {
       return await sequelize.transaction(async (transaction) => {
-        await setContext(transaction, actor.userId, actor.organisationId, actor.requestId);
+        await setContext(transaction, actor);
         return act({ transaction, actor });
       });
     } catch (fault) {

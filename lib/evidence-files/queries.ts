@@ -37,11 +37,7 @@ const findEvidence = (actor: Actor, id: string): Promise<EvidenceRow | null> =>
   });
 
 /** The original, byte for byte, to be kept and never shown by a browser; null where there is none for this reader. */
-export async function openOriginal(
-  actor: Actor,
-  id: string,
-  range: string | null,
-): Promise<Response | null> {
+export async function openOriginal(actor: Actor, id: string, range: string | null): Promise<Response | null> {
   const file = await findEvidence(actor, id);
   if (!file) return null;
   const { objectKey: key, mediaType: contentType, originalName: name } = file;

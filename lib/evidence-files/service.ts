@@ -75,13 +75,9 @@ const readCaptured = (text: string | undefined): unknown => {
   }
 };
 
-async function insertRow(
-  work: Work,
-  claim: ClaimRow,
-  to: Target,
-  file: Received,
-  capturedText: string | undefined,
-) {
+type Arrived = { to: Target; file: Received; capturedText: string | undefined };
+
+async function insertRow(work: Work, claim: ClaimRow, { to, file, capturedText }: Arrived) {
   const isPhoto = to.kind === "photo";
   const [made] = await rows<{ id: string }>(
     work,
@@ -124,14 +120,14 @@ async function insertRow(
 }
 
 /** Files the received bytes under their content and notes them on the claim, in one transaction under the claim's lock. */
-const keep = (actor: Actor, to: Target, file: Received, capturedText: string | undefined) =>
+const keep = (actor: Actor, arrived: Arrived) =>
   undoing<ReturnType<typeof presentEvidence>, EvidenceRefusal>(actor, async (work) => {
-    const claim = await openClaim(work, to.claimId);
+    const claim = await openClaim(work, arrived.to.claimId);
     if (!claim.ok) return claim;
-    const space = room(claim.value, file.sizeBytes);
+    const space = room(claim.value, arrived.file.sizeBytes);
     if (!space.ok) return space;
-    const row = await insertRow(work, claim.value, to, file, capturedText);
-    return row ? ok(presentEvidence(row)) : refuse("uploadBroken", { name: file.name });
+    const row = await insertRow(work, claim.value, arrived);
+    return row ? ok(presentEvidence(row)) : refuse("uploadBroken", { name: arrived.file.name });
   });
 
 /**
@@ -145,7 +141,7 @@ export async function receiveEvidence(actor: Actor, request: Request) {
   try {
     const to = target.parse(file.fields);
     await copyOnce(file.quarantine, originalKey(file.sha256));
-    return await keep(actor, to, file, file.fields.captured);
+    return await keep(actor, { to, file, capturedText: file.fields.captured });
   } finally {
     await remove(file.quarantine).catch(() => undefined);
   }

@@ -1,4 +1,4 @@
-import { step, type Step } from "@/lib/kernel/explanation";
+import { citing, step, type Step } from "@/lib/kernel/explanation";
 
 /** A computed figure with the step that explains it. The value is not rounded; the step prints it rounded once. */
 export type Figure = { readonly value: number; readonly step: Step };
@@ -14,7 +14,7 @@ type Explained = {
 /** A figure printed with the given number of decimals in its explanation. */
 export const figure = ({ rule, value, decimals, input, source }: Explained): Figure => ({
   value,
-  step: step(rule, value.toFixed(decimals), input, source),
+  step: citing(source, step(rule, value.toFixed(decimals), input)),
 });
 
 /** Rounds for an explanation's placeholder; never used for the figure itself. */

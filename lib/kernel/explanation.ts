@@ -10,5 +10,13 @@ export type Step = {
   readonly source?: string;
 };
 
-export const step = (rule: string, result: string, input: Step["input"] = {}, source?: string): Step =>
-  source === undefined ? { rule, input, result } : { rule, input, result, source };
+/** A step whose rule rests on nothing that has to be named. */
+export const step = (rule: string, result: string, input: Step["input"] = {}): Step => ({
+  rule,
+  input,
+  result,
+});
+
+/** The same step with what its rule comes from; as it was where nothing is named. */
+export const citing = (source: string | undefined, uncited: Step): Step =>
+  source === undefined ? uncited : { ...uncited, source };

@@ -1,5 +1,5 @@
 import "server-only";
-import { createTranslator } from "use-intl/core";
+import { createTranslator, type Messages as AnyMessages } from "use-intl/core";
 import { parseCalendarDay } from "@/lib/kernel/calendar-day";
 import { formatDay } from "@/lib/kernel/format";
 import { formatTag, type Locale } from "@/lib/kernel/locale";
@@ -23,12 +23,14 @@ function valuesOf(params: Readonly<Record<string, unknown>>, locale: Locale): Va
   return values;
 }
 
-const htmlPage = (
-  locale: Locale,
-  subject: string,
-  paragraphs: readonly string[],
-  link: { href: string; label: string } | null,
-) => `<!doctype html>
+type Page = {
+  readonly locale: Locale;
+  readonly subject: string;
+  readonly paragraphs: readonly string[];
+  readonly link: { readonly href: string; readonly label: string } | null;
+};
+
+const htmlPage = ({ locale, subject, paragraphs, link }: Page) => `<!doctype html>
 <html lang="${formatTag(locale)}"><head><meta charset="utf-8"><meta name="color-scheme" content="light dark"><title>${escapeHtml(subject)}</title></head>
 <body style="margin:0;padding:24px;font:16px/1.5 Georgia,serif">
 <div style="max-width:36em;border-top:4px solid #0B5563;padding-top:16px">
@@ -45,14 +47,14 @@ export function letterFor(
   params: Readonly<Record<string, unknown>>,
   locale: Locale,
 ): Promise<Letter> {
-  const messages = loadMessages(locale);
-  const t = createTranslator({
+  const messages: AnyMessages = loadMessages(locale);
+  const t: (key: string, values?: Values) => string = createTranslator({
     locale: formatTag(locale),
-    messages: messages as Record<string, never>,
+    messages,
     onError: (error) => {
       throw error;
     },
-  }) as (key: string, values?: Values) => string;
+  });
   const values = valuesOf(params, locale);
   const rowIds = Array.isArray(params.rowIds) ? params.rowIds.map(String) : [];
   const wanted = rowIds.map((rowId) => `- ${t(`evidence.rows.${rowId}.name`)}`).join("\n");
@@ -73,6 +75,6 @@ export function letterFor(
   return Promise.resolve({
     subject,
     text,
-    html: htmlPage(locale, subject, [...paragraphs, t("mails.footer")], link),
+    html: htmlPage({ locale, subject, paragraphs: [...paragraphs, t("mails.footer")], link }),
   });
 }

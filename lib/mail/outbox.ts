@@ -66,8 +66,7 @@ export const mailTo = <Kind extends MailKind>(
  */
 export const mailClaimPeople = <Kind extends MailKind>(
   work: Work,
-  claimId: string,
-  to: "workshop" | "holder",
+  { claimId, to }: { claimId: string; to: "workshop" | "holder" },
   letter: Letter<Kind>,
 ): Promise<unknown> =>
   rows(work, "select guarded.mail_claim_people($1, $2, $3, $4, $5)", [

@@ -24,7 +24,10 @@ export const preferencesInput = z.object({
 export type Preferences = z.infer<typeof preferencesInput>;
 
 /** The old and the new password as typed; what is wrong with them is said in sentences of their own. */
-export const passwordChangeInput = z.object({ current: z.string().max(4000), password: z.string().max(4000) });
+export const passwordChangeInput = z.object({
+  current: z.string().max(4000),
+  password: z.string().max(4000),
+});
 export type PasswordChangeInput = z.infer<typeof passwordChangeInput>;
 
 /** One of a person's own sessions. */

@@ -47,8 +47,7 @@ export async function exists(key: string): Promise<boolean> {
 export async function putOnce(
   key: string,
   body: Buffer,
-  sha256Base64: string,
-  contentType: string,
+  { sha256Base64, contentType }: { sha256Base64: string; contentType: string },
 ): Promise<boolean> {
   try {
     await store().send(
@@ -90,7 +89,7 @@ export async function readAll(key: string, mostBytes: number): Promise<Buffer> {
   const chunks: Buffer[] = [];
   let size = 0;
   for await (const chunk of body) {
-    const data = Buffer.from(chunk as Uint8Array);
+    const data = Buffer.from(chunk);
     size += data.length;
     if (size > mostBytes) throw new RangeError(`${key} is larger than ${mostBytes} bytes`);
     chunks.push(data);

@@ -2,10 +2,11 @@ import "server-only";
 import { createHash, randomUUID, type Hash } from "node:crypto";
 import type { IncomingMessage } from "node:http";
 import { PassThrough, Readable, Writable } from "node:stream";
+import { ReadableStream as WebStream } from "node:stream/web";
 import formidable from "formidable";
 import type { Upload } from "@aws-sdk/lib-storage";
 import { mostBytes, type FileKind } from "@/lib/kernel/limits";
-import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { ok, refuse, type Outcome, type Refusal } from "@/lib/kernel/outcome";
 import { typeOf, type MediaType, type TypeRefusal } from "./file-type";
 import { quarantineKey } from "./keys";
 import { putStream, remove } from "./objects";
@@ -115,23 +116,29 @@ class Intake extends Writable {
 
 /** A refusal found in the middle of a stream. */
 class Refused extends Error {
-  constructor(
-    readonly refusal: { ok: false; code: string; detail: Readonly<Record<string, string | number>> },
-  ) {
+  constructor(readonly refusal: Refusal<ReceiveRefusal>) {
     super(refusal.code);
   }
 }
 
+/** Ends the parser where the decision was no; what it was is kept beside it, with its own code. */
+class NotWanted extends Error {}
+
+/** What the parser uses of a request. */
+type Incoming = Readable & Pick<IncomingMessage, "headers" | "method">;
+type Parser = { parse(request: Incoming): Promise<unknown> };
+type PartHook = { onPart(part: formidable.Part): void | Promise<void> };
+
 /** The request as the parser wants it: without a length it would take the body for empty. */
-function asNodeRequest(request: Request, watched: Readable): IncomingMessage {
-  const headers = Object.fromEntries(request.headers);
+function incoming(request: Request, watched: Readable): Incoming {
+  const headers: Record<string, string> = Object.fromEntries(request.headers);
   if (!headers["content-length"] && !headers["transfer-encoding"]) headers["transfer-encoding"] = "chunked";
-  return Object.assign(watched, { headers, method: request.method }) as unknown as IncomingMessage;
+  return Object.assign(watched, { headers, method: request.method });
 }
 
 /** Ends a request that sends nothing for too long. */
 function watch(request: Request): { readonly body: Readable; readonly stop: () => void } {
-  const source = request.body ? Readable.fromWeb(request.body as never) : Readable.from([]);
+  const source = request.body instanceof WebStream ? Readable.fromWeb(request.body) : Readable.from([]);
   const body = new PassThrough({ highWaterMark: 1 << 20 });
   let timer: NodeJS.Timeout | undefined;
   const stop = () => clearTimeout(timer);
@@ -148,7 +155,7 @@ function watch(request: Request): { readonly body: Readable; readonly stop: () =
   return { body, stop };
 }
 
-const refusalOf = (fault: unknown, intake: Intake | undefined) =>
+const refusalOf = (fault: unknown, intake: Intake | undefined): Refusal<ReceiveRefusal> =>
   fault instanceof Refused ? fault.refusal : refuse("uploadBroken", { name: intake?.name ?? "" });
 
 /**
@@ -172,8 +179,8 @@ export async function receiveFile<Code extends string>(
 function parserFor<Code extends string>(
   fields: Record<string, string>,
   decide: Decide<Code>,
-  onIntake: (intake: Intake) => void,
-) {
+  hooks: { onIntake: (intake: Intake) => void; onRefusal: (refusal: Refusal<Code>) => void },
+): Parser {
   let kind: FileKind = "photo";
   const form = formidable({
     maxFiles: 1,
@@ -185,7 +192,7 @@ function parserFor<Code extends string>(
     minFileSize: 0,
     fileWriteStreamHandler: (file) => {
       const intake = new Intake(readableName(nameOf(file)), kind);
-      onIntake(intake);
+      hooks.onIntake(intake);
       return intake;
     },
   });
@@ -194,11 +201,13 @@ function parserFor<Code extends string>(
     fields[name] = value;
   });
   // Parts come one after the other, and the next waits for this: the fields before the file say what it may be.
-  form.onPart = async (part) => {
+  const hooked: PartHook = form;
+  hooked.onPart = async (part) => {
     if (typeof part.originalFilename === "string") {
       const decided = await decide(fields);
       if (!decided.ok) {
-        form.emit("error", new Refused(decided));
+        hooks.onRefusal(decided);
+        form.emit("error", new NotWanted(decided.code));
         return;
       }
       kind = decided.value;
@@ -215,15 +224,21 @@ async function receive<Code extends string>(
   const fields: Record<string, string> = {};
   const { body, stop } = watch(request);
   const intakes: Intake[] = [];
+  const refusals: Refusal<Code>[] = [];
+  const hooks = {
+    onIntake: (intake: Intake) => void intakes.push(intake),
+    onRefusal: (refusal: Refusal<Code>) => void refusals.push(refusal),
+  };
   try {
-    await parserFor(fields, decide, (intake) => intakes.push(intake)).parse(asNodeRequest(request, body));
+    await parserFor(fields, decide, hooks).parse(incoming(request, body));
     const [intake] = intakes;
     if (!intake?.type?.ok) return refuse("fileMissing");
     const { key: quarantine, name, sizeBytes, sha256 } = intake;
     return ok({ quarantine, name, sizeBytes, sha256, mediaType: intake.type.value, fields });
   } catch (fault) {
     for (const intake of intakes) await intake.drop();
-    return refusalOf(fault, intakes[0]) as Outcome<never, Code | ReceiveRefusal>;
+    const [refused] = refusals;
+    return fault instanceof NotWanted && refused ? refused : refusalOf(fault, intakes[0]);
   } finally {
     stop();
     body.destroy();

@@ -26,7 +26,9 @@ type Served = {
  */
 export async function serve({ key, contentType, name, kind, range }: Served): Promise<Response> {
   const opened = await open(key, range && /^bytes=\d*-\d*$/u.test(range) ? range : undefined);
-  return new Response(Readable.toWeb(opened.body) as ReadableStream, {
+  const bytes: unknown = Readable.toWeb(opened.body);
+  if (!(bytes instanceof ReadableStream)) throw new Error(`no stream for the answer of ${key}`);
+  return new Response(bytes, {
     status: opened.range ? 206 : 200,
     headers: {
       "content-type": contentType,

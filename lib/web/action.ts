@@ -2,7 +2,7 @@ import "server-only";
 import { revalidatePath } from "next/cache";
 import { headers } from "next/headers";
 import { getTranslations } from "next-intl/server";
-import { z } from "zod";
+import type { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
 import type { ActionResult, FormAction } from "@/lib/kernel/action-result";
 import type { Outcome } from "@/lib/kernel/outcome";
@@ -12,13 +12,10 @@ import { isFromOurPages } from "./origin";
 import { requireActor } from "./session";
 import { wordingFor, type RefusalCode } from "./wording";
 
-type Sentences = (key: string) => string;
+type Sentences = { (key: string): string; has(key: string): boolean };
 
 /** A shape names its sentence in its message (`forms` in the message files); one that names none says what any field says. */
-const fieldSentences = (
-  error: z.ZodError,
-  t: Sentences & { has(key: string): boolean },
-): Record<string, string> => {
+const fieldSentences = (error: z.ZodError, t: Sentences): Record<string, string> => {
   const fields: Record<string, string> = {};
   for (const issue of error.issues) {
     const name = issue.path.join(".") || "form";
@@ -51,8 +48,8 @@ export function action<Shape extends z.ZodType, T>(
 
     const input = shape.safeParse(shapeFields ? shapeFields(typed) : typed);
     if (!input.success) {
-      const t = await getTranslations({ locale: actor.locale, namespace: "forms" });
-      return { ok: false, fields: fieldSentences(input.error, t as never), typed };
+      const t: Sentences = await getTranslations({ locale: actor.locale, namespace: "forms" });
+      return { ok: false, fields: fieldSentences(input.error, t), typed };
     }
     try {
       const outcome = await verb(actor, input.data);

@@ -13,6 +13,10 @@ type Translate = {
   has(key: string): boolean;
 };
 
+/** A row of the Evidence list goes by its name. */
+const named = (detail: DraftProblem["detail"], rowNames: Translate): Record<string, string | number> =>
+  detail.row === undefined ? { ...detail } : { ...detail, row: rowNames(`${detail.row}.name`) };
+
 /**
  * The sentences of one page of a draft. What was typed and cannot be read is always told; what is only missing is told
  * once somebody wants to send.
@@ -20,18 +24,18 @@ type Translate = {
 export async function draftSentences(
   problems: readonly DraftProblem[],
   step: DraftStep | "check",
-  showsAll: boolean,
-  locale: Locale,
+  { showsAll, locale }: { showsAll: boolean; locale: Locale },
 ): Promise<DraftSentence[]> {
   const t: Translate = await getTranslations({ locale, namespace: "draft.problems" });
   const readings: Translate = await getTranslations({ locale, namespace: "evidence.readingRefusals" });
+  const rowNames: Translate = await getTranslations({ locale, namespace: "evidence.rows" });
   return problems
     .filter((problem) => (step === "check" || problem.step === step) && (showsAll || isUnread(problem.code)))
     .map((problem) => ({
       fieldId: problem.field,
       step: problem.step,
       text: t.has(problem.code)
-        ? t(problem.code, { ...problem.detail })
+        ? t(problem.code, named(problem.detail, rowNames))
         : readings(problem.code, { ...problem.detail }),
     }));
 }

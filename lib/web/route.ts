@@ -36,20 +36,22 @@ export type Asked<Body, Params> = {
   readonly body: Body;
 };
 
-type Options<Shape extends z.ZodType | undefined> = {
+type Options = {
   readonly name: string;
-  /** The shape of a JSON body; without one the handler reads the request itself. */
-  readonly body?: Shape;
   /** A POST that must take effect once: needs an Idempotency-Key. */
   readonly idempotent?: boolean;
   /** Most bytes of a JSON body. */
   readonly maxBytes?: number;
 };
 
-type BodyOf<Shape> = Shape extends z.ZodType ? z.infer<Shape> : undefined;
+/** The shape of a JSON body; without one the handler reads the request itself. */
+type WithBody<Shape extends z.ZodType> = Options & { readonly body: Shape };
+type WithoutBody = Options & { readonly body?: undefined };
 type Handler<Body, Params> = (
   asked: Asked<Body, Params>,
 ) => Promise<Outcome<unknown, RefusalCode> | Response>;
+
+type Route<Params> = (request: Request, context: { params: Promise<Params> }) => Promise<Response>;
 
 const MAX_JSON_BYTES = 256 * 1024;
 
@@ -65,11 +67,13 @@ const json = (value: unknown, requestId: string, status = 200) =>
     },
   });
 
+/** Who a refusal is written for, and the number it can be asked about by. */
+type Asker = { readonly locale: Locale; readonly requestId: string };
+
 async function refusal(
   code: "signedOut" | "crossSite" | "tooLarge" | "notJson" | "fault",
   status: number,
-  locale: Locale,
-  requestId: string,
+  { locale, requestId }: Asker,
 ) {
   const t = await words(locale);
   return problemResponse({ status, code, title: t(code, { id: requestId }) }, requestId);
@@ -99,7 +103,8 @@ async function readText(request: Request, maxBytes: number): Promise<string | nu
 
 const parseJson = (text: string): unknown => {
   try {
-    return JSON.parse(text) as unknown;
+    const read: unknown = JSON.parse(text);
+    return read;
   } catch {
     return undefined;
   }
@@ -128,11 +133,21 @@ async function answer(
  * Every route of the API is one call of this: session, origin, shape, the domain's verb, the wording. Answers problem
  * documents for everything that is not a success, and never says more about a foreign thing than about one that is not there.
  */
-export function route<Params = Record<string, never>, Shape extends z.ZodType | undefined = undefined>(
-  options: Options<Shape>,
-  handler: Handler<BodyOf<Shape>, Params>,
-) {
-  return async (request: Request, context: { params: Promise<Params> }): Promise<Response> => {
+export function route<Params = Record<string, never>>(
+  options: WithoutBody,
+  handler: Handler<undefined, Params>,
+): Route<Params>;
+/** The same with a JSON body: the handler is given it as its shape reads it. */
+export function route<Params = Record<string, never>, Shape extends z.ZodType = z.ZodType>(
+  options: WithBody<Shape>,
+  handler: Handler<z.infer<Shape>, Params>,
+): Route<Params>;
+/** Both in one: without a shape the handler is given no body. */
+export function route<Params, Body>(
+  options: WithoutBody | WithBody<z.ZodType<Body>>,
+  handler: Handler<Body | undefined, Params>,
+): Route<Params> {
+  return async (request, context) => {
     const started = performance.now();
     const requestId = requestIdOf(request.headers);
     let session: Session | null = null;
@@ -141,7 +156,7 @@ export function route<Params = Record<string, never>, Shape extends z.ZodType | 
       session = await currentSession();
       response = session
         ? await serve(options, handler, { session, request, params: await context.params })
-        : await refusal("signedOut", 401, "en", requestId);
+        : await refusal("signedOut", 401, { locale: "en", requestId });
     } catch (fault) {
       log.error({
         event: "fault",
@@ -149,12 +164,7 @@ export function route<Params = Record<string, never>, Shape extends z.ZodType | 
         route: options.name,
         fault: fault instanceof Error ? fault.stack : String(fault),
       });
-      response = await refusal(
-        "fault",
-        500,
-        session?.actor.locale ?? "en",
-        session?.actor.requestId ?? requestId,
-      );
+      response = await refusal("fault", 500, session?.actor ?? { locale: "en", requestId });
     }
     log.info({
       event: "request",
@@ -170,28 +180,28 @@ export function route<Params = Record<string, never>, Shape extends z.ZodType | 
   };
 }
 
-async function serve<Params, Shape extends z.ZodType | undefined>(
-  options: Options<Shape>,
-  handler: Handler<BodyOf<Shape>, Params>,
+async function serve<Params, Body>(
+  options: WithoutBody | WithBody<z.ZodType<Body>>,
+  handler: Handler<Body | undefined, Params>,
   asked: Omit<Asked<undefined, Params>, "body">,
 ): Promise<Response> {
   const { session, request } = asked;
   const { locale, requestId } = session.actor;
   const writes = request.method !== "GET" && request.method !== "HEAD";
-  if (writes && !isFromOurPages(request.headers)) return refusal("crossSite", 403, locale, requestId);
-  if (!options.body) return answer(await handler({ ...asked, body: undefined as BodyOf<Shape> }), session);
+  if (writes && !isFromOurPages(request.headers)) return refusal("crossSite", 403, session.actor);
+  if (!options.body) return answer(await handler({ ...asked, body: undefined }), session);
 
   const text = await readText(request, options.maxBytes ?? MAX_JSON_BYTES);
-  if (text === null) return refusal("tooLarge", 413, locale, requestId);
+  if (text === null) return refusal("tooLarge", 413, session.actor);
   const sent = parseJson(text);
-  if (sent === undefined) return refusal("notJson", 400, locale, requestId);
+  if (sent === undefined) return refusal("notJson", 400, session.actor);
   const body = options.body.safeParse(sent);
   if (!body.success) {
     const t = await words(locale);
     const errors = await fieldProblems(body.error, locale);
     return problemResponse({ status: 422, code: "shape", title: t("shape"), errors }, requestId);
   }
-  const act = async () => answer(await handler({ ...asked, body: body.data as BodyOf<Shape> }), session);
+  const act = async () => answer(await handler({ ...asked, body: body.data }), session);
   if (!options.idempotent) return act();
   const fingerprint = createHash("sha256").update(text).digest("hex");
   return withIdempotency(

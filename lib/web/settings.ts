@@ -14,15 +14,16 @@ const settings = z.object({
   MAIL_FROM: z.string().min(3),
 });
 
+const given = settings.partial();
+type Given = z.infer<typeof given>;
+
 /** The settings of this process, checked when they are first asked for. Throws, naming what is missing. */
-export const setting = <Name extends keyof z.infer<typeof settings>>(
-  name: Name,
-): z.infer<typeof settings>[Name] => {
-  const read = settings.shape[name].safeParse(process.env[name]);
-  if (!read.success)
+export function setting<Name extends keyof Given>(name: Name): NonNullable<Given[Name]> {
+  const read = given.safeParse({ [name]: process.env[name] }).data?.[name];
+  if (read === undefined)
     throw new Error(`The setting ${name} is missing or wrong: start the product with npm start`);
-  return read.data as z.infer<typeof settings>[Name];
-};
+  return read;
+}
 
 /** Where this installation is reached. Links in mails are made from it and never from a request's headers. */
 export const publicUrl = (path = "/"): string => new URL(path, setting("PUBLIC_URL")).href;

@@ -1,7 +1,10 @@
 import { emptyDraft, emptyLine, type ClaimDraft, type DraftLine } from "@/lib/claims/draft";
+import type { CalendarDay } from "@/lib/kernel/calendar-day";
+import { formatDay } from "@/lib/kernel/format";
 import { FAMILIES } from "@/lib/parts/families";
 import { symptomOf } from "@/lib/parts/family";
 import { workingDayAgo } from "../days";
+import { ORGANISATIONS } from "../story/organisations";
 import type { Chance } from "../random";
 import type { World } from "../story/world";
 import type { Case, CaseLine } from "./case";
@@ -37,14 +40,18 @@ export function draftText(
     vehicleModel: one.vehicle.model,
     symptom: one.symptom,
     note: noteOf(writing),
-    failedOn: workingDayAgo(world.today, one.failedDaysAgo),
+    failedOn: typedDay(workingDayAgo(world.today, one.failedDaysAgo), one),
     ...rowsTyped(asked.answers, writing, sending),
   };
   return isUnsent(one.plot) ? common : { ...common, ...checksTyped(writing) };
 }
 
+/** A day as the people of the workshop write it. */
+const typedDay = (day: CalendarDay, one: Case): string =>
+  formatDay(day, ORGANISATIONS[one.workshop].language);
+
 function typedLine(line: CaseLine, one: Case, { today }: World): DraftLine {
-  const replacedOn = line.replacement ? workingDayAgo(today, one.repairedDaysAgo) : "";
+  const replacedOn = line.replacement ? typedDay(workingDayAgo(today, one.repairedDaysAgo), one) : "";
   return {
     ...emptyLine(),
     serial: line.serialTyped,
@@ -53,7 +60,7 @@ function typedLine(line: CaseLine, one: Case, { today }: World): DraftLine {
     invoiceLineId: line.sale?.id ?? null,
     quantity: String(line.quantity),
     position: line.position,
-    fittedOn: line.fittedDaysAgo === null ? "" : workingDayAgo(today, line.fittedDaysAgo),
+    fittedOn: line.fittedDaysAgo === null ? "" : typedDay(workingDayAgo(today, line.fittedDaysAgo), one),
     installer: line.installer?.name ?? "",
     replacementSerial: line.replacement?.serial ?? "",
     replacementFittedOn: replacedOn,
@@ -106,7 +113,7 @@ function checksTyped({ one, world, texts, draw }: Writing): Checks {
   const isSwapped = one.lines.some((line) => line.replacement !== null);
   const isReportable = symptomOf(family, one.symptom)?.mayBeReportable ?? false;
   return {
-    repairedOn: workingDayAgo(world.today, one.repairedDaysAgo),
+    repairedOn: typedDay(workingDayAgo(world.today, one.repairedDaysAgo), one),
     ruledOut: Object.fromEntries(ruledOut.map((item) => [item, draw.pick(texts.ruledOut)])),
     condition: Object.fromEntries(
       family.conditionAsFound.map(

@@ -5,7 +5,11 @@ import type { Role } from "@/lib/access/roles";
 type Person = { readonly id: string; readonly name?: string };
 
 /** Someone at work for an organisation, as the session gate would have made them. */
-export const actorAt = (organisation: { readonly id: string }, person: Person, roles: readonly Role[]): Actor =>
+export const actorAt = (
+  organisation: { readonly id: string },
+  person: Person,
+  roles: readonly Role[],
+): Actor =>
   ({
     userId: person.id,
     name: person.name ?? "Robin Vale",

@@ -82,7 +82,13 @@ export async function buildPart(seller: Id, over: Over = {}): Promise<Id> {
 }
 
 export const buildBatch = (seller: Id, part: Id, over: Over = {}) =>
-  make("batches", { seller_id: seller.id, part_id: part.id, code: unlike("L"), made_on: "2025-06-02", ...over });
+  make("batches", {
+    seller_id: seller.id,
+    part_id: part.id,
+    code: unlike("L"),
+    made_on: "2025-06-02",
+    ...over,
+  });
 
 type Sale = { readonly seller: Id; readonly buyer: Id; readonly account: Id; readonly part: Id };
 
@@ -142,15 +148,28 @@ export const buildFitting = (seller: Id, workshop: Id, unit: Id, over: Over = {}
     ...over,
   });
 
-export type Between = { readonly seller: Id; readonly workshop: Id; readonly account: Id; readonly person: Id };
+export type Between = {
+  readonly seller: Id;
+  readonly workshop: Id;
+  readonly account: Id;
+  readonly person: Id;
+};
 
 /** What a claim in a state after filing must have on its row. */
-export const FILED = { revision: 1, filed_at: "2026-05-06T09:00:00Z", filed_on: "2026-05-06", failed_on: "2026-05-04" };
+export const FILED = {
+  revision: 1,
+  filed_at: "2026-05-06T09:00:00Z",
+  filed_on: "2026-05-06",
+  failed_on: "2026-05-04",
+};
 export const DECIDED = { ...FILED, outcome: "upheld", decided_at: "2026-05-12T09:00:00Z" };
+
+// One after the other: thousands of random numbers would meet.
+let claims = 1_000_000;
 
 /** A claim row; a draft unless told otherwise. */
 export async function buildClaim({ seller, workshop, account, person }: Between, over: Over = {}) {
-  const number = claimNumberFrom(randomInt(1_000_000, 10_000_000));
+  const number = claimNumberFrom((claims += 1)).replace("-", "");
   const row = await insertRow("claims", {
     number,
     seller_id: seller.id,

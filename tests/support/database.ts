@@ -5,23 +5,20 @@ import { databaseUrl, type Login } from "./database-url";
 export type Row = Record<string, unknown>;
 
 /** Logins of the product, and roles without login that only another role becomes. */
-export type DatabaseRole = "web" | "worker" | "partproof_owner" | "keeper" | "reporter" | "auditor" | "postgres";
+export type DatabaseRole =
+  "web" | "worker" | "partproof_owner" | "keeper" | "reporter" | "auditor" | "postgres";
 
 type Context = { readonly actor?: string; readonly org?: string };
 
 const DATE = 1082;
 // Days stay the text they are: the driver would make instants in the machine's zone of them.
-const types = {
-  getTypeParser: (oid: number, format?: "text") =>
-    oid === DATE ? (text: string) => text : pg.types.getTypeParser(oid, format),
-};
+pg.types.setTypeParser(DATE, (text) => text);
 
 const pools = new Map<Login, pg.Pool>();
 
 const poolFor = (login: Login): pg.Pool => {
   const database = new URL(process.env["DATABASE_URL"] ?? "").pathname.slice(1);
-  const pool =
-    pools.get(login) ?? new pg.Pool({ connectionString: databaseUrl(login, database), max: 12, types });
+  const pool = pools.get(login) ?? new pg.Pool({ connectionString: databaseUrl(login, database), max: 12 });
   pools.set(login, pool);
   return pool;
 };
@@ -32,7 +29,10 @@ afterAll(async () => {
 });
 
 /** Rows of a statement as the superuser, whom no row security holds: to build and to look, never to prove. */
-export async function adminQuery<Found extends Row = Row>(sql: string, bind: unknown[] = []): Promise<Found[]> {
+export async function adminQuery<Found extends Row = Row>(
+  sql: string,
+  bind: unknown[] = [],
+): Promise<Found[]> {
   const { rows } = await poolFor("ADMIN").query(sql, bind);
   return rows as Found[];
 }
@@ -52,10 +52,10 @@ export type Run = <Found extends Row = Row>(sql: string, bind?: unknown[]) => Pr
 async function become(client: pg.PoolClient, role: DatabaseRole, { actor, org }: Context) {
   const roleSql = `set local role ${role}`;
   if (LOGIN_OF[role] === "ADMIN") await client.query(roleSql);
-  await client.query("select set_config('app.actor_id', $1, true), set_config('app.organisation_id', $2, true)", [
-    actor ?? "",
-    org ?? "",
-  ]);
+  await client.query(
+    "select set_config('app.actor_id', $1, true), set_config('app.organisation_id', $2, true)",
+    [actor ?? "", org ?? ""],
+  );
 }
 
 /** Several statements of one role in one transaction; what it wrote stays, unless it fails or says `rollback`. */

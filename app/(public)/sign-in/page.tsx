@@ -31,7 +31,7 @@ export default async function SignInPage({ searchParams }: { searchParams: Promi
         <h1 className="mb-4 text-24">{t("title")}</h1>
         <SignInForm action={signInAction} texts={texts} />
         <p className="mt-6 border-t border-rule pt-4">
-          <TextLink href="/reset">{t("forgotten")}</TextLink>
+          <TextLink href="/forgotten">{t("forgotten")}</TextLink>
         </p>
       </Card>
     </>

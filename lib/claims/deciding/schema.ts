@@ -1,20 +1,22 @@
 import { z } from "zod";
 import { VERDICT_OUTCOMES } from "../lifecycle";
 import { claimNumberInput } from "../schema";
-import { CAUSES, REASONS } from "../verdict";
+import { REASONS, type Cause } from "../verdict";
 
 const REASON_CODES = Object.values(REASONS).flat();
 const share = z.string().trim().max(20).default("");
+const SHARES = {
+  maker: share,
+  carrier: share,
+  fitter: share,
+  user: share,
+  wear: share,
+} satisfies Record<Cause, typeof share>;
 
 const lineVerdict = z.strictObject({
   lineId: z.uuid(),
   outcome: z.enum(VERDICT_OUTCOMES, "outcomeMissing"),
-  shares: z.strictObject(
-    Object.fromEntries(CAUSES.map((cause) => [cause, share])) as Record<
-      (typeof CAUSES)[number],
-      typeof share
-    >,
-  ),
+  shares: z.strictObject(SHARES),
   reasonCode: z.enum(REASON_CODES, "reasonCodeMissing"),
   reason: z.string().trim().min(1, "missing").max(4000, "tooLong"),
 });

@@ -57,8 +57,7 @@ async function findSeen(work: Work, claim: Claim): Promise<Seen> {
 async function coverLine(
   work: Work,
   claim: Claim,
-  facts: ClaimFacts,
-  lineNumber: number,
+  { facts, lineNumber }: { facts: ClaimFacts; lineNumber: number },
 ): Promise<CoveredLine> {
   const line = facts.lines.find((one) => one.lineNumber === lineNumber);
   if (!line) throw new Error(`claim ${claim.number} has no line ${lineNumber} in its facts`);
@@ -78,16 +77,11 @@ async function coverLine(
   });
 }
 
+type Given = { input: DecideInput; lines: readonly LineIds[]; seen: Seen };
 type Written = { verdictId: string; contestDays: number };
 
 /** The verdict with its lines: what was seen, what rule, what the cover was, word for word and for good. */
-async function writeVerdict(
-  work: Work,
-  claim: Claim,
-  input: DecideInput,
-  lines: readonly LineIds[],
-  seen: Seen,
-): Promise<Written> {
+async function writeVerdict(work: Work, claim: Claim, { input, lines, seen }: Given): Promise<Written> {
   const parties = [claim.sellerId, claim.workshopId] as const;
   const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
   const [verdict] = await rows<{ id: string }>(
@@ -100,7 +94,7 @@ async function writeVerdict(
   let contestDays = 0;
   for (const line of input.lines) {
     const lineNumber = lines.find(({ id }) => id === line.lineId)?.lineNumber ?? 0;
-    const { coverage, terms } = await coverLine(work, claim, seen.facts, lineNumber);
+    const { coverage, terms } = await coverLine(work, claim, { facts: seen.facts, lineNumber });
     contestDays = Math.max(contestDays, terms?.body.contestDays ?? DAYS_TO_CONTEST);
     const attribution = JSON.stringify(attributionOf(line.shares));
     await rows(
@@ -139,43 +133,51 @@ const DAYS_TO_CONTEST = 14;
  * another since, it refuses `staleVersion` and nothing is written.
  */
 export const decideClaim = (actor: Actor, input: DecideInput) =>
-  moveClaim<LineRefusal | "staleVersion">(actor, input.number, "decide", async (claim, work) => {
-    if (claim.revision !== input.revision) return refuse("staleVersion");
-    const lines = await rows<LineIds>(
-      work,
-      `select id, line_number as "lineNumber" from claim_lines where claim_id = $1 order by line_number`,
-      [claim.id],
-    );
-    const checked = checkLines(input, lines);
-    if (!checked.ok) return checked;
+  moveClaim<LineRefusal | "staleVersion">(
+    actor,
+    { number: input.number, move: "decide" },
+    async (claim, work) => {
+      if (claim.revision !== input.revision) return refuse("staleVersion");
+      const lines = await rows<LineIds>(
+        work,
+        `select id, line_number as "lineNumber" from claim_lines where claim_id = $1 order by line_number`,
+        [claim.id],
+      );
+      const checked = checkLines(input, lines);
+      if (!checked.ok) return checked;
 
-    const seen = await findSeen(work, claim);
-    const { verdictId, contestDays } = await writeVerdict(work, claim, input, lines, seen);
-    const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
-    const contestUntil = addDays(todayOf(actor), contestDays);
-    await mailClaimPeople(work, claim.id, "workshop", {
-      kind: "claimDecided",
-      dedupeKey: `claimDecided:${verdictId}`,
-      params: {
-        link: publicUrl(claimPath(claim)),
-        number: printClaimNumber(input.number),
-        distributor: await nameOf(work, claim.sellerId),
-        outcome,
-        letter: input.letter,
-        contestUntil,
-      },
-    });
-    return ok({
-      changes: {
-        outcome,
-        decidedAt: new Date(),
-        decidedById: actor.userId,
-        contestUntil,
-        holderId: null,
-        heldUntil: null,
-        parkedWithId: null,
-        parkedQuestion: null,
-      },
-      detail: { outcome, revision: input.revision, contestUntil },
-    });
-  });
+      const seen = await findSeen(work, claim);
+      const { verdictId, contestDays } = await writeVerdict(work, claim, { input, lines, seen });
+      const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
+      const contestUntil = addDays(todayOf(actor), contestDays);
+      await mailClaimPeople(
+        work,
+        { claimId: claim.id, to: "workshop" },
+        {
+          kind: "claimDecided",
+          dedupeKey: `claimDecided:${verdictId}`,
+          params: {
+            link: publicUrl(claimPath(claim)),
+            number: printClaimNumber(input.number),
+            distributor: await nameOf(work, claim.sellerId),
+            outcome,
+            letter: input.letter,
+            contestUntil,
+          },
+        },
+      );
+      return ok({
+        changes: {
+          outcome,
+          decidedAt: new Date(),
+          decidedById: actor.userId,
+          contestUntil,
+          holderId: null,
+          heldUntil: null,
+          parkedWithId: null,
+          parkedQuestion: null,
+        },
+        detail: { outcome, revision: input.revision, contestUntil },
+      });
+    },
+  );

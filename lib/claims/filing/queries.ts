@@ -102,8 +102,7 @@ async function zoneOf(work: Work, organisationId: string): Promise<string> {
 export async function draftContext(
   work: Work,
   claim: Claim,
-  draft: ClaimDraft,
-  now: Date,
+  { draft, now }: { draft: ClaimDraft; now: Date },
 ): Promise<DraftContext> {
   const family = familyOf(claim.family ?? "");
   if (!family) throw new Error(`claim ${claim.number} has no known family`);
@@ -145,7 +144,7 @@ export const checkDraft = (actor: Actor, number: string): Promise<CheckedDraft |
     const kept = claim && (await DraftRow.findOne({ where: { claimId: claim.id }, transaction }));
     if (!claim || !kept) return null;
     const draft = storedDraft(kept.body);
-    const context = await draftContext(work, claim, draft, new Date());
+    const context = await draftContext(work, claim, { draft, now: new Date() });
     return { claim, draft, savedAt: kept.savedAt, context, ...readDraft(draft, context) };
   });
 

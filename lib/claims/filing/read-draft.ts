@@ -41,15 +41,20 @@ type Reading = ClaimFacts["readings"][number];
 const QUANTITY = /^[1-9]\d{0,4}$/u;
 const NUMBER = /^\d{1,4}([.,]\d{1,2})?$/u;
 
+type Place = Pick<DraftProblem, "step" | "field">;
+
 /** Collects every problem, not only the first, so that a person sees at once all there is to do. */
 class Problems {
   readonly list: DraftProblem[] = [];
 
-  add(step: DraftStep, field: string, code: string, detail: DraftProblem["detail"] = {}): null {
-    this.list.push({ step, field, code, detail });
+  add(at: Place, code: string, detail: DraftProblem["detail"] = {}): null {
+    this.list.push({ ...at, code, detail });
     return null;
   }
 }
+
+/** What a field is read against, and where its problem goes. */
+type Reader = { readonly context: DraftContext; readonly problems: Problems };
 
 /**
  * Reads a draft into the facts that are sent. Returns facts where nothing stops it, and in any case the whole list of
@@ -60,15 +65,18 @@ export function readDraft(
   context: DraftContext,
 ): { facts: ClaimFacts | null; problems: DraftProblem[] } {
   const problems = new Problems();
+  const reading = { context, problems };
   const failedOn =
-    readPastDay(draft.failedOn, "fault", "failedOn", context, problems) ??
+    readPastDay(draft.failedOn, { step: "fault", field: "failedOn" }, reading) ??
     missingDay(draft.failedOn, problems);
-  const repairedOn = readPastDay(draft.repairedOn, "part", "repairedOn", context, problems);
-  const lines = draft.lines.map((line, index) => readLine(line, index, failedOn, context, problems));
+  const repairedOn = readPastDay(draft.repairedOn, { step: "part", field: "repairedOn" }, reading);
+  const lines = draft.lines.map((line, index) => readLine(line, index, { ...reading, failedOn }));
   const readings = readReadings(draft, context, problems);
-  if (!symptomOf(context.family, draft.symptom)) problems.add("fault", "symptom", "symptomMissing");
-  if (draft.frameSerial.trim() === "") problems.add("part", "frameSerial", "frameSerialMissing");
-  if (lines.length === 0) problems.add("part", "serial", "lineMissing");
+  if (!symptomOf(context.family, draft.symptom))
+    problems.add({ step: "fault", field: "symptom" }, "symptomMissing");
+  if (draft.frameSerial.trim() === "")
+    problems.add({ step: "part", field: "frameSerial" }, "frameSerialMissing");
+  if (lines.length === 0) problems.add({ step: "part", field: "serial" }, "lineMissing");
   const given = givenIn(draft, readings, context);
   checkRows(given, context, problems);
 
@@ -78,43 +86,30 @@ export function readDraft(
 }
 
 const missingDay = (typed: string, problems: Problems): null =>
-  typed.trim() === "" ? problems.add("fault", "failedOn", "failedOnMissing") : null;
+  typed.trim() === "" ? problems.add({ step: "fault", field: "failedOn" }, "failedOnMissing") : null;
 
 /** Null for an empty field and for a day that cannot be: the latter leaves a problem at the field. */
-function readPastDay(
-  typed: string,
-  step: DraftStep,
-  field: string,
-  context: DraftContext,
-  problems: Problems,
-): CalendarDay | null {
+function readPastDay(typed: string, at: Place, { context, problems }: Reader): CalendarDay | null {
   if (typed.trim() === "") return null;
   const day = readTypedDay(typed, context.locale, context.today);
-  if (day === null) return problems.add(step, field, "dayUnread", { typed: typed.slice(0, 40) });
-  return isAfter(day, context.today) ? problems.add(step, field, "dayInFuture") : day;
+  if (day === null) return problems.add(at, "dayUnread", { typed: typed.slice(0, 40) });
+  return isAfter(day, context.today) ? problems.add(at, "dayInFuture") : day;
 }
 
 function readLine(
   line: DraftLine,
   index: number,
-  failedOn: CalendarDay | null,
-  context: DraftContext,
-  problems: Problems,
+  reading: Reader & { readonly failedOn: CalendarDay | null },
 ): FactLine | null {
-  const field = (name: string) => `lines.${index}.${name}`;
+  const { context, problems, failedOn } = reading;
+  const at = (name: string): Place => ({ step: "part", field: `lines.${index}.${name}` });
   const found = context.lines[index] ?? null;
-  if (!found) return problems.add("part", field("serial"), "partMissing");
-  const fittedOn = readPastDay(line.fittedOn, "part", field("fittedOn"), context, problems);
-  const replacedOn = readPastDay(
-    line.replacementFittedOn,
-    "part",
-    field("replacementFittedOn"),
-    context,
-    problems,
-  );
-  if (!QUANTITY.test(line.quantity.trim())) problems.add("part", field("quantity"), "quantityUnread");
+  if (!found) return problems.add(at("serial"), "partMissing");
+  const fittedOn = readPastDay(line.fittedOn, at("fittedOn"), reading);
+  const replacedOn = readPastDay(line.replacementFittedOn, at("replacementFittedOn"), reading);
+  if (!QUANTITY.test(line.quantity.trim())) problems.add(at("quantity"), "quantityUnread");
   if (fittedOn && failedOn && isBefore(failedOn, fittedOn))
-    problems.add("fault", "failedOn", "failedBeforeFitting");
+    problems.add({ step: "fault", field: "failedOn" }, "failedBeforeFitting");
   const quantity = Number(line.quantity) || 1;
   return {
     lineNumber: index + 1,
@@ -141,7 +136,7 @@ function readReadings(draft: ClaimDraft, context: DraftContext, problems: Proble
     if (!kind || !typed || typed.raw.trim() === "") continue;
     const value = readReading(typed.raw, kind);
     if (!value.ok) {
-      problems.add("evidence", `readings.${row.id}`, value.code, value.detail);
+      problems.add({ step: "evidence", field: `readings.${row.id}` }, value.code, value.detail);
       continue;
     }
     readings.push({
@@ -167,14 +162,16 @@ const TEMPERATURE = {
 function readTemperature(typed: string, field: string, problems: Problems): number | null {
   if (typed.trim() === "") return null;
   const read = readReading(typed, TEMPERATURE);
-  return read.ok ? read.value.canonicalValue : problems.add("evidence", field, read.code, read.detail);
+  return read.ok
+    ? read.value.canonicalValue
+    : problems.add({ step: "evidence", field }, read.code, read.detail);
 }
 
 /** A row that is required is done, or says why it cannot be. A row whose reading cannot be read has its own sentence. */
 function checkRows(given: Given, context: DraftContext, problems: Problems) {
   for (const { id } of completeness(context.rows, givenByRow(given)).missing) {
     const isTold = problems.list.some((problem) => problem.field.startsWith(`readings.${id}`));
-    if (!isTold) problems.add("evidence", `rows.${id}`, "rowToDo", { row: id });
+    if (!isTold) problems.add({ step: "evidence", field: `rows.${id}` }, "rowToDo", { row: id });
   }
 }
 

@@ -3,6 +3,7 @@ import { randomInt } from "node:crypto";
 import type { Actor } from "@/lib/access/actor";
 import { hasRight } from "@/lib/access/rights";
 import { rows, type Work } from "@/lib/db/unit-of-work";
+import { formatDay } from "@/lib/kernel/format";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { claimNumberFrom } from "@/lib/labels/check-digit";
 import { findSoldLine, findSoldUnit } from "@/lib/parts/queries";
@@ -11,6 +12,7 @@ import { ClaimDraft as DraftRow } from "@/models/claim-draft";
 import { changedDraft, emptyDraft, emptyLine, type ClaimDraft, type DraftLine } from "../draft";
 import { storedDraft, type DraftChange } from "../draft-shape";
 import { moveClaim, undoing, type Moved } from "../moves/service";
+import { claimDigits } from "../number";
 import type { DraftStart } from "../schema";
 
 /** The room claim numbers are drawn from: seven random digits, so that a number tells nobody how many claims there are. */
@@ -36,7 +38,8 @@ async function startFromUnit(work: Work, unitId: string): Promise<Start | null> 
     partId: unit.partId,
     invoiceLineId: unit.invoiceLineId,
     position: unit.position ?? ("" as const),
-    fittedOn: unit.fittedOn ?? "",
+    // Filled in as a person would write it; it is read like anything typed.
+    fittedOn: unit.fittedOn ? formatDay(unit.fittedOn, work.actor.locale) : "",
     installer: unit.installerName ?? "",
   };
   const draft = { frameSerial: unit.frameSerial ?? "", vehicleModel: unit.vehicleModel ?? "" };
@@ -64,12 +67,9 @@ async function startFromLine(work: Work, invoiceLineId: string): Promise<Start |
   };
 }
 
-async function startFromPart(
-  work: Work,
-  accountId: string,
-  partId: string,
-  serial: string,
-): Promise<Start | null> {
+type PartByHand = { accountId: string; partId: string; serial: string };
+
+async function startFromPart(work: Work, { accountId, partId, serial }: PartByHand): Promise<Start | null> {
   const [found] = await rows<{ sellerId: string; currency: string; family: string }>(
     work,
     `select t.seller_id as "sellerId", t.currency, p.family from trading_accounts t
@@ -90,13 +90,13 @@ async function startFromPart(
 const startFrom = (work: Work, from: DraftStart): Promise<Start | null> => {
   if (from.unitId) return startFromUnit(work, from.unitId);
   if (from.invoiceLineId) return startFromLine(work, from.invoiceLineId);
-  return startFromPart(work, from.accountId, from.partId, from.serial);
+  return startFromPart(work, from);
 };
 
 /** Inserts the claim under a number nobody has yet; a clash is drawn again inside the same transaction. */
 async function insertNumbered(work: Work, start: Start): Promise<string> {
   for (let draw = 0; draw < DRAWS; draw += 1) {
-    const number = claimNumberFrom(randomInt(...SEVEN_DIGITS));
+    const number = claimDigits(claimNumberFrom(randomInt(...SEVEN_DIGITS)));
     const made = await rows<{ number: string }>(
       work,
       `insert into claims (number, seller_id, workshop_id, account_id, family, currency, created_by_id)
@@ -194,10 +194,10 @@ const changeLines = <Code extends string>(
   });
 
 export const discardDraft = (actor: Actor, { number }: { number: string }) =>
-  moveClaim<never>(actor, number, "discard", () => ok({}));
+  moveClaim<never>(actor, { number, move: "discard" }, () => ok({}));
 
 export const withdrawClaim = (actor: Actor, { number, reason }: { number: string; reason: string }) =>
-  moveClaim<never>(actor, number, "withdraw", async (claim, work) => {
+  moveClaim<never>(actor, { number, move: "withdraw" }, async (claim, work) => {
     await releaseUnits(work, claim.id);
     return ok({ changes: { holderId: null, heldUntil: null }, detail: { reason } });
   });

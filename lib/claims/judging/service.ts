@@ -21,13 +21,13 @@ export const todayOf = (actor: Actor): CalendarDay => dayInZone(new Date(), acto
 
 /** Takes a claim from the list: from now on this assessor holds it, for ten minutes at a time. */
 export const takeClaim = (actor: Actor, { number }: { number: string }) =>
-  moveClaim<never>(actor, number, "take", () =>
+  moveClaim<never>(actor, { number, move: "take" }, () =>
     ok({ changes: { holderId: actor.userId, heldUntil: holdFromNow() } }),
   );
 
 /** Gives a claim back to the list, with a reason only the distributor reads. */
 export const putBackClaim = (actor: Actor, { number, reason }: { number: string; reason: string }) =>
-  moveClaim<never>(actor, number, "putBack", () =>
+  moveClaim<never>(actor, { number, move: "putBack" }, () =>
     ok({
       changes: { holderId: null, heldUntil: null, parkedWithId: null, parkedQuestion: null },
       detail: { reason },
@@ -90,7 +90,7 @@ const nextRound = async (work: Work, claimId: string): Promise<number> => {
 
 /** Asks the workshop once for all that is missing. Its clock starts, the distributor's stops, a mail goes out. */
 export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
-  moveClaim<never>(actor, number, "ask", async (claim, work) => {
+  moveClaim<never>(actor, { number, move: "ask" }, async (claim, work) => {
     const round = await nextRound(work, claim.id);
     const terms = await findRule(work, "terms", {
       sellerId: claim.sellerId,
@@ -104,19 +104,23 @@ export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
        values ($1, $2, $3, $4, $5, $6, $7)`,
       [claim.id, claim.sellerId, claim.workshopId, round, JSON.stringify(rowIds), question, actor.userId],
     );
-    await mailClaimPeople(work, claim.id, "workshop", {
-      kind: "queryAsked",
-      dedupeKey: `queryAsked:${claim.id}:${round}`,
-      params: {
-        link: publicUrl(claimPath(claim)),
-        number: printClaimNumber(number),
-        distributor: await nameOf(work, claim.sellerId),
-        question,
-        family: claim.family ?? "",
-        rowIds: [...rowIds],
-        answerBy: lapsesOn,
+    await mailClaimPeople(
+      work,
+      { claimId: claim.id, to: "workshop" },
+      {
+        kind: "queryAsked",
+        dedupeKey: `queryAsked:${claim.id}:${round}`,
+        params: {
+          link: publicUrl(claimPath(claim)),
+          number: printClaimNumber(number),
+          distributor: await nameOf(work, claim.sellerId),
+          question,
+          family: claim.family ?? "",
+          rowIds: [...rowIds],
+          answerBy: lapsesOn,
+        },
       },
-    });
+    );
     return ok({
       changes: { clockStoppedAt: new Date(), queryLapsesOn: lapsesOn },
       detail: { round, question, rowIds, answerBy: lapsesOn },

@@ -1,10 +1,18 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { keysOf } from "@/lib/kernel/keys";
 import { normaliseSerial } from "@/lib/labels/serial";
 import type { ClaimState, VerdictOutcome } from "../lifecycle";
 import { presentList } from "./present";
-import { PAGE_SIZE, type ListOrder, type ListQuery, type ListView } from "./schema";
+import {
+  JUDGING_VIEWS,
+  PAGE_SIZE,
+  WORKSHOP_VIEWS,
+  type ListOrder,
+  type ListQuery,
+  type ListView,
+} from "./schema";
 import type { ClaimItems } from "./view";
 
 export type ListedClaim = {
@@ -34,23 +42,30 @@ export type ListedClaim = {
 
 export type ClaimList = { claims: ListedClaim[]; total: number; counts: Partial<Record<ListView, number>> };
 
+type Side = keyof typeof VIEWS;
+type ViewKey = `received.${(typeof JUDGING_VIEWS)[number]}` | `own.${(typeof WORKSHOP_VIEWS)[number]}`;
+
+/** The views of each side, in the order they are shown: claims it received, and claims of its own. */
+const VIEWS = { received: JUDGING_VIEWS, own: WORKSHOP_VIEWS } as const;
+
 // Conditions of the views. $1 is the organisation, $2 the person. Every one begins with an indexed state.
-const JUDGING: Readonly<Partial<Record<ListView, string>>> = {
-  toJudge: `c.state in ('filed', 'contested')`,
-  held: `c.state = 'beingJudged' and c.holder_id = $2`,
-  parked: `c.state = 'beingJudged' and c.parked_with_id = $2`,
-  waiting: `c.state = 'answerNeeded'`,
-  decided: `c.state = 'decided'`,
-  all: `c.state not in ('draft', 'discarded')`,
+const VIEW: Readonly<Record<ViewKey, string>> = {
+  "received.toJudge": "c.state in ('filed', 'contested')",
+  "received.held": "c.state = 'beingJudged' and c.holder_id = $2",
+  "received.parked": "c.state = 'beingJudged' and c.parked_with_id = $2",
+  "received.waiting": "c.state = 'answerNeeded'",
+  "received.decided": "c.state = 'decided'",
+  "received.all": "c.state not in ('draft', 'discarded')",
+  "own.onUs": "c.state in ('draft', 'answerNeeded')",
+  "own.onThem": "c.state in ('filed', 'beingJudged', 'contested')",
+  "own.decided": "c.state = 'decided'",
+  "own.closed": "c.state in ('settled', 'withdrawn', 'lapsed')",
+  "own.all": "c.state <> 'discarded'",
 };
 
-const OWN: Readonly<Partial<Record<ListView, string>>> = {
-  onUs: `c.state in ('draft', 'answerNeeded')`,
-  onThem: `c.state in ('filed', 'beingJudged', 'contested')`,
-  decided: `c.state = 'decided'`,
-  closed: `c.state in ('settled', 'withdrawn', 'lapsed')`,
-  all: `c.state <> 'discarded'`,
-};
+/** The condition of a view, if the side has it. */
+const viewKey = (side: Side, view: ListView): ViewKey | undefined =>
+  keysOf(VIEW).find((key) => key === `${side}.${view}`);
 
 // Orders are looked up here and never pasted from an address. Every one ends in the id, so that pages never overlap.
 const ORDER: Readonly<Record<ListOrder, string>> = {
@@ -62,25 +77,30 @@ const ORDER: Readonly<Record<ListOrder, string>> = {
   due: "c.answer_due_at asc nulls last, c.id",
 };
 
-const columns = (otherParty: "seller" | "workshop") => `
-  select c.number, c.state, c.outcome, p.name as "partName", p.part_number as "partNumber",
+const COLUMNS = `c.number, c.state, c.outcome, p.name as "partName", p.part_number as "partNumber",
     coalesce(u.serial, d.body #>> '{lines,0,serial}') as serial, c.family, c.symptom,
     o.name as "otherParty", coalesce(n.line_count, 0)::int as "lineCount", c.asked_minor as "askedMinor",
     c.currency, c.filed_at as "filedAt", c.updated_at as "updatedAt", c.answer_due_at as "answerDueAt",
     c.clock_stopped_at as "clockStoppedAt", c.safety_reported as "safetyReported", h.name as "holderName",
     coalesce(c.holder_id = $2, false) as "isHeldByMe", coalesce(c.parked_with_id = $2, false) as "isParkedWithMe",
-    (select count(*)::int from claim_flags f where f.claim_id = c.id) as "flagCount"
-  from claims c
-    join organisations o on o.id = c.${otherParty}_id
-    left join users h on h.id = c.holder_id
+    (select count(*)::int from claim_flags f where f.claim_id = c.id) as "flagCount"`;
+
+const DETAILS = `left join users h on h.id = c.holder_id
     left join lateral (select count(*) as line_count, min(line_number) as first from claim_lines l where l.claim_id = c.id) n on true
     left join claim_lines l1 on l1.claim_id = c.id and l1.line_number = n.first
     left join claim_drafts d on d.claim_id = c.id and c.state = 'draft'
     left join parts p on p.id = coalesce(l1.part_id, (d.body #>> '{lines,0,partId}')::uuid)
     left join units u on u.id = l1.unit_id`;
 
+// Whose claims they are, and who the other party is.
+const CLAIMS: Readonly<Record<Side, string>> = {
+  received: "claims c join organisations o on o.id = c.workshop_id",
+  own: "claims c join organisations o on o.id = c.seller_id",
+};
+const MINE: Readonly<Record<Side, string>> = { received: "c.seller_id = $1", own: "c.workshop_id = $1" };
+
 /** A search: a claim number, a serial, or the beginning of a part number or of the other party's name. */
-const search = `($3 = '' or c.number = $4 or exists (select 1 from claim_lines s join parts sp on sp.id = s.part_id
+const SEARCH = `($3 = '' or c.number = $4 or exists (select 1 from claim_lines s join parts sp on sp.id = s.part_id
     left join units su on su.id = s.unit_id where s.claim_id = c.id
       and (su.serial_normal = $5 or sp.part_number ilike $6 or sp.name ilike $6)) or o.name ilike $6)`;
 
@@ -98,26 +118,26 @@ const bindings = (work: Work, { q }: ListQuery): unknown[] => {
   ];
 };
 
-type Side = { mine: "seller" | "workshop"; other: "seller" | "workshop"; views: typeof JUDGING };
 type Asked = ListQuery & { view: ListView };
 
-const RECEIVED: Side = { mine: "seller", other: "workshop", views: JUDGING };
-const SENT: Side = { mine: "workshop", other: "seller", views: OWN };
-
 async function listSide(work: Work, side: Side, query: Asked): Promise<ClaimList> {
+  const counts = await countViews(work, side);
+  const view = viewKey(side, query.view);
+  if (!view) return { claims: [], total: 0, counts };
   const bind = bindings(work, query);
-  const where = `c.${side.mine}_id = $1 and ${side.views[query.view] ?? "false"} and ${search}`;
   const claims = await rows<ListedClaim>(
     work,
-    `${columns(side.other)} where ${where} order by ${ORDER[query.order]} limit ${PAGE_SIZE} offset $7`,
+    `select ${COLUMNS} from ${CLAIMS[side]} ${DETAILS} where ${MINE[side]} and ${VIEW[view]} and ${SEARCH}
+     order by ${ORDER[query.order]} limit ${PAGE_SIZE} offset $7`,
     [...bind, (query.page - 1) * PAGE_SIZE],
   );
   const [total] = await rows<{ count: number }>(
     work,
-    `select count(*)::int as count from claims c join organisations o on o.id = c.${side.other}_id where ${where} and $2::uuid is not null`,
+    `select count(*)::int as count from ${CLAIMS[side]} where ${MINE[side]} and ${VIEW[view]} and ${SEARCH}
+       and $2::uuid is not null`,
     bind,
   );
-  return { claims, total: total?.count ?? 0, counts: await countViews(work, side) };
+  return { claims, total: total?.count ?? 0, counts };
 }
 
 /** Counts stop at a thousand: nobody reads further, and they cost the same however large the table grows. */
@@ -125,14 +145,16 @@ const COUNT_TO = 1000;
 
 async function countViews(work: Work, side: Side): Promise<ClaimList["counts"]> {
   const counts: Partial<Record<ListView, number>> = {};
-  for (const [view, condition] of Object.entries(side.views)) {
+  for (const view of VIEWS[side]) {
+    const key = viewKey(side, view);
+    if (!key) continue;
     const [found] = await rows<{ count: number }>(
       work,
-      `select count(*)::int as count from (select 1 from claims c where c.${side.mine}_id = $1 and ${condition}
+      `select count(*)::int as count from (select 1 from claims c where ${MINE[side]} and ${VIEW[key]}
          and $2::uuid is not null limit ${COUNT_TO}) counted`,
       [work.actor.organisationId, work.actor.userId],
     );
-    counts[view as ListView] = found?.count ?? 0;
+    counts[view] = found?.count ?? 0;
   }
   return counts;
 }
@@ -142,8 +164,8 @@ const pageOf = (actor: Actor, side: Side, query: Asked): Promise<ClaimItems> =>
 
 /** Claims as the distributor works them. */
 export const listReceivedClaims = (actor: Actor, query: ListQuery): Promise<ClaimItems> =>
-  pageOf(actor, RECEIVED, { ...query, view: query.view ?? "toJudge" });
+  pageOf(actor, "received", { ...query, view: query.view ?? "toJudge" });
 
 /** Claims as the workshop follows them. */
 export const listOwnClaims = (actor: Actor, query: ListQuery): Promise<ClaimItems> =>
-  pageOf(actor, SENT, { ...query, view: query.view ?? "onUs" });
+  pageOf(actor, "own", { ...query, view: query.view ?? "onUs" });

@@ -19,10 +19,10 @@ export type Decision = {
 type Decided<Code extends string> = Outcome<Decision, Code> | Promise<Outcome<Decision, Code>>;
 export type Moved = { readonly number: string };
 
-/** Thrown to take back what was written before a refusal was found; `undoing` turns it into the refusal again. */
+/** Thrown to take back what was written before a refusal was found; `undoing` then answers with that refusal. */
 class Undone extends Error {
-  constructor(readonly refusal: Refusal) {
-    super(`refused: ${refusal.code}`);
+  constructor(code: string) {
+    super(`refused: ${code}`);
   }
 }
 
@@ -31,14 +31,16 @@ export async function undoing<T, Code extends string>(
   actor: Actor,
   act: (work: Work) => Promise<Outcome<T, Code>>,
 ): Promise<Outcome<T, Code>> {
+  const found: { refusal?: Refusal<Code> } = {};
   try {
     return await unitOfWork(actor, async (work) => {
       const outcome = await act(work);
-      if (!outcome.ok) throw new Undone(outcome);
-      return outcome;
+      if (outcome.ok) return outcome;
+      found.refusal = outcome;
+      throw new Undone(outcome.code);
     });
   } catch (fault) {
-    if (fault instanceof Undone) return fault.refusal as Refusal<Code>;
+    if (fault instanceof Undone && found.refusal) return found.refusal;
     throw fault;
   }
 }
@@ -49,8 +51,7 @@ export async function undoing<T, Code extends string>(
  */
 export function moveClaim<Code extends string>(
   actor: Actor,
-  number: string,
-  move: ClaimMove,
+  { number, move }: { number: string; move: ClaimMove },
   decide: (claim: Claim, work: Work) => Decided<Code>,
 ): Promise<Outcome<Moved, Code | "notFound" | "moveNotOpen">> {
   return undoing<Moved, Code | "notFound" | "moveNotOpen">(actor, async (work) => {

@@ -43,8 +43,7 @@ async function workOutRows(work: Work, sheet: SheetRows, facts: ClaimFacts): Pro
 async function workOutCoverage(
   work: Work,
   sheet: SheetRows,
-  facts: ClaimFacts,
-  missing: number,
+  { facts, missing }: { facts: ClaimFacts; missing: number },
 ): Promise<Map<number, Coverage>> {
   const { claim } = sheet;
   const covered = new Map<number, Coverage>();
@@ -95,7 +94,7 @@ async function workOut(work: Work, sheet: SheetRows): Promise<WorkedOut> {
   const facts = factsOf(sheet);
   if (!facts) return NOTHING;
   const list = await workOutRows(work, sheet, facts);
-  const coverage = await workOutCoverage(work, sheet, facts, missingRows(list));
+  const coverage = await workOutCoverage(work, sheet, { facts, missing: missingRows(list) });
   if (work.actor.organisationId !== sheet.claim.sellerId) return { coverage, rows: list, caseLine: null };
   const first = coverage.get(1);
   return {

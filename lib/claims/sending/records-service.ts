@@ -92,8 +92,7 @@ const removalOf = (line: FactLine, facts: ClaimFacts): string | null =>
 export async function recordService(
   work: Work,
   claim: Claim,
-  facts: ClaimFacts,
-  draft: ClaimDraft,
+  { facts, draft }: { facts: ClaimFacts; draft: ClaimDraft },
 ): Promise<void> {
   const vehicleId = await keepVehicle(work, facts);
   await rows(work, "update claims set vehicle_id = $2 where id = $1 returning id", [claim.id, vehicleId]);

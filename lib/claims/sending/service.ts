@@ -2,6 +2,7 @@ import "server-only";
 import { createHash } from "node:crypto";
 import type { Actor } from "@/lib/access/actor";
 import { rows, type Work } from "@/lib/db/unit-of-work";
+import { calendarDay } from "@/lib/kernel/calendar-day";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { mailClaimPeople } from "@/lib/mail/outbox";
 import { familyOf } from "@/lib/parts/families";
@@ -33,10 +34,10 @@ async function sendRevision(
     rejectOnEmpty: true,
   });
   const draft = storedDraft(kept.body);
-  const { facts, problems } = readDraft(draft, await draftContext(work, claim, draft, now));
+  const { facts, problems } = readDraft(draft, await draftContext(work, claim, { draft, now }));
   if (!facts) return refuse("draftIncomplete", { count: problems.length });
 
-  await recordService(work, claim, facts, draft);
+  await recordService(work, claim, { facts, draft });
   await writeLines(work, claim, facts);
   await writeRevision(work, claim, facts);
   return ok(facts);
@@ -84,35 +85,39 @@ const sumOf = (facts: ClaimFacts): string =>
 const changesOf = (claim: Claim, facts: ClaimFacts, now: Date) => ({
   revision: claim.revision + 1,
   symptom: facts.symptom,
-  failedOn: facts.failedOn as Claim["failedOn"],
+  failedOn: calendarDay(facts.failedOn),
   askedMinor: sumOf(facts),
   ...safetyOf(claim, facts, now),
 });
 
 /** Sends a draft as revision 1. Refuses `draftIncomplete` with the number of things still to do. */
 export const fileClaim = (actor: Actor, { number }: { number: string }) =>
-  moveClaim<"draftIncomplete">(actor, number, "file", async (claim, work) => {
+  moveClaim<"draftIncomplete">(actor, { number, move: "file" }, async (claim, work) => {
     const now = new Date();
     const sent = await sendRevision(claim, work, now);
     if (!sent.ok) return sent;
     const dueAt = await answerDueAt(work, claim.sellerId, now);
     await flagDoubts(work, claim, sent.value);
-    await mailClaimPeople(work, claim.id, "workshop", {
-      kind: "claimFiled",
-      dedupeKey: `claimFiled:${claim.id}`,
-      params: {
-        link: publicUrl(claimPath(claim)),
-        number: printClaimNumber(number),
-        distributor: await nameOf(work, claim.sellerId),
-        part: sent.value.lines[0]?.part.name ?? "",
-        answerBy: dueAt?.toISOString() ?? "",
+    await mailClaimPeople(
+      work,
+      { claimId: claim.id, to: "workshop" },
+      {
+        kind: "claimFiled",
+        dedupeKey: `claimFiled:${claim.id}`,
+        params: {
+          link: publicUrl(claimPath(claim)),
+          number: printClaimNumber(number),
+          distributor: await nameOf(work, claim.sellerId),
+          part: sent.value.lines[0]?.part.name ?? "",
+          answerBy: dueAt?.toISOString() ?? "",
+        },
       },
-    });
+    );
     return ok({
       changes: {
         ...changesOf(claim, sent.value, now),
         filedAt: now,
-        filedOn: sent.value.filedOn as Claim["filedOn"],
+        filedOn: calendarDay(sent.value.filedOn),
         answerDueAt: dueAt,
       },
       detail: { revision: claim.revision + 1, incident: sent.value.incident !== null },
@@ -126,7 +131,7 @@ const pausedMinutes = (claim: Claim, now: Date): number =>
 
 /** Answers a query by sending the next revision; the distributor's clock runs again, later by as long as it stood. */
 export const answerQuery = (actor: Actor, { number }: { number: string }) =>
-  moveClaim<"draftIncomplete">(actor, number, "answer", async (claim, work) => {
+  moveClaim<"draftIncomplete">(actor, { number, move: "answer" }, async (claim, work) => {
     const now = new Date();
     const sent = await sendRevision(claim, work, now);
     if (!sent.ok) return sent;
@@ -138,16 +143,20 @@ export const answerQuery = (actor: Actor, { number }: { number: string }) =>
       [claim.id, revision],
     );
     await flagDoubts(work, claim, sent.value);
-    await mailClaimPeople(work, claim.id, "holder", {
-      kind: "queryAnswered",
-      dedupeKey: `queryAnswered:${claim.id}:${revision}`,
-      params: {
-        link: publicUrl(claimPath(claim)),
-        number: printClaimNumber(number),
-        workshop: await nameOf(work, claim.workshopId),
-        revision,
+    await mailClaimPeople(
+      work,
+      { claimId: claim.id, to: "holder" },
+      {
+        kind: "queryAnswered",
+        dedupeKey: `queryAnswered:${claim.id}:${revision}`,
+        params: {
+          link: publicUrl(claimPath(claim)),
+          number: printClaimNumber(number),
+          workshop: await nameOf(work, claim.workshopId),
+          revision,
+        },
       },
-    });
+    );
     return ok({
       changes: {
         ...changesOf(claim, sent.value, now),

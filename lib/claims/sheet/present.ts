@@ -6,7 +6,6 @@ import { money, type Money } from "@/lib/kernel/money";
 import { claimFacts, type ClaimFacts, type FactLine } from "../facts-shape";
 import { movesOpenTo } from "../lifecycle";
 import { printClaimNumber } from "../number";
-import type { Attribution } from "../verdict";
 import type {
   SheetClaim,
   SheetEvidence,
@@ -64,12 +63,7 @@ export const presentFile = (file: SheetEvidence, facts: ClaimFacts | null): Evid
   isInRevision: facts?.evidence.some((one) => one.id === file.id) ?? false,
 });
 
-function presentLine(
-  line: FactLine,
-  row: SheetLine | undefined,
-  claim: SheetClaim,
-  context: LineContext,
-): LineView {
+function presentLine(line: FactLine, row: SheetLine | undefined, context: LineContext): LineView {
   return {
     lineId: row?.id ?? "",
     lineNumber: line.lineNumber,
@@ -89,7 +83,7 @@ function presentLine(
     fittedOn: line.fittedOn,
     installer: line.installer && (context.installerNames.get(line.installer.code) ?? line.installer.code),
     replacement: line.replacement && { serial: line.replacement.serial, fittedOn: line.replacement.fittedOn },
-    asked: amount(line.askedMinor, claim.currency),
+    asked: amount(line.askedMinor, context.currency),
     coverage: context.coverage.get(line.lineNumber) ?? null,
     verdict: row?.verdict ?? null,
     returnState: row?.returnState ?? "notNeeded",
@@ -98,19 +92,23 @@ function presentLine(
   };
 }
 
-type LineContext = { coverage: ReadonlyMap<number, Coverage>; installerNames: ReadonlyMap<string, string> };
+type LineContext = {
+  readonly currency: string;
+  readonly coverage: ReadonlyMap<number, Coverage>;
+  readonly installerNames: ReadonlyMap<string, string>;
+};
 
 const presentVerdictLine = (line: SheetVerdictLine) => ({
   lineNumber: line.lineNumber,
   outcome: line.outcome,
-  attribution: line.attribution as Attribution,
+  attribution: line.attribution,
   reasonCode: line.reasonCode,
   reason: line.reason,
   rule:
     line.ruleNumber && line.ruleValidFrom
       ? { number: line.ruleNumber, title: line.ruleTitle ?? "", validFrom: line.ruleValidFrom }
       : null,
-  coverage: line.coverage as Coverage,
+  coverage: line.coverage,
   returnWaivedReason: line.returnWaivedReason,
 });
 
@@ -176,7 +174,7 @@ export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOu
   const facts = factsOf(sheet);
   const isSeller = actor.organisationId === claim.sellerId;
   const installerNames = new Map(sheet.installers.map(({ code, name }) => [code, name]));
-  const context = { coverage: workedOut.coverage, installerNames };
+  const context = { currency: claim.currency, coverage: workedOut.coverage, installerNames };
   const rowIds = new Set(workedOut.rows.map((row) => row.id));
   const files = sheet.evidence.map((file) => presentFile(file, facts));
   return {
@@ -206,7 +204,6 @@ export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOu
       presentLine(
         line,
         sheet.lines.find((row) => row.lineNumber === line.lineNumber),
-        claim,
         context,
       ),
     ),

@@ -1,8 +1,10 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import type { Coverage } from "@/lib/coverage/coverage";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import type { ClaimState, CreditState, ReturnState, VerdictOutcome } from "../lifecycle";
+import type { Attribution } from "../verdict";
 
 export type SheetClaim = {
   id: string;
@@ -68,13 +70,13 @@ export type SheetQuery = {
 export type SheetVerdictLine = {
   lineNumber: number;
   outcome: VerdictOutcome;
-  attribution: unknown;
+  attribution: Attribution;
   reasonCode: string;
   reason: string;
   ruleNumber: string | null;
   ruleTitle: string | null;
   ruleValidFrom: CalendarDay | null;
-  coverage: unknown;
+  coverage: Coverage;
   returnWaivedReason: string | null;
 };
 export type SheetVerdict = {

@@ -34,7 +34,8 @@ export const viewCopy: Task = async (payload, { query }) => {
     return;
   }
   const key = viewKey(file.sha256);
-  await putOnce(key, copy.jpeg, createHash("sha256").update(copy.jpeg).digest("base64"), "image/jpeg");
+  const sha256Base64 = createHash("sha256").update(copy.jpeg).digest("base64");
+  await putOnce(key, copy.jpeg, { sha256Base64, contentType: "image/jpeg" });
   await query(
     "update evidence_files set view_state = 'ready', view_key = $2, width_px = $3, height_px = $4 where id = $1",
     [evidenceId, key, copy.widthPx, copy.heightPx],

@@ -1,16 +1,9 @@
 import { describe, expect, it } from "vitest";
 import { coverageOn } from "@/lib/coverage/coverage";
 import { asSeenByWorkshop, type CoverageFacts } from "@/lib/coverage/facts";
-import { addDays } from "@/lib/kernel/calendar-day";
-import type { Terms } from "@/lib/rule-book/terms-shape";
 import { day, factsWith, failed, termsWith } from "./facts";
 
 const answered = (change: Partial<CoverageFacts>) => coverageOn(factsWith(change));
-/** Codes of the reasons that block or leave open. */
-const against = (change: Partial<CoverageFacts>) =>
-  answered(change)
-    .reasons.filter(({ effect }) => effect !== "notes")
-    .map(({ code }) => code);
 const results = (change: Partial<CoverageFacts>) =>
   answered(change).steps.map(({ rule, result }) => `${rule} ${result}`);
 

@@ -4,9 +4,7 @@ import { authOptions } from "@/lib/web/auth";
 
 type Context = { params: Promise<{ nextauth: string[] }> };
 
-const handler = (request: NextRequest, context: Context): Promise<Response> => {
-  const answer: unknown = NextAuth(request, context, authOptions());
-  return answer as Promise<Response>;
-};
+const handler = (request: NextRequest, context: Context): Promise<Response> =>
+  NextAuth(request, context, authOptions());
 
 export { handler as GET, handler as POST };

@@ -2,6 +2,7 @@
 
 import { redirect } from "next/navigation";
 import { changeFromFields } from "@/lib/claims/draft";
+import { claimDigits } from "@/lib/claims/number";
 import { draftChange } from "@/lib/claims/draft-shape";
 import { checkDraft } from "@/lib/claims/filing/queries";
 import { isUnread } from "@/lib/claims/filing/problems";
@@ -12,7 +13,7 @@ import { guardOrigin } from "@/lib/web/action";
 import { formValues } from "@/lib/web/form-values";
 import { requireActor } from "@/lib/web/session";
 
-const digitsOf = (form: FormData): string => String(form.get("number") ?? "").replace(/\D/gu, "");
+const digitsOf = (form: FormData): string => claimDigits(String(form.get("number") ?? ""));
 
 /** Saves a page of the draft and goes on; where something typed cannot be read, the page comes back and says so. */
 export async function saveStepAction(form: FormData): Promise<void> {

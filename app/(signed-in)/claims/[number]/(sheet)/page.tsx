@@ -1,6 +1,5 @@
 import type { Metadata } from "next";
 import { notFound, redirect } from "next/navigation";
-import { getTranslations } from "next-intl/server";
 import { CaseLineView } from "@/components/sheet/case-line";
 import { ConditionCard } from "@/components/sheet/condition-card";
 import { EvidenceCard } from "@/components/sheet/evidence-card";
@@ -13,6 +12,7 @@ import { SheetHead } from "@/components/sheet/sheet-head";
 import { Talk } from "@/components/sheet/talk";
 import { VerdictCard } from "@/components/sheet/verdict-card";
 import { listColleagues } from "@/lib/claims/judging/queries";
+import { claimDigits } from "@/lib/claims/number";
 import { claimPath, draftStepPath } from "@/lib/claims/paths";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
 import { requireSession } from "@/lib/web/session";
@@ -29,7 +29,7 @@ export async function generateMetadata({ params }: Props): Promise<Metadata> {
 export default async function ClaimSheetPage({ params, searchParams }: Props) {
   const [session, { number }, { sent }] = await Promise.all([requireSession(), params, searchParams]);
   const { actor } = session;
-  const digits = number.replace(/\D/gu, "");
+  const digits = claimDigits(number);
   const sheet = digits.length === 8 ? await findClaimSheet(actor, digits) : null;
   if (!sheet) notFound();
   if (sheet.state === "draft") redirect(draftStepPath({ number: digits }, "part"));

@@ -23,7 +23,7 @@ export default async function CheckStepPage(props: StepProps) {
   const { claim, draft, context, problems } = checked;
   const [t, sentences] = await Promise.all([
     getTranslations("draft"),
-    draftSentences(problems, "check", true, session.actor.locale),
+    draftSentences(problems, "check", { showsAll: true, locale: session.actor.locale }),
   ]);
   const isAnswer = claim.state === "answerNeeded";
   return (

@@ -23,7 +23,7 @@ export default async function EvidenceStepPage(props: StepProps) {
   const { draft, claim, context } = checked;
   const [t, sentences, query, files] = await Promise.all([
     getTranslations("draft"),
-    draftSentences(checked.problems, "evidence", showsAll, session.actor.locale),
+    draftSentences(checked.problems, "evidence", { showsAll, locale: session.actor.locale }),
     findOpenQuery(session.actor, claim.id),
     listEvidence(session.actor, claim.id),
   ]);
@@ -40,7 +40,7 @@ export default async function EvidenceStepPage(props: StepProps) {
           {query.question}
         </Banner>
       ) : null}
-      <Cautions family={context.family} />
+      <Cautions family={context.family} isFolded />
       <DraftForm number={claim.number} action={saveStepAction} savedAt={checked.savedAt.toISOString()}>
         <input type="hidden" name="step" value="evidence" />
         <EvidenceFields

@@ -21,7 +21,10 @@ export async function generateMetadata(): Promise<Metadata> {
 export default async function FaultStepPage(props: StepProps) {
   const { session, checked, showsAll } = await loadStep(props);
   const { draft, claim, context } = checked;
-  const sentences = await draftSentences(checked.problems, "fault", showsAll, session.actor.locale);
+  const sentences = await draftSentences(checked.problems, "fault", {
+    showsAll,
+    locale: session.actor.locale,
+  });
   return (
     <div className="grid max-w-2xl gap-6">
       <StepHead

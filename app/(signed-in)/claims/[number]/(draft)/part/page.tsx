@@ -28,7 +28,7 @@ export default async function PartStepPage(props: StepProps & { searchParams: Pr
   const [units, installers, sentences, search] = await Promise.all([
     listUnitsOfDraft(actor, draft),
     listInstallers(actor),
-    draftSentences(checked.problems, "part", showsAll, actor.locale),
+    draftSentences(checked.problems, "part", { showsAll, locale: actor.locale }),
     props.searchParams,
   ]);
   const other = search.other?.trim() ? await lookUpSerial(actor, search.other.slice(0, 80)) : null;

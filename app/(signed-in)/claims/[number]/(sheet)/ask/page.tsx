@@ -5,6 +5,7 @@ import { AskForm } from "@/components/judging/ask-form";
 import { Card } from "@/components/ui/card";
 import { PageHeader } from "@/components/ui/page-header";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
+import { claimDigits } from "@/lib/claims/number";
 import { requireSession } from "@/lib/web/session";
 import { askAction } from "../judging-actions";
 
@@ -20,7 +21,7 @@ export default async function AskPage({ params }: { params: Promise<{ number: st
     params,
     getTranslations("judging.ask"),
   ]);
-  const sheet = await findClaimSheet(actor, number.replace(/\D/gu, ""));
+  const sheet = await findClaimSheet(actor, claimDigits(number));
   if (!sheet?.moves.includes("ask")) notFound();
   const words = await getTranslations("evidence.rows");
   return (

@@ -7,6 +7,7 @@ import { CoverageSteps } from "@/components/sheet/coverage-steps";
 import { Card } from "@/components/ui/card";
 import { PageHeader } from "@/components/ui/page-header";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
+import { claimDigits } from "@/lib/claims/number";
 import { requireSession } from "@/lib/web/session";
 import { decideAction } from "../judging-actions";
 
@@ -22,7 +23,7 @@ export default async function DecidePage({ params }: { params: Promise<{ number:
     params,
     getTranslations("judging.decide"),
   ]);
-  const sheet = await findClaimSheet(actor, number.replace(/\D/gu, ""));
+  const sheet = await findClaimSheet(actor, claimDigits(number));
   if (!sheet?.moves.includes("decide")) notFound();
   return (
     <>

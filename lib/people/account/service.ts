@@ -4,18 +4,18 @@ import type { Actor } from "@/lib/access/actor";
 import { beforeSignIn, rows, unitOfWork } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { hashPassword, passwordFits } from "@/lib/web/password";
-import { readAddress } from "./address";
-import { passwordFault, type PasswordChangeInput, type PasswordFault, type Preferences } from "./schema";
-import { findLinkOwner, requestReset, type LinkOwner } from "./service";
+import { readAddress } from "../address";
+import { passwordFault, type PasswordChangeInput, type PasswordFault, type Preferences } from "../schema";
+import { requestReset } from "../service";
 
 const sha256 = (text: string) => createHash("sha256").update(text).digest("hex");
 
 /** Whether another try is allowed: ten for the first key and fifty for the second, in 15 minutes. */
 async function mayTry(account: string, address: string): Promise<boolean> {
-  const [attempt] = await beforeSignIn<{ allowed: boolean }>("select guarded.begin_attempt($1, $2) as allowed", [
-    sha256(account),
-    sha256(address),
-  ]);
+  const [attempt] = await beforeSignIn<{ allowed: boolean }>(
+    "select guarded.begin_attempt($1, $2) as allowed",
+    [sha256(account), sha256(address)],
+  );
   return attempt?.allowed ?? false;
 }
 
@@ -23,26 +23,23 @@ type LinkRequest = { readonly email: string; readonly address: string; readonly 
 
 /** Mails a link for a new password, and no more than ten to one account in 15 minutes. Never says which it was. */
 export async function askForReset({ email, address, requestId }: LinkRequest): Promise<void> {
-  if (await mayTry(`reset:${readAddress(email)}`, `resetFrom:${address}`)) await requestReset(email, requestId);
-}
-
-export type LinkPurpose = "reset" | "invitation";
-
-export type OpenLink = LinkOwner & { readonly organisation: string };
-
-/** Whose link for this purpose it is, while it can be used, with the organisation that person was last added to. */
-export async function findOpenLink(token: string, purpose: LinkPurpose): Promise<OpenLink | null> {
-  const owner = await findLinkOwner(token);
-  if (owner?.purpose !== purpose) return null;
-  const [found] = await beforeSignIn<{ name: string | null }>("select guarded.link_organisation($1) as name", [sha256(token)]);
-  return { ...owner, organisation: found?.name ?? "" };
+  if (await mayTry(`reset:${readAddress(email)}`, `resetFrom:${address}`))
+    await requestReset(email, requestId);
 }
 
 /** Keeps how a person likes to see the product. */
-export const savePreferences = (actor: Actor, { locale, theme, density }: Preferences): Promise<Outcome<null, never>> =>
+export const savePreferences = (
+  actor: Actor,
+  { locale, theme, density }: Preferences,
+): Promise<Outcome<null, never>> =>
   unitOfWork(actor, async (work) => {
     const kept = density === "byDevice" ? null : density;
-    await rows(work, "update users set locale = $1, theme = $2, density = $3 where id = $4", [locale, theme, kept, actor.userId]);
+    await rows(work, "update users set locale = $1, theme = $2, density = $3 where id = $4", [
+      locale,
+      theme,
+      kept,
+      actor.userId,
+    ]);
     return ok(null);
   });
 
@@ -84,29 +81,21 @@ export async function changePassword(
   return ok({ fault: null, sessionId });
 }
 
-export type OwnSession = { readonly id: string; readonly device: string; readonly startedAt: Date; readonly lastSeenAt: Date };
-
-/** Where a person is signed in, the latest used first. */
-export const listOwnSessions = (actor: Actor): Promise<OwnSession[]> =>
-  unitOfWork(actor, (work) =>
-    rows<OwnSession>(
-      work,
-      `select s.id, s.device, s.started_at as "startedAt", s.last_seen_at as "lastSeenAt"
-       from sessions s join users u on u.id = s.user_id and u.session_version = s.version
-       where s.user_id = $1 and s.ended_at is null and s.expires_at > now()
-         and s.last_seen_at > now() - make_interval(hours => s.idle_hours)
-       order by s.last_seen_at desc, s.id`,
-      [actor.userId],
-    ),
-  );
-
 /** Ends one of a person's own sessions; somebody else's is not there. */
-export const endOwnSession = (actor: Actor, { session }: { session: string }): Promise<Outcome<null, "notFound">> =>
+export const endOwnSession = (
+  actor: Actor,
+  { session }: { session: string },
+): Promise<Outcome<null, "notFound">> =>
   unitOfWork(actor, async (work) => {
-    const [own] = await rows(work, "select id from sessions where id = $1 and user_id = $2", [session, actor.userId]);
+    const [own] = await rows(work, "select id from sessions where id = $1 and user_id = $2", [
+      session,
+      actor.userId,
+    ]);
     if (!own) return refuse("notFound");
     await rows(work, "select guarded.end_session($1)", [session]);
-    await rows(work, "select guarded.append_audit('sessionEnded', $1)", [JSON.stringify({ sessionId: session })]);
+    await rows(work, "select guarded.append_audit('sessionEnded', $1)", [
+      JSON.stringify({ sessionId: session }),
+    ]);
     return ok(null);
   });
 
@@ -121,18 +110,3 @@ export const endOtherSessions = (actor: Actor, keptSessionId: string): Promise<O
     await rows(work, "select guarded.append_audit('otherSessionsEnded', '{}')");
     return ok(null);
   });
-
-export type Administrator = { readonly id: string; readonly name: string; readonly email: string };
-
-/** The administrators of the actor's own organisation: who to ask about roles, rules and accounts. */
-export const listAdministrators = (actor: Actor): Promise<Administrator[]> =>
-  unitOfWork(actor, (work) =>
-    rows<Administrator>(
-      work,
-      `select u.id, u.name, u.email from membership_roles r
-         join memberships m on m.organisation_id = r.organisation_id and m.user_id = r.user_id and m.disabled_at is null
-         join users u on u.id = r.user_id and u.disabled_at is null
-       where r.organisation_id = $1 and r.role = 'administrator' order by u.name, u.id`,
-      [actor.organisationId],
-    ),
-  );

@@ -1,0 +1,173 @@
+import "server-only";
+import { UniqueConstraintError } from "sequelize";
+import type { Actor } from "@/lib/access/actor";
+import { undoing } from "@/lib/claims/moves/service";
+import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { LIMITS, mostBytes } from "@/lib/kernel/limits";
+import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { importKey } from "@/lib/storage/keys";
+import { copyOnce, readAll, remove } from "@/lib/storage/objects";
+import { receiveFile, type Received, type ReceiveRefusal } from "@/lib/storage/receive";
+import type { Check } from "./check";
+import { headingsIn } from "./heading";
+import { checkFile, findImport, mayImport, storedFile } from "./queries";
+import { readCsv, type CsvFile } from "./read-csv";
+import type { ImportRefusal, ImportResult, StoredMapping } from "./schema";
+import { writeLines } from "./write-service";
+
+export type ImportSent = { readonly importId: string; readonly wasSentBefore: boolean };
+
+/** What receiving says of any file, in the words of this one. */
+const OURS: Readonly<Record<ReceiveRefusal, ImportRefusal>> = {
+  fileMissing: "fileMissing",
+  fileEmpty: "fileEmpty",
+  fileTooBig: "importTooBig",
+  uploadBroken: "uploadBroken",
+  uploadTooMany: "uploadTooMany",
+  fileTypeNotAllowed: "importNotCsv",
+  fileTypeHeic: "importNotCsv",
+  fileNameDisagrees: "importNotCsv",
+  fileNotText: "importNotCsv",
+};
+
+const isReceiving = (code: ReceiveRefusal | "notAllowed"): code is ReceiveRefusal =>
+  Object.hasOwn(OURS, code);
+
+/** The file as rows, or why it cannot be read, its missing columns named as the person would write them. */
+function fileFrom(bytes: Uint8Array, actor: Actor): Outcome<CsvFile, ImportRefusal> {
+  const read = readCsv(bytes, LIMITS.importLines);
+  if (read.ok || read.code !== "importColumnsMissing") return read;
+  return refuse(read.code, { columns: headingsIn(String(read.detail.columns), actor.locale) });
+}
+
+const mappingOf = ({ delimiter, encoding, heading }: CsvFile): StoredMapping => ({
+  delimiter,
+  encoding,
+  columns: [...heading.places.keys()],
+  unread: [...heading.unread],
+});
+
+const keyOf = (actor: Actor, sha256: string): string => `${importKey(sha256)}/${actor.organisationId}`;
+
+/** Notes the file once: the same bytes sent again are the import they were. */
+async function noteFile(work: Work, received: Received, file: CsvFile): Promise<ImportSent | null> {
+  const [made] = await rows<{ id: string }>(
+    work,
+    `insert into invoice_imports (seller_id, sha256, file_name, object_key, mapping, line_count, created_by_id)
+     values ($1, $2, $3, $4, $5, $6, $7) on conflict (seller_id, sha256) do nothing returning id`,
+    [
+      work.actor.organisationId,
+      received.sha256,
+      received.name,
+      keyOf(work.actor, received.sha256),
+      JSON.stringify(mappingOf(file)),
+      file.rows.length,
+      work.actor.userId,
+    ],
+  );
+  if (made) return { importId: made.id, wasSentBefore: false };
+  const [known] = await rows<{ id: string }>(
+    work,
+    "select id from invoice_imports where seller_id = $1 and sha256 = $2",
+    [work.actor.organisationId, received.sha256],
+  );
+  return known ? { importId: known.id, wasSentBefore: true } : null;
+}
+
+async function keep(actor: Actor, received: Received): Promise<Outcome<ImportSent, ImportRefusal>> {
+  const bytes = await readAll(received.quarantine, mostBytes("runLog"));
+  const file = fileFrom(bytes, actor);
+  if (!file.ok) return file;
+  await copyOnce(received.quarantine, keyOf(actor, received.sha256));
+  const sent = await unitOfWork(actor, (work) => noteFile(work, received, file.value));
+  return sent ? ok(sent) : refuse("uploadBroken", { name: received.name });
+}
+
+/**
+ * Receives one invoice file and keeps it for its preview; nothing of it counts yet. The same bytes again give the earlier
+ * import. Refuses what cannot be read as a whole, with a sentence that says why.
+ */
+export async function receiveInvoiceFile(
+  actor: Actor,
+  request: Request,
+): Promise<Outcome<ImportSent, ImportRefusal>> {
+  const received = await receiveFile(request, async () => {
+    const isAllowed = await unitOfWork(actor, mayImport);
+    return isAllowed ? ok("runLog" as const) : refuse("notAllowed");
+  });
+  if (!received.ok)
+    return isReceiving(received.code) ? refuse(OURS[received.code], received.detail) : refuse("notAllowed");
+  try {
+    return await keep(actor, received.value);
+  } finally {
+    await remove(received.value.quarantine).catch(() => undefined);
+  }
+}
+
+const resultOf = ({ totals, unchangedCount }: Check): ImportResult => ({
+  invoiceLines: totals.invoiceLines,
+  units: totals.units,
+  batches: totals.batches,
+  unchanged: unchangedCount,
+  sums: totals.sums.map(({ minor, currency }) => ({ minor: String(minor), currency })),
+});
+
+export type ImportLinesRefusal = "notFound" | "importHasProblems" | "importRunning" | "importClashed";
+type Imported = { readonly importId: string };
+
+const ONE_AT_A_TIME =
+  "select pg_try_advisory_xact_lock(hashtextextended('invoice-import ' || $1, 0)) as mine";
+
+/** The file's state, held until the transaction ends; null where it is nobody's or somebody else's. */
+async function stateForChange(work: Work, importId: string): Promise<string | null> {
+  const [found] = await rows<{ state: string }>(
+    work,
+    "select state from invoice_imports where id = $1 and seller_id = $2 for update",
+    [importId, work.actor.organisationId],
+  );
+  return found?.state ?? null;
+}
+
+async function importFile(
+  work: Work,
+  importId: string,
+  file: CsvFile,
+): Promise<Outcome<Imported, ImportLinesRefusal>> {
+  // Two files of one distributor at a time could each find the same invoice line missing.
+  const [lock] = await rows<{ mine: boolean }>(work, ONE_AT_A_TIME, [work.actor.organisationId]);
+  if (!lock?.mine) return refuse("importRunning");
+  const state = await stateForChange(work, importId);
+  if (state === null) return refuse("notFound");
+  if (state === "imported") return ok({ importId });
+  const check = await checkFile(work, file);
+  if (check.problemLineCount > 0) return refuse("importHasProblems", { count: check.problemLineCount });
+  await writeLines(work, check.fresh);
+  await rows(
+    work,
+    `update invoice_imports set state = 'imported', imported_at = now(),
+       mapping = mapping || jsonb_build_object('result', $2::jsonb) where id = $1 returning id`,
+    [importId, JSON.stringify(resultOf(check))],
+  );
+  return ok({ importId });
+}
+
+/**
+ * Imports a file whole, checked again inside the transaction, or nothing of it. A file that is imported already stays as
+ * it is. Refuses `notFound`, `importHasProblems` with how many lines have any, `importRunning` while another file of this
+ * organisation is being imported, and `importClashed` where somebody wrote the same line or serial meanwhile.
+ */
+export async function importLines(
+  actor: Actor,
+  { importId }: { readonly importId: string },
+): Promise<Outcome<Imported, ImportLinesRefusal>> {
+  const found = await findImport(actor, importId);
+  if (!found) return refuse("notFound");
+  if (found.state === "imported") return ok({ importId });
+  const file = await storedFile(found);
+  try {
+    return await undoing<Imported, ImportLinesRefusal>(actor, (work) => importFile(work, importId, file));
+  } catch (fault) {
+    if (fault instanceof UniqueConstraintError) return refuse("importClashed");
+    throw fault;
+  }
+}

@@ -1,0 +1,39 @@
+import { ROLES, type Role } from "@/lib/access/roles";
+
+export type PersonRow = {
+  id: string;
+  name: string;
+  email: string;
+  roles: string[];
+  disabledAt: Date | null;
+  lastSeenAt: Date | null;
+  hasPassword: boolean;
+};
+
+export const PERSON_STATES = ["active", "invited", "disabled"] as const;
+export type PersonState = (typeof PERSON_STATES)[number];
+
+/** A member of the organisation as the list shows them. */
+export type PersonView = {
+  readonly id: string;
+  readonly name: string;
+  readonly email: string;
+  readonly roles: readonly Role[];
+  readonly state: PersonState;
+  readonly lastSeenAt: Date | null;
+};
+
+const stateOf = ({ disabledAt, hasPassword }: PersonRow): PersonState => {
+  if (disabledAt) return "disabled";
+  return hasPassword ? "active" : "invited";
+};
+
+/** The row without what a page need not know. */
+export const presentPerson = (row: PersonRow): PersonView => ({
+  id: row.id,
+  name: row.name,
+  email: row.email,
+  roles: ROLES.filter((role) => row.roles.includes(role)),
+  state: stateOf(row),
+  lastSeenAt: row.lastSeenAt,
+});

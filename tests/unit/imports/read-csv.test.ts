@@ -1,0 +1,94 @@
+import { describe, expect, it } from "vitest";
+import { COLUMN_KEYS } from "@/lib/imports/columns";
+import { exampleFile } from "@/lib/imports/example";
+import { cellOf, readCsv } from "@/lib/imports/read-csv";
+import { HEAD, lineWith } from "./invoice-file";
+
+const utf8 = (text: string) => new TextEncoder().encode(text);
+const latin1 = (text: string) => Uint8Array.from(Buffer.from(text, "latin1"));
+const fileFrom = (bytes: Uint8Array, most = 100) => {
+  const read = readCsv(bytes, most);
+  if (!read.ok) throw new Error(read.code);
+  return read.value;
+};
+const codeOf = (text: string, most = 100) => {
+  const read = readCsv(utf8(text), most);
+  return read.ok ? "read" : read.code;
+};
+
+const GERMAN = "Kd.-Nr;Rechnungsnummer;Pos.;Rechnungsdatum;Artikelnummer;Stückpreis;USt-Kategorie;MwSt-Satz";
+
+describe("an invoice file", () => {
+  it.each([
+    ["comma", HEAD, ","],
+    ["semicolon", HEAD.replaceAll(",", ";"), ";"],
+    ["tab", HEAD.replaceAll(",", "\t"), "\t"],
+  ])("is read with a %s between its cells", (_name, head, delimiter) => {
+    const file = fileFrom(utf8(`${head}\r\n${lineWith().replaceAll(",", delimiter)}\r\n`));
+    expect(file.delimiter).toBe(delimiter);
+    expect(file.rows.map((row) => cellOf(file.heading, row, "serial"))).toEqual(["AA-1"]);
+  });
+
+  it("is read with German headings, decimal comma and semicolons", () => {
+    const file = fileFrom(utf8(`${GERMAN}\nK-1;R-1;1;2.3.2026;BR-1;184,50;S;19`));
+    const [row] = file.rows;
+    expect(row && cellOf(file.heading, row, "netPrice")).toBe("184,50");
+    expect(row && cellOf(file.heading, row, "site")).toBe("");
+  });
+
+  it("is read with and without the mark of UTF-8, and in Windows-1252 with a notice", () => {
+    const text = `${GERMAN}\nKöhler;R-1;1;2.3.2026;BR-1;1;S;19`;
+    for (const [bytes, encoding] of [
+      [utf8(text), "utf-8"],
+      [utf8(`\ufeff${text}`), "utf-8"],
+      [latin1(text), "windows-1252"],
+    ] as const) {
+      const file = fileFrom(bytes);
+      const [row] = file.rows;
+      expect(file.encoding).toBe(encoding);
+      expect(row && cellOf(file.heading, row, "account")).toBe("Köhler");
+    }
+  });
+
+  it("knows on which line of the file a row begins, past blank lines and cells with breaks in them", () => {
+    const file = fileFrom(utf8(`${HEAD}\n\n${lineWith({ batch: '"L\n1"' })}\n,,,\n${lineWith()}\n`));
+    expect(file.rows.map(({ line }) => line)).toEqual([3, 6]);
+  });
+
+  it("takes off the quote that keeps a spreadsheet from running a cell", () => {
+    const file = fileFrom(utf8(`${HEAD}\n${lineWith({ serial: "'-77", batch: "'A" })}`));
+    const [row] = file.rows;
+    expect(row && cellOf(file.heading, row, "serial")).toBe("-77");
+    expect(row && cellOf(file.heading, row, "batch")).toBe("'A");
+  });
+
+  it("names headings that mean nothing, and leaves their cells out", () => {
+    expect(fileFrom(utf8(`${HEAD},Sales rep,\n${lineWith()},Vale,`)).heading.unread).toEqual(["Sales rep"]);
+  });
+
+  it.each([
+    ["no column it needs", "a,b\n1,2", "importColumnsMissing"],
+    ["two headings for one column", `${HEAD},Kunde\n${lineWith()},K-2`, "importColumnTwice"],
+    ["no line", `${HEAD}\n\n`, "importWithoutLines"],
+    ["nothing", "", "importWithoutLines"],
+    ["a quotation mark that never closes", `${HEAD}\n"${lineWith()}\n${lineWith()}`, "importQuoteOpen"],
+    ["a cell without end", `${HEAD}\n${"x".repeat(30_000)}`, "importLineTooLong"],
+    ["a NUL", `${HEAD}\n\0`, "importNotText"],
+    ["a thousand columns", `${HEAD}${",x".repeat(1000)}\n${lineWith()}`, "importTooManyColumns"],
+  ])("is refused with %s", (_name, text, code) => {
+    expect(codeOf(text)).toBe(code);
+  });
+
+  it("is refused above the most lines, and taken at it", () => {
+    const text = [HEAD, lineWith(), lineWith()].join("\n");
+    expect(codeOf(text, 2)).toBe("read");
+    expect(codeOf(text, 1)).toBe("importTooManyLines");
+  });
+
+  it.each(["en", "de"] as const)("reads its own example in %s, every column found", (locale) => {
+    const file = fileFrom(utf8(exampleFile(locale)));
+    expect([...file.heading.places.keys()]).toEqual(COLUMN_KEYS);
+    expect(file.heading.unread).toEqual([]);
+    expect(file.rows).toHaveLength(3);
+  });
+});
