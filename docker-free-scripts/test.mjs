@@ -78,7 +78,9 @@ async function runWithoutServices() {
 
 /** What the web said of its own faults: the first thing wanted after a failure. */
 function printFaults(log) {
-  const faults = readFileSync(log, "utf8").split("\n").filter((line) => /"level":"error"|Error:/.test(line));
+  const faults = readFileSync(log, "utf8")
+    .split("\n")
+    .filter((line) => /"level":"error"|Error:/.test(line));
   if (faults.length > 0) process.stdout.write(`Faults of the web:\n${faults.slice(-20).join("\n")}\n`);
 }
 

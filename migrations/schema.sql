@@ -1472,7 +1472,7 @@ CREATE INDEX fittings_by_vehicle ON public.fittings USING btree (workshop_id, ve
 
 CREATE INDEX fittings_by_workshop ON public.fittings USING btree (workshop_id, fitted_on);
 
-CREATE INDEX invoice_lines_by_buyer ON public.invoice_lines USING btree (buyer_id, seller_id, invoiced_on);
+CREATE INDEX invoice_lines_by_buyer ON public.invoice_lines USING btree (buyer_id, invoiced_on);
 
 CREATE INDEX invoice_lines_by_part ON public.invoice_lines USING btree (seller_id, part_id);
 

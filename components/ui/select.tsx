@@ -14,7 +14,13 @@ export function Select({ options, blank, ...props }: SelectProps) {
   return (
     <Field {...field}>
       <span className="relative block">
-        <select {...select} {...controlOf(field)} className={clsx(inputStyle, "appearance-none pr-10")}>
+        {/* A form that was refused is reset by its action; a list only shows what was chosen when it is made anew. */}
+        <select
+          key={String(select.defaultValue ?? "")}
+          {...select}
+          {...controlOf(field)}
+          className={clsx(inputStyle, "appearance-none pr-10")}
+        >
           {blank === undefined ? null : <option value="">{blank}</option>}
           {options.map(({ value, label }) => (
             <option key={value} value={value}>

@@ -50,12 +50,20 @@ class Intake extends Writable {
   private sent: Promise<unknown> = Promise.resolve();
   type: Outcome<MediaType, TypeRefusal> | undefined;
   sizeBytes = 0;
+  private settle: { whole: () => void; broken: (fault: unknown) => void } | undefined;
+  /** Settles when the last byte is kept, or with the reason why it is not: the parser does not wait for that. */
+  readonly whole = new Promise<void>((resolve, reject) => {
+    this.settle = { whole: resolve, broken: reject };
+  });
 
   constructor(
     readonly name: string,
     private readonly kind: FileKind,
   ) {
     super({ highWaterMark: 1 << 20 });
+    this.whole.catch(() => undefined);
+    this.once("error", (fault) => this.settle?.broken(fault));
+    this.once("close", () => this.settle?.broken(new Error("closed early")));
   }
 
   private async decide(): Promise<void> {
@@ -98,7 +106,10 @@ class Intake extends Writable {
   }
 
   override _final(done: (fault?: Error | null) => void): void {
-    this.finish().then(() => done(), done);
+    this.finish().then(() => {
+      this.settle?.whole();
+      done();
+    }, done);
   }
 
   get sha256(): string {
@@ -179,7 +190,11 @@ export async function receiveFile<Code extends string>(
 function parserFor<Code extends string>(
   fields: Record<string, string>,
   decide: Decide<Code>,
-  hooks: { onIntake: (intake: Intake) => void; onRefusal: (refusal: Refusal<Code>) => void },
+  hooks: {
+    onIntake: (intake: Intake) => void;
+    onRefusal: (refusal: Refusal<Code>) => void;
+    onFault: (fault: unknown) => null;
+  },
 ): Parser {
   let kind: FileKind = "photo";
   const form = formidable({
@@ -204,7 +219,11 @@ function parserFor<Code extends string>(
   const hooked: PartHook = form;
   hooked.onPart = async (part) => {
     if (typeof part.originalFilename === "string") {
-      const decided = await decide(fields);
+      const decided = await decide(fields).catch((fault: unknown) => hooks.onFault(fault));
+      if (!decided) {
+        form.emit("error", new NotWanted("fault"));
+        return;
+      }
       if (!decided.ok) {
         hooks.onRefusal(decided);
         form.emit("error", new NotWanted(decided.code));
@@ -225,18 +244,26 @@ async function receive<Code extends string>(
   const { body, stop } = watch(request);
   const intakes: Intake[] = [];
   const refusals: Refusal<Code>[] = [];
+  const faults: unknown[] = [];
   const hooks = {
     onIntake: (intake: Intake) => void intakes.push(intake),
     onRefusal: (refusal: Refusal<Code>) => void refusals.push(refusal),
+    onFault: (fault: unknown) => {
+      faults.push(fault);
+      return null;
+    },
   };
   try {
     await parserFor(fields, decide, hooks).parse(incoming(request, body));
     const [intake] = intakes;
+    await intake?.whole;
     if (!intake?.type?.ok) return refuse("fileMissing");
     const { key: quarantine, name, sizeBytes, sha256 } = intake;
     return ok({ quarantine, name, sizeBytes, sha256, mediaType: intake.type.value, fields });
   } catch (fault) {
     for (const intake of intakes) await intake.drop();
+    // A fault of ours is no refusal: it goes up as it is.
+    if (faults.length > 0) throw faults[0];
     const [refused] = refusals;
     return fault instanceof NotWanted && refused ? refused : refusalOf(fault, intakes[0]);
   } finally {

@@ -51,7 +51,9 @@ test.describe("at the bench, on a phone", () => {
   test("a draft saves itself while it is typed", async ({ page }) => {
     await signInAs(page, TECHNICIAN);
     const other = await startWithSerial(page, REPLACEMENT);
+    const kept = page.waitForResponse((answer) => answer.url().endsWith("/draft") && answer.ok());
     await page.locator('[name="frameSerial"]').fill("HD4-SAVES-ITSELF");
+    await kept;
     await expect(page.getByText(/^Safe with us, /)).toBeVisible();
     await page.goto(`/claims/${other}/part`);
     await expect(page.locator('[name="frameSerial"]')).toHaveValue("HD4-SAVES-ITSELF");
@@ -111,6 +113,7 @@ test("the assessor decides line by line, on the revision that was on the screen"
   // Shares that do not add to one are refused at their place, and nothing is lost.
   await expect(page.locator('[name="letter"]')).toHaveValue(/We uphold the claim/);
   await expect(page.locator('[name="lines.0.shares.maker"]')).toHaveValue("2/3");
+  await expect(page.locator('[name="lines.0.reasonCode"]')).toHaveValue("partFault");
   await page.locator('[name="lines.0.shares.maker"]').fill("1");
   await page.getByRole("button", { name: "Send verdict" }).click();
   await expect(page.getByRole("heading", { name: "Verdict" })).toBeVisible();

@@ -106,5 +106,5 @@ export async function mailsTo(address: string): Promise<CaughtMail[]> {
   const query = new URLSearchParams({ to: address });
   const answer = await fetch(`${setting("MAILBOX_URL")}/api/mails?${query}`);
   if (!answer.ok) throw new Error(`The mail catcher answered ${answer.status}`);
-  return z.array(mailShape).parse(await answer.json());
+  return z.object({ mails: z.array(mailShape) }).parse(await answer.json()).mails;
 }

@@ -66,7 +66,7 @@ export async function insertMembership(person: Id, organisation: Id, roles: read
   for (const role of roles) await insertRow("membership_roles", { ...names, role });
 }
 
-export const buildMaker = (seller: Id, over: Over = {}) =>
+const buildMaker = (seller: Id, over: Over = {}) =>
   make("makers", { seller_id: seller.id, name: unlike("Maker"), ...over });
 
 export async function buildPart(seller: Id, over: Over = {}): Promise<Id> {
@@ -92,7 +92,7 @@ export const buildBatch = (seller: Id, part: Id, over: Over = {}) =>
 
 type Sale = { readonly seller: Id; readonly buyer: Id; readonly account: Id; readonly part: Id };
 
-export const buildInvoiceLine = ({ seller, buyer, account, part }: Sale, over: Over = {}) =>
+const buildInvoiceLine = ({ seller, buyer, account, part }: Sale, over: Over = {}) =>
   make("invoice_lines", {
     seller_id: seller.id,
     buyer_id: buyer.id,
