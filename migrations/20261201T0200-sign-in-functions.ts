@@ -134,7 +134,11 @@ const links = [
     "uuid",
     `declare invited uuid;
      begin
-       if ctx_org() is null then raise exception 'no organisation in this transaction' using errcode = 'PP002'; end if;
+       if not exists (select 1 from memberships m join membership_roles r
+           on r.organisation_id = m.organisation_id and r.user_id = m.user_id and r.role = 'administrator'
+         where m.organisation_id = ctx_org() and m.user_id = ctx_actor() and m.disabled_at is null) then
+         raise exception 'only an administrator invites' using errcode = 'PP002';
+       end if;
        insert into users (email, name, locale) values (p_email, p_name, p_locale)
          on conflict (email) do nothing;
        select id into invited from users where email = p_email;

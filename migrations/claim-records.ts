@@ -211,7 +211,8 @@ export const holdUnit = `
         where l.seller_id = line.seller_id and l.unit_id = wanted and l.holds_unit;
       if holder is not null then
         perform guarded.flag_claim(line.claim_id, line.line_number, 'unitHeld', jsonb_build_object('otherClaim', holder));
-      elsif line.unit_id is not null then
+      elsif exists (select 1 from units where id = line.unit_id and buyer_id = line.workshop_id) then
+        -- Only who bought the unit holds it: an id that somebody guessed holds nothing.
         update claim_lines set holds_unit = true where id = p_line;
       end if;
     end $body$;

@@ -4,6 +4,7 @@ import { getTranslations } from "next-intl/server";
 import type { z } from "zod";
 import type { Locale } from "@/lib/kernel/locale";
 import type { Outcome } from "@/lib/kernel/outcome";
+import { storableText } from "@/lib/kernel/storable-text";
 import { withIdempotency } from "./idempotency";
 import { log } from "./log";
 import { isFromOurPages } from "./origin";
@@ -101,9 +102,13 @@ async function readText(request: Request, maxBytes: number): Promise<string | nu
   return Buffer.concat(chunks).toString("utf8");
 }
 
+/** Every text of a body, names of fields left alone: those are checked against their shape. */
+const storable = (_key: string, value: unknown): unknown =>
+  typeof value === "string" ? storableText(value) : value;
+
 const parseJson = (text: string): unknown => {
   try {
-    const read: unknown = JSON.parse(text);
+    const read: unknown = JSON.parse(text, storable);
     return read;
   } catch {
     return undefined;

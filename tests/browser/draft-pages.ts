@@ -43,7 +43,11 @@ export async function fillFault(page: Page, failedOn: string) {
 }
 
 /** A photo or a log into its row, and the row says when it is safe. */
-export async function upload(page: Page, rowId: string, file: { name: string; mimeType: string; buffer: Buffer }) {
+export async function upload(
+  page: Page,
+  rowId: string,
+  file: { name: string; mimeType: string; buffer: Buffer },
+) {
   const row = page.locator(`[id="rows.${rowId}"]`);
   await row.locator('input[type="file"]:not([capture])').setInputFiles(file);
   await expect(row.getByText("Safe with us")).toBeVisible({ timeout: 30_000 });
@@ -52,8 +56,16 @@ export async function upload(page: Page, rowId: string, file: { name: string; mi
 /** Page 3: everything that is still to do, by its kind; what cannot be had says why. */
 export async function fillEvidence(page: Page, serial: string) {
   const rows = page.locator('li[id^="rows."]');
-  await upload(page, "label", { name: "label.jpg", mimeType: "image/jpeg", buffer: await photoWithPlace(serial) });
-  await upload(page, "runLog", { name: "bench run.csv", mimeType: "text/csv", buffer: Buffer.from(runLogCsv()) });
+  await upload(page, "label", {
+    name: "label.jpg",
+    mimeType: "image/jpeg",
+    buffer: await photoWithPlace(serial),
+  });
+  await upload(page, "runLog", {
+    name: "bench run.csv",
+    mimeType: "text/csv",
+    buffer: Buffer.from(runLogCsv()),
+  });
   for (const row of await rows.all()) {
     const id = (await row.getAttribute("id"))?.replace("rows.", "") ?? "";
     if (["label", "runLog"].includes(id)) continue;

@@ -22,7 +22,12 @@ export async function photoWithPlace(text: string): Promise<Buffer> {
     .jpeg({ quality: 88 })
     .withExif({
       IFD0: { Make: "Bench camera" },
-      IFD3: { GPSLatitudeRef: "N", GPSLatitude: "51/1 30/1 0/1", GPSLongitudeRef: "W", GPSLongitude: "0/1 7/1 0/1" },
+      IFD3: {
+        GPSLatitudeRef: "N",
+        GPSLatitude: "51/1 30/1 0/1",
+        GPSLongitudeRef: "W",
+        GPSLongitude: "0/1 7/1 0/1",
+      },
     })
     .toBuffer();
 }

@@ -25,15 +25,26 @@ async function findInstaller(work: Work, name: string): Promise<Installer | null
   return found ?? null;
 }
 
-async function findReplacement(work: Work, line: DraftLine, sellerId: string): Promise<string | null> {
-  const serial = normaliseSerial(line.replacementSerial);
-  if (serial === "") return null;
+type Typed = { serial: string; sellerId: string; partId?: string | null };
+
+/** The unit this workshop bought whose serial somebody typed, of that part where it is known. */
+async function findOwnUnit(work: Work, { serial, sellerId, partId = null }: Typed): Promise<string | null> {
+  const normal = normaliseSerial(serial);
+  if (normal === "") return null;
   const [found] = await rows<{ id: string }>(
     work,
-    "select id from units where buyer_id = $1 and seller_id = $2 and serial_normal = $3",
-    [work.actor.organisationId, sellerId, serial],
+    `select id from units where buyer_id = $1 and seller_id = $2 and serial_normal = $3
+       and ($4::uuid is null or part_id = $4) order by id limit 1`,
+    [work.actor.organisationId, sellerId, normal, partId],
   );
   return found?.id ?? null;
+}
+
+/** A part chosen by hand may still carry a serial that answers; then it is that unit, as if it had been looked up. */
+async function findUnit(work: Work, line: DraftLine, sellerId: string): Promise<SoldUnit | null> {
+  const { serial, partId } = line;
+  const unitId = line.unitId ?? (await findOwnUnit(work, { serial, sellerId, partId }));
+  return unitId === null ? null : findSoldUnit(work, unitId);
 }
 
 const invoiceLineOf = (
@@ -61,10 +72,10 @@ async function findPart(work: Work, partId: string, sellerId: string): Promise<F
 /** What a line's ids really stand for; ids of somebody else's things find nothing. */
 async function findLine(work: Work, line: DraftLine, sellerId: string): Promise<FoundLine | null> {
   const [unit, sold, installer, replacementUnitId] = [
-    line.unitId ? await findSoldUnit(work, line.unitId) : null,
+    await findUnit(work, line, sellerId),
     line.invoiceLineId ? await findSoldLine(work, line.invoiceLineId) : null,
     await findInstaller(work, line.installer),
-    await findReplacement(work, line, sellerId),
+    await findOwnUnit(work, { serial: line.replacementSerial, sellerId }),
   ];
   const partId = unit?.partId ?? sold?.partId ?? line.partId;
   const part = partId ? await findPart(work, partId, sellerId) : null;
