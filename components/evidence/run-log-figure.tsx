@@ -6,17 +6,26 @@ import { RunLogTable } from "@/components/chart/run-log-table";
 import { Banner } from "@/components/ui/banner";
 import { minutesAndSeconds } from "@/lib/evidence/duration";
 import type { RunAnalysis } from "@/lib/evidence/run-analysis";
-import { isRunLogSummary, type RunLogSummary } from "@/lib/evidence/run-log-summary";
+import { isRunLogSummary, withLimits, type RunLogSummary } from "@/lib/evidence/run-log-summary";
 import { formatNumber } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
+import type { Limits } from "@/lib/rule-book/limits-shape";
+import { runLimitsOf } from "@/lib/rule-book/run-limits";
 
-type RunLogFigureProps = { fileId: string; summary: unknown; locale: Locale };
+type RunLogFigureProps = { fileId: string; summary: unknown; limits: Limits | null; locale: Locale };
 
 /** A run log as it was read once: drawn, counted and explained; or that it is being read, or why it cannot be. */
-export function RunLogFigure({ fileId, summary, locale }: RunLogFigureProps) {
+export function RunLogFigure({ fileId, summary, limits, locale }: RunLogFigureProps) {
   const t = useTranslations("evidence.runLog");
   if (!isRunLogSummary(summary)) return <Banner kind="info">{t("beingRead")}</Banner>;
-  if (summary.isRead) return <ReadLog fileId={fileId} run={summary} locale={locale} />;
+  if (summary.isRead) {
+    const named = limits
+      ? runLimitsOf(limits).map((one) => ({ ...one, name: t(`limits.${one.key}`, { of: one.name }) }))
+      : [];
+    const coil = limits?.coil ? { ohmAt20: limits.coil.ratedOhm } : undefined;
+    const run = withLimits(summary, { limits: named, ...(coil ? { coil } : {}) });
+    return <ReadLog fileId={fileId} run={run} locale={locale} />;
+  }
   return (
     <Banner kind="wanting" title={t("notRead")} actions={<Download fileId={fileId} />}>
       {t(`refusals.${summary.code}`, summary.detail)} {t("keptAsSent")}

@@ -6,6 +6,7 @@ import { EvidenceMark, Mark } from "@/components/ui/status-mark";
 import type { EvidenceFileView, EvidenceRowView, ReadingView } from "@/lib/claims/sheet/view";
 import { formatBytes, formatNumber } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
+import type { Limits } from "@/lib/rule-book/limits-shape";
 import type { SheetProps } from "./shared";
 
 /** All that was given as proof, in the order of the Evidence list; readings beside their limits, logs drawn at once. */
@@ -19,20 +20,22 @@ export function EvidenceCard({ sheet, locale }: SheetProps) {
       ) : null}
       <ol className="grid">
         {sheet.rows.map((row) => (
-          <EvidenceRow key={row.id} row={row} locale={locale} />
+          <EvidenceRow key={row.id} row={row} limits={sheet.limits} locale={locale} />
         ))}
       </ol>
       {sheet.otherFiles.length > 0 ? (
         <div className="mt-4">
           <h3 className="mb-2 text-18">{t("others")}</h3>
-          <Files files={sheet.otherFiles} locale={locale} />
+          <Files files={sheet.otherFiles} limits={sheet.limits} locale={locale} />
         </div>
       ) : null}
     </Card>
   );
 }
 
-function EvidenceRow({ row, locale }: { row: EvidenceRowView; locale: Locale }) {
+type Against = { limits: Limits | null; locale: Locale };
+
+function EvidenceRow({ row, limits, locale }: { row: EvidenceRowView } & Against) {
   const t = useTranslations("sheet.evidence");
   const words = useTranslations("evidence.rows");
   return (
@@ -47,7 +50,7 @@ function EvidenceRow({ row, locale }: { row: EvidenceRowView; locale: Locale }) 
         <p className="max-w-measure text-ink-2">{t("cannotGet", { reason: row.reason })}</p>
       ) : null}
       {row.reading ? <ReadingLine reading={row.reading} locale={locale} /> : null}
-      <Files files={row.files} locale={locale} />
+      <Files files={row.files} limits={limits} locale={locale} />
     </li>
   );
 }
@@ -101,7 +104,7 @@ function ReadingLine({ reading, locale }: { reading: ReadingView; locale: Locale
   );
 }
 
-function Files({ files, locale }: { files: readonly EvidenceFileView[]; locale: Locale }) {
+function Files({ files, limits, locale }: { files: readonly EvidenceFileView[] } & Against) {
   const t = useTranslations("sheet.evidence");
   if (files.length === 0) return null;
   const pictures = files.filter((file) => file.kind === "photo");
@@ -135,7 +138,7 @@ function Files({ files, locale }: { files: readonly EvidenceFileView[]; locale: 
       {others.map((file) => (
         <div key={file.id} className="min-w-0">
           {file.kind === "runLog" ? (
-            <RunLogFigure fileId={file.id} summary={file.summary} locale={locale} />
+            <RunLogFigure fileId={file.id} summary={file.summary} limits={limits} locale={locale} />
           ) : null}
           <FileNote file={file} locale={locale} />
         </div>

@@ -1,7 +1,7 @@
 import clsx from "clsx";
 
 /** A serial in groups of four, counted from the left; one that brings its own separators keeps them. */
-export const groupsOfFour = (serial: string): string[] =>
+const groupsOfFour = (serial: string): string[] =>
   /[^\p{L}\p{N}]/u.test(serial) ? [serial] : (serial.match(/.{1,4}/gu) ?? []);
 
 /**

@@ -2,7 +2,7 @@
  * Our mark: a sheet under its clip, a part punched through it, and the tick that proves it. The hole shows the
  * ground, so it works on paper, on a sheet and in print.
  */
-export function HouseMark({ className = "size-7" }: { className?: string }) {
+function HouseMark({ className = "size-7" }: { className?: string }) {
   return (
     <svg viewBox="0 0 28 28" aria-hidden="true" className={`shrink-0 fill-current text-petrol ${className}`}>
       <path d="M3 1h22v4H3Z" />

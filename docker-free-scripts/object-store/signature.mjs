@@ -2,16 +2,16 @@ import { createHash, createHmac, timingSafeEqual } from "node:crypto";
 
 // AWS Signature Version 4, from the published description of the algorithm: header form and query form.
 
-export const sha256Hex = (data) => createHash("sha256").update(data).digest("hex");
+const sha256Hex = (data) => createHash("sha256").update(data).digest("hex");
 const hmac = (key, text) => createHmac("sha256", key).update(text).digest();
 
 /** Percent-encoding as the signature wants it: everything but unreserved characters. */
-export const encodeStrict = (text) =>
+const encodeStrict = (text) =>
   encodeURIComponent(text).replace(/[!'()*]/g, (sign) => `%${sign.charCodeAt(0).toString(16).toUpperCase()}`);
 
 const CLOCK_SKEW_MS = 15 * 60_000;
 
-export const signingKey = (secret, date, region) =>
+const signingKey = (secret, date, region) =>
   hmac(hmac(hmac(hmac(`AWS4${secret}`, date), region), "s3"), "aws4_request");
 
 const same = (a, b) => a.length === b.length && timingSafeEqual(Buffer.from(a), Buffer.from(b));

@@ -1,4 +1,3 @@
-import { keysOf } from "@/lib/kernel/keys";
 import { type Role } from "./roles";
 
 /** What a person may do besides the moves of a claim. The same table draws the navigation and guards the services. */
@@ -41,7 +40,3 @@ export function hasRight(roles: ReadonlySet<Role>, right: Right, organisation: O
   if (side && !organisation[side]) return false;
   return RIGHTS[right].some((role) => roles.has(role));
 }
-
-/** Every right of a person, for drawing the navigation. */
-export const rightsOf = (roles: ReadonlySet<Role>, organisation: Organisation): Right[] =>
-  keysOf(RIGHTS).filter((right) => hasRight(roles, right, organisation));

@@ -32,8 +32,3 @@ export const askInput = z.strictObject({
   question: reason,
   rowIds: z.array(z.string().max(60)).max(40).default([]),
 });
-export const messageInput = z.strictObject({
-  number: claimNumberInput,
-  body: reason,
-  audience: z.enum(["both", "own"]).default("both"),
-});

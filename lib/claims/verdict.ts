@@ -16,7 +16,7 @@ export const CAUSES = ["maker", "carrier", "fitter", "user", "wear"] as const;
 export type Cause = (typeof CAUSES)[number];
 
 /** Causes the distributor answers for: the part as made, and the way to the workshop. */
-export const CREDITED_CAUSES: readonly Cause[] = ["maker", "carrier"];
+const CREDITED_CAUSES: readonly Cause[] = ["maker", "carrier"];
 
 /** Exact shares as text, for example `{ maker: "3/4", wear: "1/4" }`; a cause left out has none. */
 export type Attribution = Readonly<Partial<Record<Cause, string>>>;

@@ -42,13 +42,6 @@ export async function unitOfWork<T>(actor: Actor, act: (work: Work) => Promise<T
   }
 }
 
-/** Rolls back: a refusal found after something was written. */
-export class Undo extends Error {
-  constructor(readonly refusal: unknown) {
-    super("undone");
-  }
-}
-
 /** The few statements before anybody is known: signing in, single-use links. They may call `guarded` functions only. */
 export const beforeSignIn = <Row extends object>(sql: string, bind: unknown[]): Promise<Row[]> =>
   sequelize.query<Row>(sql, { bind, type: QueryTypes.SELECT });

@@ -1,4 +1,5 @@
 import "server-only";
+import { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
 import { serve } from "@/lib/storage/serve";
@@ -28,10 +29,13 @@ export const listEvidenceOfClaim = (actor: Actor, number: string): Promise<Evide
     return files.map(presentEvidence);
   });
 
+/** Whether a text can be the id of a file at all; what cannot is answered like an id nobody has. */
+export const isEvidenceId = (id: string): boolean => z.uuid().safeParse(id).success;
+
 /** A file to be sent out; null for one that is not this organisation's, like one that does not exist. */
 const findEvidence = (actor: Actor, id: string): Promise<EvidenceRow | null> =>
   unitOfWork(actor, async (work) => {
-    if (!/^[0-9a-f-]{36}$/iu.test(id)) return null;
+    if (!isEvidenceId(id)) return null;
     const [file] = await rows<EvidenceRow>(work, `${EVIDENCE} and id = $1`, [id]);
     return file ?? null;
   });

@@ -9,7 +9,7 @@ import { copyOnce, remove } from "@/lib/storage/objects";
 import { receiveFile, type Received, type ReceiveRefusal } from "@/lib/storage/receive";
 import { undoing } from "@/lib/claims/moves/service";
 import { presentEvidence, type EvidenceRow } from "./present";
-import { EVIDENCE } from "./queries";
+import { EVIDENCE, isEvidenceId } from "./queries";
 
 const target = z.object({
   claimId: z.uuid(),
@@ -150,6 +150,7 @@ export async function receiveEvidence(actor: Actor, request: Request) {
 /** Takes back a file that no sent revision holds. Its bytes stay until retention ends; nobody is shown them any more. */
 export const withdrawEvidence = (actor: Actor, id: string) =>
   undoing<{ id: string }, "notFound" | "evidenceSent">(actor, async (work) => {
+    if (!isEvidenceId(id)) return refuse("notFound");
     const [file] = await rows<{ id: string; isSent: boolean }>(
       work,
       `select e.id, exists (select 1 from revision_evidence r where r.evidence_id = e.id) as "isSent"

@@ -4,7 +4,7 @@ import { figure, shown, type Figure } from "./figure";
 export type CapacityRefusal = "capacityNotPositive" | "temperatureImpossible" | "ratesDiffer";
 
 /** Change of a lead battery's capacity per kelvin: slow discharge of three hours or more, and fast (from memory). */
-export const CAPACITY_PER_KELVIN = { slow: 0.006, fast: 0.01 } as const;
+const CAPACITY_PER_KELVIN = { slow: 0.006, fast: 0.01 } as const;
 
 /** Charge given in Ah by a constant current over a time. */
 export const chargeGiven = (input: { ampere: number; seconds: number }): Figure =>

@@ -51,7 +51,7 @@ export const unknownSecondsOf = (samples: readonly Sample[], gapS: number): numb
 export type Slope = { readonly kelvinPerMinute: number; readonly fromS: number; readonly toS: number };
 
 /** Length of the window a slope is taken over, so that the last digit of a probe makes no slope. */
-export const slopeWindowS = (stepS: number): number => Math.max(60, 4 * stepS);
+const slopeWindowS = (stepS: number): number => Math.max(60, 4 * stepS);
 
 /**
  * The steepest rise or fall: straight lines by least squares through each window of a minute, or of four samples

@@ -34,7 +34,7 @@ export type TouchContact = "oneMinute" | "tenMinutes" | "eightHours";
  * minute the standard gives bands by material, not single figures, so they are left out. A warning, never a
  * statement that a part is safe.
  */
-export const TOUCH_THRESHOLDS: Readonly<Record<TouchMaterial, Readonly<Record<TouchContact, number>>>> = {
+const TOUCH_THRESHOLDS: Readonly<Record<TouchMaterial, Readonly<Record<TouchContact, number>>>> = {
   bareMetal: { oneMinute: 51, tenMinutes: 48, eightHours: 43 },
   coatedMetal: { oneMinute: 51, tenMinutes: 48, eightHours: 43 },
   ceramic: { oneMinute: 56, tenMinutes: 48, eightHours: 43 },
@@ -49,7 +49,7 @@ export const contactWarning = (material: TouchMaterial, surfaceCelsius: number):
   CONTACTS_SHORTEST_FIRST.find((contact) => surfaceCelsius >= TOUCH_THRESHOLDS[material][contact]) ?? null;
 
 /** Where the product warns: a leg or hand may rest on a cover, and the rider may not feel it. */
-export const TOUCH_CAUTION = { warnFromCelsius: 48, alarmFromCelsius: 60 } as const;
+const TOUCH_CAUTION = { warnFromCelsius: 48, alarmFromCelsius: 60 } as const;
 
 /** The grade of caution a surface temperature earns; both limits are part of their grade. */
 export const touchCaution = (surfaceCelsius: number): "none" | "warn" | "alarm" =>

@@ -3,10 +3,10 @@ import { minutesAndSeconds } from "./duration";
 import { median } from "./samples";
 
 /** How long a bench run must last where the claim gives no time to fault, in seconds (common practice, no source). */
-export const DEFAULT_RUN_SECONDS = 45 * 60;
+const DEFAULT_RUN_SECONDS = 45 * 60;
 
 /** How long a replacement must run to prove the swap, in seconds (common practice, no source). */
-export const SWAP_RUN_SECONDS = 5 * 60;
+const SWAP_RUN_SECONDS = 5 * 60;
 
 export type RunLength = {
   readonly longEnough: boolean;

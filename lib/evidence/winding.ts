@@ -6,7 +6,6 @@ import { figure, shown, type Figure } from "./figure";
  * uses them (IEC 60034-1, from memory); American texts print 234.5 for copper, which moves an answer by some 0.2 K.
  */
 export const CONDUCTOR_K = { copper: 235, aluminium: 225 } as const;
-export type Conductor = keyof typeof CONDUCTOR_K;
 
 export type WindingRefusal = "resistanceNotPositive" | "temperatureImpossible" | "hotBelowCold";
 

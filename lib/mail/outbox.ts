@@ -1,6 +1,5 @@
 import "server-only";
 import { rows, type Work } from "@/lib/db/unit-of-work";
-import type { Locale } from "@/lib/kernel/locale";
 
 /**
  * Every mail the product sends, with what its text needs: codes, digits and days, never words, because the worker
@@ -38,27 +37,6 @@ type Letter<Kind extends MailKind> = {
   /** What makes this mail this mail: written twice, it is sent once. */
   readonly dedupeKey: string;
 };
-
-/** Puts a mail into the outbox in the transaction of the change it speaks of: no change, no mail; no mail lost. */
-export const mailTo = <Kind extends MailKind>(
-  work: Work,
-  recipient: { email: string; locale: Locale },
-  letter: Letter<Kind>,
-): Promise<unknown> =>
-  rows(
-    work,
-    `insert into outbox (organisation_id, kind, dedupe_key, recipient, locale, params, request_id)
-     values ($1, $2, $3, $4, $5, $6, $7)`,
-    [
-      work.actor.organisationId,
-      letter.kind,
-      letter.dedupeKey,
-      recipient.email,
-      recipient.locale,
-      JSON.stringify(letter.params),
-      work.actor.requestId,
-    ],
-  );
 
 /**
  * Mails the people of a claim on one side: who started it and the managers (`workshop`), or who holds it (`holder`).

@@ -84,7 +84,7 @@ export const lookUpSerial = (actor: Actor, typed: string): Promise<SerialAnswer>
   unitOfWork(actor, (work) => serialAnswer(work, typed));
 
 /** The same, inside a running unit of work. */
-export async function serialAnswer(work: Work, typed: string): Promise<SerialAnswer> {
+async function serialAnswer(work: Work, typed: string): Promise<SerialAnswer> {
   const normal = normaliseSerial(typed);
   if (normal.length < 3) return { kind: "unknown" };
   const found = await bySerial(work, normal);

@@ -21,7 +21,7 @@ const neededLine = (most: number) => line(most).pipe(z.string().min(1, "missing"
 const partNumber = neededLine(40);
 
 /** How units of a part are told apart: each by its serial, or not at all. */
-export const TRACKING = ["serial", "counted"] as const;
+const TRACKING = ["serial", "counted"] as const;
 
 export const newPartInput = z.strictObject({
   partNumber,

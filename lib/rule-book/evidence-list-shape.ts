@@ -1,8 +1,8 @@
 import { z } from "zod";
 import { code } from "./shape-parts";
 
-export const EVIDENCE_NEEDS = ["required", "useful", "notNeeded"] as const;
-export const EVIDENCE_KINDS = ["photo", "runLog", "reading", "answer", "document"] as const;
+const EVIDENCE_NEEDS = ["required", "useful", "notNeeded"] as const;
+const EVIDENCE_KINDS = ["photo", "runLog", "reading", "answer", "document"] as const;
 
 /** One thing a claim must or may show. `why` names the sentence that says why an assessor needs it. */
 const row = z

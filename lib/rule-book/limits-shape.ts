@@ -2,7 +2,7 @@ import { z } from "zod";
 import { code, share, sourceNote } from "./shape-parts";
 
 /** Insulation classes as labels write them, by limit in °C. */
-export const INSULATION_CODES = ["105 (A)", "120 (E)", "130 (B)", "155 (F)", "180 (H)"] as const;
+const INSULATION_CODES = ["105 (A)", "120 (E)", "130 (B)", "155 (F)", "180 (H)"] as const;
 
 /** What is usual for one kind of reading, both ends included; null leaves an end open. In the kind's own unit. */
 const readingLimit = z

@@ -33,7 +33,7 @@ export async function copyOnce(from: string, to: string): Promise<boolean> {
   return true;
 }
 
-export async function exists(key: string): Promise<boolean> {
+async function exists(key: string): Promise<boolean> {
   try {
     await store().send(new HeadObjectCommand({ Bucket: bucket(), Key: key }));
     return true;

@@ -34,7 +34,7 @@ const MOST_AT_ONCE = 8;
 let running = 0;
 
 /** A name for people to read: no path, no control or direction marks, at most 200 characters. */
-export const readableName = (name: string): string =>
+const readableName = (name: string): string =>
   (name.split(/[\\/]/u).at(-1) ?? "")
     .replace(/[\p{Cc}\p{Cf}]/gu, "")
     .trim()

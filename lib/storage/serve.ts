@@ -3,7 +3,7 @@ import { Readable } from "node:stream";
 import { open } from "./objects";
 
 /** `attachment; filename=…` as RFC 6266 and RFC 8187 write it: a plain name for old clients, the real one beside it. */
-export const disposition = (kind: "attachment" | "inline", name: string): string => {
+const disposition = (kind: "attachment" | "inline", name: string): string => {
   const plain = name.replace(/[^\x20-\x7e]|["\\%]/gu, "_");
   const encoded = encodeURIComponent(name).replace(
     /['()*]/gu,

@@ -2,7 +2,7 @@ import "server-only";
 import { getTranslations } from "next-intl/server";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
-import { problemResponse } from "./problem";
+import { mediaTypeFor, problemResponse } from "./problem";
 
 type Keyed = { actor: Actor; route: string; key: string | null; fingerprint: string };
 type Kept = { fingerprint: string; status: number | null; response: unknown };
@@ -60,6 +60,7 @@ export async function withIdempotency(keyed: Keyed, act: () => Promise<Response>
     return Response.json(kept.response, {
       status: kept.status,
       headers: {
+        "content-type": mediaTypeFor(kept.status),
         "cache-control": "private, no-store",
         "x-request-id": keyed.actor.requestId,
         "idempotent-replay": "true",

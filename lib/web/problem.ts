@@ -11,6 +11,10 @@ export type Problem = {
   readonly errors?: readonly FieldProblem[];
 };
 
+/** What an answer of the API is written in: a problem document for everything that is not a success. */
+export const mediaTypeFor = (status: number): string =>
+  status < 400 ? "application/json" : "application/problem+json";
+
 /** A problem document (RFC 9457). `type` is a relative reference that names the problem, not a page to fetch. */
 export const problemResponse = (problem: Problem, requestId: string): Response => {
   const { status, code, title, detail, errors } = problem;
@@ -27,7 +31,7 @@ export const problemResponse = (problem: Problem, requestId: string): Response =
     {
       status,
       headers: {
-        "content-type": "application/problem+json",
+        "content-type": mediaTypeFor(status),
         "cache-control": "private, no-store",
         "x-request-id": requestId,
       },

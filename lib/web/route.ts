@@ -28,7 +28,7 @@ const STATUS: Partial<Record<RefusalCode, number>> = {
 };
 
 /** The HTTP status of a refusal: not found 404, not allowed 403, stale 412, everything else the domain refuses 409. */
-export const statusOf = (code: RefusalCode): number => STATUS[code] ?? 409;
+const statusOf = (code: RefusalCode): number => STATUS[code] ?? 409;
 
 export type Asked<Body, Params> = {
   readonly session: Session;
@@ -80,9 +80,19 @@ async function refusal(
   return problemResponse({ status, code, title: t(code, { id: requestId }) }, requestId);
 }
 
+/** A JSON Pointer (RFC 6901): in a name, `~` and `/` would mean something else. */
+const pointerTo = (place: readonly PropertyKey[]): string =>
+  place.map((name) => `/${String(name).replaceAll("~", "~0").replaceAll("/", "~1")}`).join("");
+
+/** Where an issue is: a field nobody knows is named itself, not the object it stands in. */
+const placesOf = (issue: z.core.$ZodIssue): PropertyKey[][] =>
+  issue.code === "unrecognized_keys" ? issue.keys.map((key) => [...issue.path, key]) : [issue.path];
+
 async function fieldProblems(error: z.ZodError, locale: Locale): Promise<FieldProblem[]> {
   const t = await words(locale);
-  return error.issues.map((issue) => ({ pointer: `/${issue.path.join("/")}`, detail: t("fieldShape") }));
+  return error.issues
+    .flatMap(placesOf)
+    .map((place) => ({ pointer: pointerTo(place), detail: t("fieldShape") }));
 }
 
 /** Reads at most `maxBytes`, whatever the sender says about the length. */

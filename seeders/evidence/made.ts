@@ -1,14 +1,12 @@
 import { createHash } from "node:crypto";
-import { analyseRun } from "@/lib/evidence/run-analysis";
-import { parseRunLog } from "@/lib/evidence/run-log-parser";
-import { thinnedLog, type RunLogSummary } from "@/lib/evidence/run-log-summary";
+import { summariseRunLog, type RunLogSummary } from "@/lib/evidence/run-log-summary";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import type { FilePlan } from "../claims/evidence-plan";
 import { instantOn, wallTime, workingDayAgo } from "../days";
 import { DIALECTS, logFile } from "./logs";
 import { pdfPage } from "./pdf";
 import type { PhotoRenderer } from "./photo/render";
-import { runOf, type RunPlan } from "./thermal";
+import { runOf } from "./thermal";
 
 /** A file of the story as bytes, with what the product would have found in it. */
 export type MadeFile = {
@@ -65,7 +63,7 @@ async function fileMade(plan: FilePlan, render: PhotoRenderer, today: CalendarDa
   if (content.is === "document") return plain(pdfPage(content.lines), "document", null);
   if (content.is === "runLog") {
     const bytes = logFile(runOf(content.run), DIALECTS[content.dialect]);
-    return plain(bytes, "runLog", summaryOf(bytes, content.run));
+    return plain(bytes, "runLog", summariseRunLog(bytes));
   }
   if (content.is === "sameAs") return null;
   const takenAt = instantOn(
@@ -85,18 +83,5 @@ async function fileMade(plan: FilePlan, render: PhotoRenderer, today: CalendarDa
     heightPx,
     takenAt,
     summary: null,
-  };
-}
-
-function summaryOf(bytes: Buffer, run: RunPlan): RunLogSummary {
-  const parsed = parseRunLog(bytes);
-  if (!parsed.ok) throw new RangeError(`A log of the story cannot be read: ${parsed.code}`);
-  const analysis = analyseRun(parsed.value, run.turns ? {} : { coil: { ohmAt20: run.ohmAt20 } });
-  return {
-    shape: 1,
-    isRead: true,
-    log: thinnedLog(parsed.value),
-    analysis,
-    rowCount: parsed.value.timeS.length,
   };
 }

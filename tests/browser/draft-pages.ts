@@ -43,7 +43,7 @@ export async function fillFault(page: Page, failedOn: string) {
 }
 
 /** A photo or a log into its row, and the row says when it is safe. */
-export async function upload(
+async function upload(
   page: Page,
   rowId: string,
   file: { name: string; mimeType: string; buffer: Buffer },

@@ -119,9 +119,7 @@ export async function ask(
   const cookie = session === undefined ? {} : { cookie: await cookieFor(session) };
   const init = { method, headers: { ...cookie, ...(headers ?? FROM_OUR_PAGES()) }, duplex: "half" };
   const request = new Request(url, { ...init, ...(body == null ? {} : { body }) } as RequestInit);
-  return asking.run(request, async () =>
-    found.handler(request, { params: Promise.resolve(found.params) }),
-  );
+  return asking.run(request, async () => found.handler(request, { params: Promise.resolve(found.params) }));
 }
 
 /** The same with a JSON body. */

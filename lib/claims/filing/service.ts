@@ -203,7 +203,7 @@ export const withdrawClaim = (actor: Actor, { number, reason }: { number: string
   });
 
 /** A claim that ended without a verdict lets go of its units, so that they can be claimed again. */
-export const releaseUnits = (work: Work, claimId: string): Promise<unknown> =>
+const releaseUnits = (work: Work, claimId: string): Promise<unknown> =>
   rows(work, "update claim_lines set holds_unit = false where claim_id = $1 and holds_unit returning id", [
     claimId,
   ]);

@@ -22,7 +22,11 @@ async function limitsInForce(work: Work, sellerId: string, facts: ClaimFacts): P
   return rule && { limits: rule.body, rule: `${rule.ruleNumber} (${rule.validFrom})` };
 }
 
-async function workOutRows(work: Work, sheet: SheetRows, facts: ClaimFacts): Promise<EvidenceRowView[]> {
+async function workOutRows(
+  work: Work,
+  sheet: SheetRows,
+  { facts, inForce }: { facts: ClaimFacts; inForce: LimitsInForce | null },
+): Promise<EvidenceRowView[]> {
   const { sellerId } = sheet.claim;
   const family = familyOf(facts.family);
   if (!family) return [];
@@ -32,7 +36,6 @@ async function workOutRows(work: Work, sheet: SheetRows, facts: ClaimFacts): Pro
     symptom: facts.symptom,
     on: calendarDay(facts.filedOn),
   });
-  const inForce = await limitsInForce(work, sellerId, facts);
   return evidenceRows(list.rows, {
     facts,
     files: sheet.evidence.map((file) => presentFile(file, facts)),
@@ -88,18 +91,22 @@ async function countsAround(work: Work, claimId: string): Promise<Counts> {
   return counts ?? { sameBatch: 0, sameWorkshopThisMonth: 0, sameVehicle: 0 };
 }
 
-const NOTHING: WorkedOut = { coverage: new Map(), rows: [], caseLine: null };
+const NOTHING: WorkedOut = { coverage: new Map(), rows: [], limits: null, caseLine: null };
 
 async function workOut(work: Work, sheet: SheetRows): Promise<WorkedOut> {
   const facts = factsOf(sheet);
   if (!facts) return NOTHING;
-  const list = await workOutRows(work, sheet, facts);
+  const inForce = await limitsInForce(work, sheet.claim.sellerId, facts);
+  const limits = inForce?.limits ?? null;
+  const list = await workOutRows(work, sheet, { facts, inForce });
   const coverage = await workOutCoverage(work, sheet, { facts, missing: missingRows(list) });
-  if (work.actor.organisationId !== sheet.claim.sellerId) return { coverage, rows: list, caseLine: null };
+  if (work.actor.organisationId !== sheet.claim.sellerId)
+    return { coverage, rows: list, limits, caseLine: null };
   const first = coverage.get(1);
   return {
     coverage,
     rows: list,
+    limits,
     caseLine: {
       monthsUsed: first?.monthsUsed ?? null,
       daysLeft: first?.daysLeft ?? null,

@@ -7,7 +7,7 @@ import type { ClaimFacts, FactLine } from "../facts-shape";
 type Doubt = { readonly kind: string; readonly detail: Readonly<Record<string, string>> };
 
 /** What the days of one line say that cannot all be true. Told to the distributor, decided by a person. */
-export function doubtsOfDays(line: FactLine, failedOn: string): Doubt[] {
+function doubtsOfDays(line: FactLine, failedOn: string): Doubt[] {
   const shippedOn = line.invoiceLine?.shippedOn;
   const doubts: Doubt[] = [];
   if (shippedOn && shippedOn > failedOn)

@@ -3,6 +3,7 @@ import type { Actor } from "@/lib/access/actor";
 import type { Coverage } from "@/lib/coverage/coverage";
 import { isCurrency, type Currency } from "@/lib/kernel/currency";
 import { money, type Money } from "@/lib/kernel/money";
+import type { Limits } from "@/lib/rule-book/limits-shape";
 import { claimFacts, type ClaimFacts, type FactLine } from "../facts-shape";
 import { movesOpenTo } from "../lifecycle";
 import { printClaimNumber } from "../number";
@@ -20,6 +21,7 @@ import type { CaseLine, EvidenceFileView, EvidenceRowView, LineView, SheetView, 
 export type WorkedOut = {
   readonly coverage: ReadonlyMap<number, Coverage>;
   readonly rows: readonly EvidenceRowView[];
+  readonly limits: Limits | null;
   readonly caseLine: CaseLine | null;
 };
 
@@ -209,6 +211,7 @@ export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOu
     ),
     rows: workedOut.rows,
     otherFiles: files.filter((file) => !rowIds.has(file.rowId)),
+    limits: workedOut.limits,
     caseLine: workedOut.caseLine,
     ...presentRecord(sheet),
     verdicts: sheet.verdicts.map(presentVerdict),

@@ -1,7 +1,6 @@
 import "server-only";
-import type { Actor } from "@/lib/access/actor";
 import type { Coverage } from "@/lib/coverage/coverage";
-import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { rows, type Work } from "@/lib/db/unit-of-work";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import type { ClaimState, CreditState, ReturnState, VerdictOutcome } from "../lifecycle";
 import type { Attribution } from "../verdict";
@@ -188,11 +187,10 @@ const TIMELINE = `select e.seq, e.kind, e.actor_name as "actorName", o.name as "
 
 const INSTALLERS = `select code, name from installers where workshop_id = $1`;
 
-/** The claim of that number with all that belongs to it; null where this organisation has no such claim. */
-export const findSheet = (actor: Actor, number: string): Promise<SheetRows | null> =>
-  unitOfWork(actor, (work) => sheetRows(work, number));
-
-/** The same inside a running unit of work. Row security decides which of it is there. */
+/**
+ * The claim of that number with all that belongs to it; null where this organisation has no such claim. Row security
+ * decides which of it is there.
+ */
 export async function sheetRows(work: Work, number: string): Promise<SheetRows | null> {
   const [claim] = await rows<SheetClaim>(work, CLAIM, [number]);
   if (!claim) return null;

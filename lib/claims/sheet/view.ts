@@ -3,6 +3,7 @@ import type { Money } from "@/lib/kernel/money";
 import type { ClaimFacts } from "../facts-shape";
 import type { ClaimMove, ClaimState, CreditState, ReturnState, VerdictOutcome } from "../lifecycle";
 import type { Attribution } from "../verdict";
+import type { Limits } from "@/lib/rule-book/limits-shape";
 
 /** Which of the two parties is looking. */
 export type Side = "workshop" | "distributor";
@@ -183,6 +184,8 @@ export type SheetView = {
   readonly lines: readonly LineView[];
   readonly rows: readonly EvidenceRowView[];
   readonly otherFiles: readonly EvidenceFileView[];
+  /** What the part is rated at, by the Rule book version in force on the fitting day. */
+  readonly limits: Limits | null;
   readonly caseLine: CaseLine | null;
   readonly revisions: readonly {
     readonly revision: number;

@@ -1,5 +1,6 @@
 import { randomUUID } from "node:crypto";
 import { beforeAll, describe, expect, it } from "vitest";
+import { printClaimNumber } from "@/lib/claims/number";
 import { apiRoutes, ask, FROM_OUR_PAGES, type ApiRoute, type Method } from "../../support/http";
 import { buildClaim, buildFile, buildPerson, FILED } from "../../support/build";
 import { startSession } from "../signed-in";
@@ -25,7 +26,7 @@ beforeAll(async () => {
   routes = await apiRoutes;
   world = await twoShops();
   const [shop, other] = world.shops;
-  claim = await buildClaim(shop, FILED && { ...FILED, state: "filed" });
+  claim = await buildClaim(shop, { ...FILED, state: "filed" });
   file = await buildFile(shop, claim);
   owner = await startSession(shop.person, shop.workshop);
   stranger = await startSession(await buildPerson(other.workshop, ["technician"]), other.workshop);
@@ -66,7 +67,7 @@ describe("without a session", () => {
   it("every method of every route answers 401 and gives nothing away", async () => {
     const swept = everyMethod().filter(([, { address }]) => !(address in OPEN_TO_ALL));
     for (const [method, route] of swept) {
-      for (const session of [undefined, "no-such-session", randomUUID()]) {
+      for (const session of [undefined, randomUUID()]) {
         const said = `${method} ${route.address}`;
         const answer = await send(method, route, filled(route, claim.number, file.id), session);
         expect(answer.status, said).toBe(401);
@@ -82,7 +83,9 @@ describe("without a session", () => {
         });
       }
     }
-    process.stdout.write(`anonymous sweep: ${swept.length} methods, 3 kinds of no session, 0 let in\n`);
+    process.stdout.write(
+      `anonymous sweep: ${swept.length} methods, without a cookie and with one of no session, 0 let in\n`,
+    );
   });
 
   it("a token of another secret is no session", async () => {
@@ -114,7 +117,7 @@ describe("a stranger who asks for a thing by its number or id", () => {
   it("is answered so for text that is no number and no id too", async () => {
     const swept = everyMethod().filter(([, { address }]) => NAMES.test(address));
     for (const [method, route] of swept) {
-      for (const text of ["0", "abc", "' or 1=1 --", "٣٣٣٣٣٣٣٣", "x".repeat(3000), "%00"]) {
+      for (const text of ["0", "abc", "' or 1=1 --", "٣٣٣٣٣٣٣٣", "x".repeat(3000), "\0", "-".repeat(36)]) {
         const path = filled(route, encodeURIComponent(text), encodeURIComponent(text));
         const answer = await send(method, route, path, owner);
         expect(answer.status, `${method} ${route.address} for ${text.slice(0, 20)}`).toBe(404);
@@ -125,8 +128,8 @@ describe("a stranger who asks for a thing by its number or id", () => {
   it("finds none of it in the list", async () => {
     const answer = await ask("GET", "/api/v1/claims?side=own&view=all", { session: stranger });
     expect(answer.status).toBe(200);
-    expect(await answer.text()).not.toContain(claim.number);
-    const own = await ask("GET", "/api/v1/claims?side=own", { session: owner });
-    expect(await own.text()).toContain(claim.number);
+    expect(await answer.text()).not.toContain(printClaimNumber(claim.number));
+    const own = await ask("GET", "/api/v1/claims?side=own&view=all", { session: owner });
+    expect(await own.text()).toContain(printClaimNumber(claim.number));
   });
 });

@@ -1,5 +1,5 @@
 /** Uniform numbers in [0, 1) from a seed (mulberry32), so that a simulated run is the same on every machine. */
-export function uniformFrom(seed: number): () => number {
+function uniformFrom(seed: number): () => number {
   let state = seed >>> 0;
   return () => {
     state = (state + 0x6d2b79f5) >>> 0;

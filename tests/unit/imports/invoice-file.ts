@@ -3,7 +3,7 @@ import { readLines } from "@/lib/imports/check";
 import { readCsv, type CsvFile } from "@/lib/imports/read-csv";
 import { calendarDay } from "@/lib/kernel/calendar-day";
 
-export const TODAY = calendarDay("2026-05-11");
+const TODAY = calendarDay("2026-05-11");
 
 export const HEAD =
   "Account,Ship-to site,Invoice,Line,Invoice day,Part number,Quantity,Serial,Batch,Net price,Tax category,Tax rate,Exemption reason";
@@ -32,13 +32,13 @@ const USUAL = {
 export const looseLine = (over: Partial<Record<keyof typeof USUAL, string>> = {}): string =>
   lineWith({ part: "CH-1", serial: "", quantity: "6", line: "2", ...over });
 
-export const fileOf = (...lines: readonly string[]): CsvFile => {
+const fileOf = (...lines: readonly string[]): CsvFile => {
   const read = readCsv(new TextEncoder().encode([HEAD, ...lines].join("\n")), 1000);
   if (!read.ok) throw new Error(read.code);
   return read.value;
 };
 
-export const CATALOGUE: Catalogue = {
+const CATALOGUE: Catalogue = {
   accounts: new Map([
     [
       "K-1",
