@@ -29,6 +29,15 @@ async function signIn(page, email) {
 
 async function shoot(page, path, file) {
   await page.goto(path, { waitUntil: "networkidle" });
+  // Pictures load as they come into sight.
+  await page.evaluate(async () => {
+    for (let top = 0; top < document.body.scrollHeight; top += window.innerHeight) {
+      window.scrollTo(0, top);
+      await new Promise((resolve) => setTimeout(resolve, 60));
+    }
+    window.scrollTo(0, 0);
+  });
+  await page.waitForLoadState("networkidle");
   const wide = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
   if (wide > 0) process.stdout.write(`${file}: ${wide} px wider than the window\n`);
   await page.screenshot({ path: file, fullPage: true });
@@ -71,7 +80,7 @@ async function contactSheet(files, { width, theme, file }) {
   process.stdout.write(`${file}\n`);
 }
 
-async function lookAs(browser, { role, email, screens }, width, theme) {
+async function lookAs(browser, { role, email, screens }, { width, theme }) {
   const context = await browser.newContext({
     baseURL,
     viewport: SIZES[width],
@@ -103,5 +112,5 @@ const browser = await chromium.launch({
 for (const person of SCREENS.filter(({ role }) => !option("role") || role === option("role")))
   for (const width of Object.keys(SIZES).filter((one) => !option("width") || one === option("width")))
     for (const theme of THEMES.filter((one) => !option("theme") || one === option("theme")))
-      await lookAs(browser, person, width, theme);
+      await lookAs(browser, person, { width, theme });
 await browser.close();

@@ -27,8 +27,8 @@ export const SCREENS = [
     screens: {
       today: "/workshop-today",
       "start-a-claim": "/claims/new",
-      "serial-found": "/claims/new?q=R2614661KM",
-      "serial-unknown": "/claims/new?q=ZZZZ9999",
+      "serial-found": "/claims/new?serial=R2614661KM",
+      "serial-unknown": "/claims/new?serial=ZZZZ9999",
       "draft-part": draft("part"),
       "draft-fault": draft("fault"),
       "draft-evidence": draft("evidence"),

@@ -29,11 +29,18 @@ const extensionOf = (name: string): string =>
 
 const isMediaType = (text: string): text is MediaType => Object.hasOwn(EXTENSIONS, text);
 
+/** How text says by its first bytes that it is written in pairs of bytes; null where it does not. */
+function wideCoding(head: Buffer): "utf-16le" | "utf-16be" | null {
+  if (head[0] === 0xff && head[1] === 0xfe) return "utf-16le";
+  return head[0] === 0xfe && head[1] === 0xff ? "utf-16be" : null;
+}
+
 /** Text has no signature: it is what holds no NUL outside UTF-16 and begins like no mark-up. */
 function textType(head: Buffer, name: string): Outcome<MediaType, TypeRefusal> {
-  const isWide = (head[0] === 0xff && head[1] === 0xfe) || (head[0] === 0xfe && head[1] === 0xff);
-  const text = head.toString(isWide ? "utf16le" : "latin1").trimStart();
-  if ((!isWide && head.includes(0)) || /^(<|%!|#!|MZ|PK)/u.test(text)) return refuse("fileNotText", { name });
+  const wide = wideCoding(head);
+  // Decoding drops a byte order mark: what stands behind it is what a reader would begin with.
+  const text = new TextDecoder(wide ?? "utf-8").decode(head).trimStart();
+  if ((!wide && head.includes(0)) || /^(<|%!|#!|MZ|PK)/u.test(text)) return refuse("fileNotText", { name });
   const extension = extensionOf(name);
   if (EXTENSIONS["text/csv"].includes(extension)) return ok("text/csv");
   return EXTENSIONS["text/plain"].includes(extension)
@@ -50,6 +57,8 @@ export async function typeOf(
   name: string,
   kind: FileKind,
 ): Promise<Outcome<MediaType, TypeRefusal>> {
+  // The mark of UTF-16 would be taken for the first bytes of a sound.
+  if (kind === "runLog" && wideCoding(head)) return textType(head, name);
   const found = await fileTypeFromBuffer(head).catch(() => undefined);
   if (found && ["image/heic", "image/heif", "image/avif"].includes(found.mime))
     return refuse("fileTypeHeic", { name });

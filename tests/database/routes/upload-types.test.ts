@@ -75,6 +75,7 @@ const REFUSED: readonly (readonly [string, string, string, Buffer, readonly [num
   ["HTML after blank lines", "runLog", "run.csv", Buffer.from(`\r\n\t ${String(made.HTML)}`), [415, "fileNotText"]],
   ["HTML after a byte order mark", "runLog", "run.csv", Buffer.from(`\ufeff${String(made.HTML)}`), [415, "fileNotText"]],
   ["HTML in UTF-16", "runLog", "run.csv", Buffer.from(`\ufeff${String(made.HTML)}`, "utf16le"), [415, "fileNotText"]],
+  ["HTML in UTF-16, the other way round", "runLog", "run.csv", made.HTML_BIG_ENDIAN, [415, "fileNotText"]],
   ["SVG", "photo", "label.jpg", made.SVG, NOT_ALLOWED],
   ["SVG", "photo", "label.svg", made.SVG, NOT_ALLOWED],
   ["SVG with a declaration", "photo", "label.png", Buffer.concat([Buffer.from("<?xml version='1.0'?>"), made.SVG]), NOT_ALLOWED],

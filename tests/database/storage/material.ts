@@ -19,6 +19,7 @@ export const csvFile = (): Buffer =>
   Buffer.from(`time_s,current_a\n0,${randomBytes(2).readUInt16LE()}\n1,2.5\n`);
 
 export const HTML = Buffer.from("<!doctype html><script>fetch('/api/v1/claims')</script>");
+export const HTML_BIG_ENDIAN = Buffer.from(`\ufeff${String(HTML)}`, "utf16le").swap16();
 export const SVG = Buffer.from(
   `<svg xmlns="http://www.w3.org/2000/svg" width="9" height="9"><script>1</script></svg>`,
 );
