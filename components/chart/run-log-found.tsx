@@ -29,6 +29,7 @@ export function RunLogFound({ analysis, locale }: FoundProps) {
           <Fact term={t("figures.ran")}>{t("figures.ranValue", { time: time(analysis.ranSeconds) })}</Fact>
         )}
         {hottest ? <Temperature hottest={hottest} analysis={analysis} locale={locale} /> : null}
+        <TimesAbove analysis={analysis} locale={locale} />
         <FirstOrder analysis={analysis} locale={locale} />
         <Coil analysis={analysis} locale={locale} />
         {temperatures
@@ -46,7 +47,7 @@ export function RunLogFound({ analysis, locale }: FoundProps) {
 function Temperature({ hottest, analysis, locale }: FoundProps & { hottest: TemperatureSummary }) {
   const t = useTranslations("evidence.runLog");
   const { ambient } = analysis;
-  const { peakCelsius, peakAtS, riseKelvin, steepest, above, heading } = hottest;
+  const { peakCelsius, peakAtS, riseKelvin, steepest, heading } = hottest;
   const one = (value: number) => formatNumber(value, locale, { least: 1, most: 1 });
   const time = (seconds: number) => t("time", minutesAndSeconds(seconds));
   return (
@@ -67,15 +68,33 @@ function Temperature({ hottest, analysis, locale }: FoundProps & { hottest: Temp
           {t("figures.steepestValue", { kelvin: one(steepest.kelvinPerMinute), time: time(steepest.fromS) })}
         </Fact>
       ) : null}
-      {above.map(({ limit, seconds, firstAtS }) => (
-        <Fact key={limit.key} term={t("figures.above", { name: limit.name, celsius: one(limit.celsius) })}>
-          {firstAtS === null
-            ? t("figures.aboveNever")
-            : t("figures.aboveValue", { time: time(seconds), first: time(firstAtS) })}
-        </Fact>
-      ))}
     </>
   );
+}
+
+/** Each limit with every temperature that passed it: which column lies on the coil and which on the case, a person knows. */
+function TimesAbove({ analysis: { temperatures }, locale }: FoundProps) {
+  const t = useTranslations("evidence.runLog");
+  const time = (seconds: number) => t("time", minutesAndSeconds(seconds));
+  const limits = temperatures[0]?.above.map(({ limit }) => limit) ?? [];
+  return limits.map((limit) => {
+    const passed = temperatures.flatMap(({ heading, above }) =>
+      above.flatMap(({ limit: { key }, seconds, firstAtS }) =>
+        key === limit.key && firstAtS !== null ? [{ heading, seconds, firstAtS }] : [],
+      ),
+    );
+    const celsius = formatNumber(limit.celsius, locale, { most: 1 });
+    return (
+      <Fact key={limit.key} term={t("figures.above", { name: limit.name, celsius })}>
+        {passed.length === 0 ? t("figures.aboveNever") : null}
+        {passed.map(({ heading, seconds, firstAtS }) => (
+          <span key={heading} className="block">
+            {t("figures.aboveValue", { heading, time: time(seconds), first: time(firstAtS) })}
+          </span>
+        ))}
+      </Fact>
+    );
+  });
 }
 
 /** Final temperature and time constant, each with its standard error, or why the run does not give them. */

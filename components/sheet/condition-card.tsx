@@ -21,7 +21,7 @@ export function ConditionCard({ sheet, locale }: SheetProps) {
       </ul>
     );
   return (
-    <Card title={t("title")}>
+    <Card id="seen" title={t("title")}>
       <Facts>
         <Fact term={t("note")}>
           {facts.note ? <span className="whitespace-pre-wrap">{facts.note}</span> : t("notGiven")}

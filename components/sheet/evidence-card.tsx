@@ -38,22 +38,35 @@ type Against = { limits: Limits | null; locale: Locale };
 function EvidenceRow({ row, limits, locale }: { row: EvidenceRowView } & Against) {
   const t = useTranslations("sheet.evidence");
   const words = useTranslations("evidence.rows");
+  const log = row.files.find((file) => file.kind === "runLog");
   return (
-    <li className="grid gap-2 border-b border-rule py-4 first:pt-0 last:border-b-0">
-      <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
+    <li className="grid gap-x-6 gap-y-2 border-b border-rule py-4 first:pt-0 last:border-b-0 lg:grid-cols-[minmax(12rem,1fr)_2fr]">
+      <div className="flex flex-wrap items-center gap-x-3 gap-y-1 self-start">
         <EvidenceMark state={row.state} plain={row.state === "done"} />
         <h3 className="text-16">{words(`${row.id}.name`)}</h3>
         {row.need === "useful" ? <span className="text-small text-ink-2">{t("useful")}</span> : null}
       </div>
-      {row.answer ? <p className="max-w-measure whitespace-pre-wrap">{row.answer}</p> : null}
-      {row.reason ? (
-        <p className="max-w-measure text-ink-2">{t("cannotGet", { reason: row.reason })}</p>
-      ) : null}
-      {row.reading ? <ReadingLine reading={row.reading} locale={locale} /> : null}
-      <Files files={row.files} limits={limits} locale={locale} />
+      {/* A drawing needs the whole width; everything else stands beside its name. */}
+      <div className={log ? "min-w-0 lg:col-span-2" : "grid min-w-0 gap-2"}>
+        {row.answer ? <p className="max-w-measure whitespace-pre-wrap">{row.answer}</p> : null}
+        {row.reason ? (
+          <p className="max-w-measure text-ink-2">{t("cannotGet", { reason: row.reason })}</p>
+        ) : null}
+        {row.reading ? <ReadingLine reading={row.reading} locale={locale} /> : null}
+        {isSaidBelow(row) ? (
+          <a href="#seen" className="text-petrol underline underline-offset-4">
+            {t("saidBelow")}
+          </a>
+        ) : null}
+        <Files files={row.files} limits={limits} locale={locale} />
+      </div>
     </li>
   );
 }
+
+/** Rows answered by questions of their own on the draft: their answers stand in the card below. */
+const isSaidBelow = (row: EvidenceRowView): boolean =>
+  row.state === "done" && !row.answer && !row.reading && row.files.length === 0;
 
 const JUDGEMENT = {
   within: { shape: "tickSquare", tone: "proven" },

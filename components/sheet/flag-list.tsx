@@ -3,10 +3,11 @@ import { Banner } from "@/components/ui/banner";
 import { TextLink } from "@/components/ui/link-button";
 import { printClaimNumber } from "@/lib/claims/number";
 import { claimPath } from "@/lib/claims/paths";
+import { readableValues } from "@/lib/kernel/readable";
 import type { SheetProps } from "./shared";
 
 /** What is worth a second look. It accuses nobody: the words name the fact and where it stands. */
-export function FlagList({ sheet }: SheetProps) {
+export function FlagList({ sheet, locale }: SheetProps) {
   const t = useTranslations("sheet.flags");
   if (sheet.flags.length === 0) return null;
   return (
@@ -19,7 +20,7 @@ export function FlagList({ sheet }: SheetProps) {
               {t.has(flag.kind)
                 ? t(flag.kind, {
                     line: flag.lineNumber ?? 1,
-                    ...flag.detail,
+                    ...readableValues(flag.detail, locale),
                     otherClaim: other ? printClaimNumber(other) : "",
                   })
                 : flag.kind}{" "}

@@ -11,6 +11,7 @@ type Actions = {
   putBack: FormAction;
   park: FormAction;
   withdraw: FormAction;
+  contest: FormAction;
 };
 type SheetActionsProps = {
   sheet: SheetView;
@@ -76,6 +77,16 @@ export function SheetActions({ sheet, base, colleagues, actions }: SheetActionsP
           label={t("withdrawReason")}
           field="reason"
           submit={t("withdraw")}
+        />
+      ) : null}
+      {can("contest") ? (
+        <ReasonDrawer
+          action={actions.contest}
+          number={number}
+          trigger={t("contest")}
+          label={t("contestReason")}
+          field="reason"
+          submit={t("contest")}
         />
       ) : null}
       {sheet.canTakeOver ? (

@@ -45,7 +45,8 @@ export async function openOriginal(actor: Actor, id: string, range: string | nul
   const file = await findEvidence(actor, id);
   if (!file) return null;
   const { objectKey: key, mediaType: contentType, originalName: name } = file;
-  return serve({ key, contentType, name, kind: "attachment", range });
+  const part = { range, ofBytes: Number(file.sizeBytes) };
+  return serve({ key, contentType, name, kind: "attachment", part });
 }
 
 /** The copy people look at: made by us from the picture, without anything else the file held. Null until it is ready. */
@@ -57,6 +58,5 @@ export async function openViewCopy(actor: Actor, id: string): Promise<Response |
     contentType: "image/jpeg",
     name: `${file.id}.jpg`,
     kind: "inline",
-    range: null,
   });
 }

@@ -24,32 +24,40 @@ type ClaimRow = {
   sellerId: string;
   workshopId: string;
   state: string;
-  files: number;
-  bytes: string;
 };
 export type EvidenceRefusal = ReceiveRefusal | "notFound" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
 
-/** The claim an upload is for, if it is this workshop's and still takes files, with how much it holds already. */
+/** The claim an upload is for, locked, if it is this workshop's and still takes files. */
 async function openClaim(
   work: Work,
   claimId: string,
 ): Promise<Outcome<ClaimRow, "notFound" | "moveNotOpen">> {
   const [claim] = await rows<ClaimRow>(
     work,
-    `select c.id, c.seller_id as "sellerId", c.workshop_id as "workshopId", c.state,
-       (select count(*)::int from evidence_files e where e.claim_id = c.id and e.withdrawn_at is null) as files,
-       (select coalesce(sum(e.size_bytes), 0) from evidence_files e where e.claim_id = c.id and e.withdrawn_at is null) as bytes
-     from claims c where c.id = $1 and c.workshop_id = $2 for update of c`,
+    `select id, seller_id as "sellerId", workshop_id as "workshopId", state from claims
+     where id = $1 and workshop_id = $2 for update`,
     [claimId, work.actor.organisationId],
   );
   if (!claim) return refuse("notFound");
   return claim.state === "draft" || claim.state === "answerNeeded" ? ok(claim) : refuse("moveNotOpen");
 }
 
-function room(claim: ClaimRow, moreBytes: number): Outcome<true, "filesTooMany" | "bytesTooMany"> {
-  if (claim.files >= LIMITS.filesPerClaim) return refuse("filesTooMany", { most: LIMITS.filesPerClaim });
-  const over = Number(claim.bytes) + moreBytes > LIMITS.bytesPerClaim;
-  return over ? refuse("bytesTooMany", { mostMb: LIMITS.bytesPerClaim / 1e6 }) : ok(true);
+/** Counted by a statement of its own, which begins under the claim's lock and so sees what the one before it kept. */
+async function room(
+  work: Work,
+  claim: ClaimRow,
+  moreBytes: number,
+): Promise<Outcome<true, "filesTooMany" | "bytesTooMany">> {
+  const [held] = await rows<{ files: number; bytes: string }>(
+    work,
+    `select count(*)::int as files, coalesce(sum(size_bytes), 0) as bytes from evidence_files
+     where claim_id = $1 and withdrawn_at is null`,
+    [claim.id],
+  );
+  if (held && held.files >= LIMITS.filesPerClaim)
+    return refuse("filesTooMany", { most: LIMITS.filesPerClaim });
+  const isOver = Number(held?.bytes) + moreBytes > LIMITS.bytesPerClaim;
+  return isOver ? refuse("bytesTooMany", { mostMb: LIMITS.bytesPerClaim / 1e6 }) : ok(true);
 }
 
 /** Before a byte is kept: is there such a claim, does it take files, is there room. */
@@ -61,7 +69,7 @@ const decideFor =
     return unitOfWork(actor, async (work) => {
       const claim = await openClaim(work, given.data.claimId);
       if (!claim.ok) return claim;
-      const space = room(claim.value, 0);
+      const space = await room(work, claim.value, 0);
       return space.ok ? ok(given.data.kind) : space;
     });
   };
@@ -124,7 +132,7 @@ const keep = (actor: Actor, arrived: Arrived) =>
   undoing<ReturnType<typeof presentEvidence>, EvidenceRefusal>(actor, async (work) => {
     const claim = await openClaim(work, arrived.to.claimId);
     if (!claim.ok) return claim;
-    const space = room(claim.value, arrived.file.sizeBytes);
+    const space = await room(work, claim.value, arrived.file.sizeBytes);
     if (!space.ok) return space;
     const row = await insertRow(work, claim.value, arrived);
     return row ? ok(presentEvidence(row)) : refuse("uploadBroken", { name: arrived.file.name });

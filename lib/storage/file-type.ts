@@ -24,8 +24,7 @@ const OF_KIND: Readonly<Record<FileKind, readonly MediaType[]>> = {
 
 export type TypeRefusal = "fileTypeNotAllowed" | "fileTypeHeic" | "fileNameDisagrees" | "fileNotText";
 
-const extensionOf = (name: string): string =>
-  /\.([a-z0-9]{1,8})$/iu.exec(name)?.[1]?.toLowerCase() ?? "";
+const extensionOf = (name: string): string => /\.([a-z0-9]{1,8})$/iu.exec(name)?.[1]?.toLowerCase() ?? "";
 
 const isMediaType = (text: string): text is MediaType => Object.hasOwn(EXTENSIONS, text);
 

@@ -8,20 +8,7 @@ import {
   PutObjectCommand,
   S3ServiceException,
 } from "@aws-sdk/client-s3";
-import { Upload } from "@aws-sdk/lib-storage";
 import { bucket, store } from "./client";
-
-const PART_BYTES = 8 * 1024 * 1024;
-
-/** Streams bytes of unknown length to a key, at most two parts in memory. `abort` leaves nothing behind. */
-export const putStream = (key: string, body: Readable): Upload =>
-  new Upload({
-    client: store(),
-    params: { Bucket: bucket(), Key: key, Body: body },
-    partSize: PART_BYTES,
-    queueSize: 1,
-    leavePartsOnError: false,
-  });
 
 const isStatus = (fault: unknown, status: number): boolean =>
   fault instanceof S3ServiceException && fault.$metadata.httpStatusCode === status;

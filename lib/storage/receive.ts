@@ -1,15 +1,14 @@
 import "server-only";
 import { createHash, randomUUID, type Hash } from "node:crypto";
-import type { IncomingMessage } from "node:http";
-import { PassThrough, Readable, Writable } from "node:stream";
-import { ReadableStream as WebStream } from "node:stream/web";
+import { Writable } from "node:stream";
 import formidable from "formidable";
-import type { Upload } from "@aws-sdk/lib-storage";
 import { mostBytes, type FileKind } from "@/lib/kernel/limits";
 import { ok, refuse, type Outcome, type Refusal } from "@/lib/kernel/outcome";
 import { typeOf, type MediaType, type TypeRefusal } from "./file-type";
+import { incoming, watch, type Incoming } from "./incoming";
 import { quarantineKey } from "./keys";
-import { putStream, remove } from "./objects";
+import { remove } from "./objects";
+import { PartUpload } from "./part-upload";
 
 /** Bytes that arrived whole, still in quarantine under a key of their own. */
 export type Received = {
@@ -28,7 +27,7 @@ type Decide<Code extends string> = (
 ) => Promise<Outcome<FileKind, Code>>;
 
 const HEAD_BYTES = 8192;
-const SILENCE_MS = 30_000;
+const BACKLOG_BYTES = 256 * 1024;
 const MOST_AT_ONCE = 8;
 
 let running = 0;
@@ -44,10 +43,8 @@ const readableName = (name: string): string =>
 class Intake extends Writable {
   readonly key = quarantineKey(randomUUID());
   private readonly hash: Hash = createHash("sha256");
-  private readonly through = new PassThrough({ highWaterMark: 1 << 20 });
+  private readonly upload = new PartUpload(this.key);
   private head = Buffer.alloc(0);
-  private upload: Upload | undefined;
-  private sent: Promise<unknown> = Promise.resolve();
   type: Outcome<MediaType, TypeRefusal> | undefined;
   sizeBytes = 0;
   private settle: { whole: () => void; broken: (fault: unknown) => void } | undefined;
@@ -60,7 +57,7 @@ class Intake extends Writable {
     readonly name: string,
     private readonly kind: FileKind,
   ) {
-    super({ highWaterMark: 1 << 20 });
+    super({ highWaterMark: BACKLOG_BYTES });
     this.whole.catch(() => undefined);
     this.once("error", (fault) => this.settle?.broken(fault));
     this.once("close", () => this.settle?.broken(new Error("closed early")));
@@ -69,18 +66,7 @@ class Intake extends Writable {
   private async decide(): Promise<void> {
     this.type = await typeOf(this.head, this.name, this.kind);
     if (!this.type.ok) throw new Refused(this.type);
-    this.upload = putStream(this.key, this.through);
-    this.sent = this.upload.done();
-    this.sent.catch(() => undefined);
-    await this.pass(this.head);
-  }
-
-  private pass(data: Buffer): Promise<void> {
-    if (this.through.write(data)) return Promise.resolve();
-    return new Promise((resolve, reject) => {
-      this.through.once("drain", resolve);
-      this.through.once("error", reject);
-    });
+    await this.upload.write(this.head);
   }
 
   private async take(data: Buffer): Promise<void> {
@@ -89,7 +75,7 @@ class Intake extends Writable {
     if (this.sizeBytes > most)
       throw new Refused(refuse("fileTooBig", { name: this.name, limitMb: most / 1e6 }));
     this.hash.update(data);
-    if (this.type) return this.pass(data);
+    if (this.type) return this.upload.write(data);
     this.head = Buffer.concat([this.head, data]);
     return this.head.length >= HEAD_BYTES ? this.decide() : undefined;
   }
@@ -101,8 +87,7 @@ class Intake extends Writable {
   private async finish(): Promise<void> {
     if (this.sizeBytes === 0) throw new Refused(refuse("fileEmpty", { name: this.name }));
     if (!this.type) await this.decide();
-    this.through.end();
-    await this.sent;
+    await this.upload.end();
   }
 
   override _final(done: (fault?: Error | null) => void): void {
@@ -112,15 +97,21 @@ class Intake extends Writable {
     }, done);
   }
 
+  /** Settles when there is room for more, or nothing more will be taken. */
+  async room(): Promise<void> {
+    if (!this.writableNeedDrain || this.destroyed) return;
+    await new Promise<void>((resolve) => {
+      for (const event of ["drain", "close", "error"]) this.once(event, () => resolve());
+    });
+  }
+
   get sha256(): string {
     return this.hash.digest("hex");
   }
 
   /** Leaves nothing in the store, whatever had arrived. */
   async drop(): Promise<void> {
-    this.through.destroy();
-    await this.upload?.abort().catch(() => undefined);
-    await this.sent.catch(() => undefined);
+    await this.upload.abort().catch(() => undefined);
     await remove(this.key).catch(() => undefined);
   }
 }
@@ -135,36 +126,8 @@ class Refused extends Error {
 /** Ends the parser where the decision was no; what it was is kept beside it, with its own code. */
 class NotWanted extends Error {}
 
-/** What the parser uses of a request. */
-type Incoming = Readable & Pick<IncomingMessage, "headers" | "method">;
 type Parser = { parse(request: Incoming): Promise<unknown> };
 type PartHook = { onPart(part: formidable.Part): void | Promise<void> };
-
-/** The request as the parser wants it: without a length it would take the body for empty. */
-function incoming(request: Request, watched: Readable): Incoming {
-  const headers: Record<string, string> = Object.fromEntries(request.headers);
-  if (!headers["content-length"] && !headers["transfer-encoding"]) headers["transfer-encoding"] = "chunked";
-  return Object.assign(watched, { headers, method: request.method });
-}
-
-/** Ends a request that sends nothing for too long. */
-function watch(request: Request): { readonly body: Readable; readonly stop: () => void } {
-  const source = request.body instanceof WebStream ? Readable.fromWeb(request.body) : Readable.from([]);
-  const body = new PassThrough({ highWaterMark: 1 << 20 });
-  let timer: NodeJS.Timeout | undefined;
-  const stop = () => clearTimeout(timer);
-  const rearm = () => {
-    stop();
-    timer = setTimeout(() => source.destroy(new Error("silence")), SILENCE_MS);
-  };
-  rearm();
-  source
-    .on("data", rearm)
-    .on("end", stop)
-    .on("error", (fault) => body.destroy(fault));
-  source.pipe(body);
-  return { body, stop };
-}
 
 const refusalOf = (fault: unknown, intake: Intake | undefined): Refusal<ReceiveRefusal> =>
   fault instanceof Refused ? fault.refusal : refuse("uploadBroken", { name: intake?.name ?? "" });
@@ -194,6 +157,7 @@ function parserFor<Code extends string>(
     onIntake: (intake: Intake) => void;
     onRefusal: (refusal: Refusal<Code>) => void;
     onFault: (fault: unknown) => null;
+    onHeld: (held: Promise<void>) => void;
   },
 ): Parser {
   let kind: FileKind = "photo";
@@ -215,23 +179,24 @@ function parserFor<Code extends string>(
   form.on("field", (name, value) => {
     fields[name] = value;
   });
-  // Parts come one after the other, and the next waits for this: the fields before the file say what it may be.
-  const hooked: PartHook = form;
-  hooked.onPart = async (part) => {
+  const begin = async (part: formidable.Part): Promise<void> => {
     if (typeof part.originalFilename === "string") {
       const decided = await decide(fields).catch((fault: unknown) => hooks.onFault(fault));
-      if (!decided) {
-        form.emit("error", new NotWanted("fault"));
-        return;
-      }
-      if (!decided.ok) {
-        hooks.onRefusal(decided);
-        form.emit("error", new NotWanted(decided.code));
+      if (!decided?.ok) {
+        if (decided) hooks.onRefusal(decided);
+        form.emit("error", new NotWanted(decided?.code ?? "fault"));
         return;
       }
       kind = decided.value;
     }
     await usual(part);
+  };
+  // Parts come one after the other, and the next waits for this: the fields before the file say what it may be.
+  const hooked: PartHook = form;
+  hooked.onPart = (part) => {
+    const begun = begin(part);
+    hooks.onHeld(begun.catch(() => undefined));
+    return begun;
   };
   return form;
 }
@@ -241,8 +206,12 @@ async function receive<Code extends string>(
   decide: Decide<Code>,
 ): Promise<Outcome<Received & { fields: Readonly<Record<string, string>> }, Code | ReceiveRefusal>> {
   const fields: Record<string, string> = {};
-  const { body, stop } = watch(request);
   const intakes: Intake[] = [];
+  let held: Promise<void> = Promise.resolve();
+  const { body, halt, letGo } = watch(request, async () => {
+    await held;
+    await intakes.at(-1)?.room();
+  });
   const refusals: Refusal<Code>[] = [];
   const faults: unknown[] = [];
   const hooks = {
@@ -251,6 +220,9 @@ async function receive<Code extends string>(
     onFault: (fault: unknown) => {
       faults.push(fault);
       return null;
+    },
+    onHeld: (until: Promise<void>) => {
+      held = until;
     },
   };
   try {
@@ -261,14 +233,14 @@ async function receive<Code extends string>(
     const { key: quarantine, name, sizeBytes, sha256 } = intake;
     return ok({ quarantine, name, sizeBytes, sha256, mediaType: intake.type.value, fields });
   } catch (fault) {
+    halt();
     for (const intake of intakes) await intake.drop();
     // A fault of ours is no refusal: it goes up as it is.
     if (faults.length > 0) throw faults[0];
     const [refused] = refusals;
     return fault instanceof NotWanted && refused ? refused : refusalOf(fault, intakes[0]);
   } finally {
-    stop();
-    body.destroy();
+    letGo();
   }
 }
 

@@ -95,7 +95,16 @@ async function fieldProblems(error: z.ZodError, locale: Locale): Promise<FieldPr
     .map((place) => ({ pointer: pointerTo(place), detail: t("fieldShape") }));
 }
 
-/** Reads at most `maxBytes`, whatever the sender says about the length. */
+/** What still comes of a refused body is let go as it comes: the framework takes it badly when its stream is cancelled. */
+async function throwAway(reader: ReadableStreamDefaultReader<Uint8Array>): Promise<void> {
+  try {
+    while (!(await reader.read()).done);
+  } catch {
+    // It broke off; nobody waits for it any more.
+  }
+}
+
+/** Keeps at most `maxBytes`, whatever the sender says about the length. */
 async function readText(request: Request, maxBytes: number): Promise<string | null> {
   const reader = request.body?.getReader();
   if (!reader) return "";
@@ -104,7 +113,7 @@ async function readText(request: Request, maxBytes: number): Promise<string | nu
   for (let part = await reader.read(); !part.done; part = await reader.read()) {
     size += part.value.byteLength;
     if (size > maxBytes) {
-      await reader.cancel();
+      void throwAway(reader);
       return null;
     }
     chunks.push(part.value);

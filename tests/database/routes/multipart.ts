@@ -44,10 +44,10 @@ export function form(fields: Readonly<Record<string, string>>, file?: SentFile, 
   return { contentType: `multipart/form-data; boundary=${boundary}`, pieces: pieces() };
 }
 
-export type Taken = { bytes: number; isCancelled: boolean };
+export type Taken = { bytes: number };
 
 /** A body that hands out one piece when it is asked for one, and counts. */
-export function bodyOf({ pieces }: Form, taken: Taken = { bytes: 0, isCancelled: false }): ReadableStream<Bytes> {
+export function bodyOf({ pieces }: Form, taken: Taken = { bytes: 0 }): ReadableStream<Bytes> {
   const rest = (async function* () {
     yield* pieces;
   })();
@@ -60,7 +60,6 @@ export function bodyOf({ pieces }: Form, taken: Taken = { bytes: 0, isCancelled:
         controller.enqueue(value);
       },
       async cancel() {
-        taken.isCancelled = true;
         await rest.return(undefined);
       },
     },

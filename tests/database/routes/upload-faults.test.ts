@@ -134,7 +134,11 @@ describe("a fault of the store", () => {
     const bucket = process.env["STORE_BUCKET"];
     process.env["STORE_BUCKET"] = "no-such-bucket";
     const sendLog = (name: string) =>
-      post("/api/v1/evidence", session, form(fields("runLog"), { name: "run.csv", content: runLog(name, 12e6) }));
+      post(
+        "/api/v1/evidence",
+        session,
+        form(fields("runLog"), { name: "run.csv", content: runLog(name, 12e6) }),
+      );
     const answer = await sendLog("lost");
     process.env["STORE_BUCKET"] = bucket;
     expect(answer.status).toBeGreaterThanOrEqual(400);

@@ -26,7 +26,8 @@ const send = (kind: string, name: string, content: Uint8Array, over: Record<stri
   post("/api/v1/evidence", session, form({ claimId, rowId: "label", kind, ...over }, { name, content }));
 
 const sha256 = (bytes: Uint8Array): string => createHash("sha256").update(bytes).digest("hex");
-const atLeast = (bytes: Buffer, size: number) => Buffer.concat([bytes, Buffer.alloc(Math.max(0, size - bytes.length), 0x20)]);
+const atLeast = (bytes: Buffer, size: number) =>
+  Buffer.concat([bytes, Buffer.alloc(Math.max(0, size - bytes.length), 0x20)]);
 
 /** What the store and the database hold of this file's claim. */
 const holds = async () => ({
@@ -52,7 +53,9 @@ describe("a file of a kind that is taken", () => {
     expect(answer.status).toBe(200);
     const view = await problemOf(answer);
     expect(view).toMatchObject({ kind, originalName: name, sizeBytes: bytes.length, sha256: sha256(bytes) });
-    const rows = await adminQuery("select media_type, object_key from evidence_files where id = $1", [view["id"]]);
+    const rows = await adminQuery("select media_type, object_key from evidence_files where id = $1", [
+      view["id"],
+    ]);
     expect(rows).toEqual([{ media_type: mediaType, object_key: originalKey(sha256(bytes)) }]);
     const kept = await readAll(originalKey(sha256(bytes)), LIMITS.photoBytes);
     expect(sha256(kept)).toBe(sha256(bytes));
@@ -72,13 +75,37 @@ const REFUSED: readonly (readonly [string, string, string, Buffer, readonly [num
   ["HTML", "photo", "label.jpg", made.HTML, NOT_ALLOWED],
   ["HTML", "runLog", "run.csv", made.HTML, [415, "fileNotText"]],
   ["HTML", "document", "sheet.pdf", made.HTML, NOT_ALLOWED],
-  ["HTML after blank lines", "runLog", "run.csv", Buffer.from(`\r\n\t ${String(made.HTML)}`), [415, "fileNotText"]],
-  ["HTML after a byte order mark", "runLog", "run.csv", Buffer.from(`\ufeff${String(made.HTML)}`), [415, "fileNotText"]],
-  ["HTML in UTF-16", "runLog", "run.csv", Buffer.from(`\ufeff${String(made.HTML)}`, "utf16le"), [415, "fileNotText"]],
+  [
+    "HTML after blank lines",
+    "runLog",
+    "run.csv",
+    Buffer.from(`\r\n\t ${String(made.HTML)}`),
+    [415, "fileNotText"],
+  ],
+  [
+    "HTML after a byte order mark",
+    "runLog",
+    "run.csv",
+    Buffer.from(`\ufeff${String(made.HTML)}`),
+    [415, "fileNotText"],
+  ],
+  [
+    "HTML in UTF-16",
+    "runLog",
+    "run.csv",
+    Buffer.from(`\ufeff${String(made.HTML)}`, "utf16le"),
+    [415, "fileNotText"],
+  ],
   ["HTML in UTF-16, the other way round", "runLog", "run.csv", made.HTML_BIG_ENDIAN, [415, "fileNotText"]],
   ["SVG", "photo", "label.jpg", made.SVG, NOT_ALLOWED],
   ["SVG", "photo", "label.svg", made.SVG, NOT_ALLOWED],
-  ["SVG with a declaration", "photo", "label.png", Buffer.concat([Buffer.from("<?xml version='1.0'?>"), made.SVG]), NOT_ALLOWED],
+  [
+    "SVG with a declaration",
+    "photo",
+    "label.png",
+    Buffer.concat([Buffer.from("<?xml version='1.0'?>"), made.SVG]),
+    NOT_ALLOWED,
+  ],
   ["SVG", "runLog", "run.txt", made.SVG, [415, "fileNotText"]],
   ["GIF", "photo", "label.gif", made.GIF, NOT_ALLOWED],
   ["GIF", "photo", "label.jpg", made.GIF, NOT_ALLOWED],

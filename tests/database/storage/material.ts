@@ -23,7 +23,10 @@ export const HTML_BIG_ENDIAN = Buffer.from(`\ufeff${String(HTML)}`, "utf16le").s
 export const SVG = Buffer.from(
   `<svg xmlns="http://www.w3.org/2000/svg" width="9" height="9"><script>1</script></svg>`,
 );
-export const GIF = Buffer.from("47494638396101000100800000000000ffffff2c00000000010001000002024401003b", "hex");
+export const GIF = Buffer.from(
+  "47494638396101000100800000000000ffffff2c00000000010001000002024401003b",
+  "hex",
+);
 export const ZIP = Buffer.from("504b0506000000000000000000000000000000000000", "hex");
 export const EXE = Buffer.concat([Buffer.from("4d5a90000300000004000000ffff0000", "hex"), Buffer.alloc(512)]);
 export const HEIC = Buffer.from("000000186674797068656963000000006d69663168656963", "hex");

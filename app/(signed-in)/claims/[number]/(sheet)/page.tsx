@@ -16,7 +16,7 @@ import { claimDigits } from "@/lib/claims/number";
 import { claimPath, draftStepPath } from "@/lib/claims/paths";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
 import { requireSession } from "@/lib/web/session";
-import { parkAction, putBackAction, takeAction, takeOverAction, withdrawAction } from "./actions";
+import { contestAction, parkAction, putBackAction, takeAction, takeOverAction, withdrawAction } from "./actions";
 
 type Props = { params: Promise<{ number: string }>; searchParams: Promise<{ sent?: string }> };
 
@@ -40,6 +40,7 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
     putBack: putBackAction,
     park: parkAction,
     withdraw: withdrawAction,
+    contest: contestAction,
   };
   const shared = { sheet, locale: actor.locale, timeZone: actor.timeZone };
   return (
