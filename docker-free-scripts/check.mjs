@@ -1,5 +1,7 @@
-import { spawn } from "node:child_process";
-import { root } from "./machine.mjs";
+import { spawn, spawnSync } from "node:child_process";
+import { join } from "node:path";
+import { needModules, root } from "./machine.mjs";
+import { step } from "./report.mjs";
 import { staticSteps } from "./static-steps.mjs";
 
 /** Runs a program and keeps what it says until it is done. */
@@ -36,7 +38,15 @@ export async function runStatic(steps) {
   return { passed: steps.length - failed, failed };
 }
 
+/** Types of the pages' addresses, which the compiler wants before it can judge a link. */
+export const makeRouteTypes = () =>
+  step("Route types", () => {
+    spawnSync(process.execPath, [join(root, "node_modules/next/dist/bin/next"), "typegen"], { cwd: root });
+  });
+
 if (process.argv[1]?.endsWith("check.mjs")) {
+  await step("npm packages", needModules);
+  await makeRouteTypes();
   const { failed } = await runStatic(staticSteps({ withUnit: true }));
   process.exit(failed === 0 ? 0 : 1);
 }

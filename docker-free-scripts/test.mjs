@@ -64,12 +64,10 @@ const runVitest = (name, env) =>
   });
 
 async function runWithoutServices() {
-  const { runStatic } = await import("./check.mjs");
+  const { makeRouteTypes, runStatic } = await import("./check.mjs");
   const { staticSteps } = await import("./static-steps.mjs");
   if (wants("static")) {
-    await step("Route types", () => {
-      spawnSync(process.execPath, [join(root, "node_modules/next/dist/bin/next"), "typegen"], { cwd: root });
-    });
+    await makeRouteTypes();
     add(await runStatic(staticSteps()));
   }
   if (wants("unit"))
