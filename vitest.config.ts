@@ -21,6 +21,8 @@ export default defineConfig({
         test: {
           name: "unit",
           include: ["tests/unit/**/*.test.{ts,tsx}"],
+          // Generous: a test here is never about time, and the machine may be busy.
+          testTimeout: 30_000,
           setupFiles: ["tests/support/quiet-console.ts"],
         },
       },

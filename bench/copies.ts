@@ -55,11 +55,12 @@ const FREE = `
   from generate_series(10000000, 10000000 + 3 * (select count(*) from claims) + 3 * (select count(*) from copied)) n
   where not exists (select 1 from claims c where c.number = n::text)`;
 const CLAIMS = `
-  insert into claims select (jsonb_populate_record(null::claims, to_jsonb(c) || jsonb_build_object(
-    'id', m.new_id, 'number', f.number, 'filed_at', c.filed_at - m.n * interval '7 minutes',
-    'answer_due_at', c.answer_due_at - m.n * interval '7 minutes',
-    'updated_at', c.updated_at - m.n * interval '7 minutes'))).*
-  from copied m join original_claims c on c.id = m.old_id join free_numbers f on f.free = m.free`;
+  insert into claims select r.* from copied m join original_claims c on c.id = m.old_id
+    join free_numbers f on f.free = m.free
+    cross join lateral jsonb_populate_record(null::claims, to_jsonb(c) || jsonb_build_object(
+      'id', m.new_id, 'number', f.number, 'asked_minor', c.asked_minor + 10 * m.n, 'filed_at', c.filed_at - m.n * interval '7 minutes',
+      'answer_due_at', c.answer_due_at - m.n * interval '7 minutes',
+      'updated_at', c.updated_at - m.n * interval '7 minutes')) r`;
 // Every copied line claims a unit of its own, as in life: the same unit is hardly ever claimed twice.
 const LINES = `
   insert into claim_lines (claim_id, seller_id, workshop_id, line_number, part_id, unit_id, invoice_line_id, quantity,
@@ -67,14 +68,15 @@ const LINES = `
   select m.new_id, l.seller_id, l.workshop_id, l.line_number, l.part_id, u.id, l.invoice_line_id, l.quantity,
     l.serial_typed, l.asked_minor, l.verdict, l.attribution, l.return_state, l.credit_state
   from copied m join claim_lines l on l.claim_id = m.old_id
-    left join bulk_units u on u.seller_id = l.seller_id and u.buyer_id = l.workshop_id and l.unit_id is not null
-      and u.place = 1 + (m.place % u.of_all)`;
+    left join bulk_sizes z on z.seller_id = l.seller_id and z.buyer_id = l.workshop_id and l.unit_id is not null
+    left join bulk_units u on u.seller_id = z.seller_id and u.buyer_id = z.buyer_id and u.place = 1 + m.place % z.of_all`;
 const BULK_UNITS = `
   create temp table bulk_units on commit drop as
-  select id, seller_id, buyer_id, row_number() over (partition by seller_id, buyer_id order by id) as place,
-    count(*) over (partition by seller_id, buyer_id) as of_all
+  select id, seller_id, buyer_id, row_number() over (partition by seller_id, buyer_id order by id) as place
   from units u where not exists (select 1 from original_units o where o.id = u.id);
-  create index on bulk_units (seller_id, buyer_id, place); analyze bulk_units`;
+  create temp table bulk_sizes on commit drop as
+  select seller_id, buyer_id, count(*) as of_all from bulk_units group by seller_id, buyer_id;
+  analyze bulk_units; analyze bulk_sizes`;
 const DRAFTS = `
   insert into claim_drafts (claim_id, seller_id, workshop_id, body, saved_at)
   select m.new_id, d.seller_id, d.workshop_id, d.body, d.saved_at from copied m join claim_drafts d on d.claim_id = m.old_id`;
@@ -93,6 +95,5 @@ export async function copyClaims(admin: pg.Client, first: number, last: number):
   await admin.query(BULK_UNITS);
   for (const sql of [CLAIMS, LINES, DRAFTS, FLAGS]) await admin.query(sql);
   await admin.query("commit");
-  for (const table of ["claims", "claim_lines", "claim_drafts", "claim_flags"])
-    await admin.query(`vacuum analyze ${table}`);
+  await admin.query("vacuum analyze claims, claim_lines, claim_drafts, claim_flags");
 }

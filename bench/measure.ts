@@ -6,6 +6,8 @@ export type Measured = {
   readonly toMs: number;
   readonly yardstickMs: number;
   readonly ratio: number;
+  /** What the database's server worked for it, where it was asked. */
+  readonly serverMs?: number;
 };
 
 type Work = () => unknown;
@@ -54,5 +56,6 @@ export async function against(
   };
 }
 
-/** How much a cost grew from one measurement to another, each first brought to its own yardstick. */
-export const growth = (before: Measured, after: Measured): number => after.ratio / before.ratio;
+/** How much the server's work grew between two measurements. Its own time, since a busy machine slows a later one. */
+export const growth = (before: Measured | undefined, after: Measured): string =>
+  before?.serverMs && after.serverMs ? (after.serverMs / before.serverMs).toFixed(2) : "?";

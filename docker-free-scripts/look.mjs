@@ -5,7 +5,7 @@ import { join } from "node:path";
 import { chromium } from "@playwright/test";
 import sharp from "sharp";
 import { root } from "./machine.mjs";
-import { SCREENS } from "./screens.mjs";
+import { MORE_SCREENS, SCREENS } from "./screens.mjs";
 
 const SIZES = { 390: { width: 390, height: 844 }, 1440: { width: 1440, height: 900 } };
 const THEMES = ["light", "dark"];
@@ -27,8 +27,9 @@ async function signIn(page, email) {
   await page.waitForURL((url) => url.pathname !== "/sign-in");
 }
 
-async function shoot(page, path, file) {
+async function shoot(page, { path, act }, file) {
   await page.goto(path, { waitUntil: "networkidle" });
+  if (act) await act(page);
   // Pictures load as they come into sight.
   await page.evaluate(async () => {
     for (let top = 0; top < document.body.scrollHeight; top += window.innerHeight) {
@@ -96,8 +97,9 @@ async function lookAs(browser, { role, email, screens }, { width, theme }) {
   const files = [];
   for (const [name, place] of Object.entries(screens)) {
     if (option("only") && !name.includes(option("only"))) continue;
-    const path = typeof place === "string" ? place : await place(page);
-    if (path) files.push(await shoot(page, path, join(folder, `${name}-${width}-${theme}.png`)));
+    const found = typeof place === "string" ? place : await place(page);
+    const target = typeof found === "string" ? { path: found } : found;
+    if (target) files.push(await shoot(page, target, join(folder, `${name}-${width}-${theme}.png`)));
     else process.stdout.write(`${role}: no claim for ${name}\n`);
   }
   await context.close();
@@ -109,7 +111,9 @@ const browser = await chromium.launch({
   executablePath: "/usr/bin/chromium",
   args: ["--no-sandbox", "--disable-gpu"],
 });
-for (const person of SCREENS.filter(({ role }) => !option("role") || role === option("role")))
+for (const person of [...SCREENS, ...MORE_SCREENS].filter(
+  ({ role }) => !option("role") || role === option("role"),
+))
   for (const width of Object.keys(SIZES).filter((one) => !option("width") || one === option("width")))
     for (const theme of THEMES.filter((one) => !option("theme") || one === option("theme")))
       await lookAs(browser, person, { width, theme });

@@ -70,3 +70,100 @@ export const SCREENS = [
     },
   },
 ];
+
+/** The first link of a page that leads below it. */
+const linkOn = (page, place) =>
+  page
+    .goto(place)
+    .then(() => page.locator(`main a[href^="${place}/"]:not([href$="/new"], [href$="/invite"])`).first())
+    .then(async (link) => ((await link.count()) > 0 ? await link.getAttribute("href") : undefined));
+
+/** A page and what is done on it before it is looked at. */
+const after = (place, act) => async (page) => {
+  const path = typeof place === "string" ? place : await place(page);
+  return path && { path, act };
+};
+const press = (name) => async (page) => {
+  await page.getByRole("button", { name }).first().click();
+  await page.waitForLoadState("networkidle");
+  await page.waitForTimeout(500);
+};
+const BAD_LINES =
+  "Account;Invoice;Line;Invoice day;Currency;Part number;Quantity;Serial;Batch;Net price;Tax category;Tax rate\n" +
+  "L-2041;LOOK-1;1;2026-03-02;GBP;LMB-2410;;R2614LOOK1;R2614;86,40;S;20\n" +
+  "L-9999;LOOK-1;2;2026-13-02;GBP;NO-SUCH;;R2614LOOK2;R2614;eighty;S;20\n";
+const sendBadLines = async (page) => {
+  await page
+    .locator('input[type="file"]')
+    .setInputFiles({ name: "lines-with-errors.csv", mimeType: "text/csv", buffer: Buffer.from(BAD_LINES) });
+  await press("Check the file")(page);
+  await page.waitForURL(/invoice-lines\/./);
+  await page.waitForLoadState("networkidle");
+};
+
+/** More people, and states of a page that somebody has to bring about; for pictures only. */
+export const MORE_SCREENS = [
+  {
+    role: "manager",
+    email: "maren.holt@saltmarsh.example",
+    screens: {
+      today: "/workshop-today",
+      people: "/people",
+      person: (page) => linkOn(page, "/people"),
+      "claim-declined": claim("own", "decided", { marks: ["declined"] }),
+    },
+  },
+  {
+    role: "german-technician",
+    email: "jonas.ehrler@quayhead.example",
+    screens: {
+      today: "/workshop-today",
+      "start-a-claim": "/claims/new",
+      "draft-evidence": draft("evidence"),
+      "draft-check": draft("check"),
+      "claim-answer-needed": claim("own", "onUs", { marks: ["answerNeeded"] }),
+      "claim-with-the-distributor": claim("own", "onThem"),
+      "claim-decided": claim("own", "decided"),
+      account: "/account",
+    },
+  },
+  {
+    role: "german-assessor",
+    email: "greta.lindau@fenwright.example",
+    screens: {
+      "to-judge": "/judging",
+      "all-claims": "/judging?view=all",
+      "claim-filed": claim("received", "toJudge"),
+      "claim-in-hand": claim("received", "held"),
+      decide: claim("received", "held", { rest: "/decide" }),
+      "decide-refused": after(claim("received", "held", { rest: "/decide" }), press("Entscheidung senden")),
+      "claim-decided": claim("received", "decided"),
+      "rule-book": "/rule-book",
+    },
+  },
+  {
+    role: "goods-in",
+    email: "rosa.finchley@larkmoor.example",
+    screens: { home: "/", account: "/account" },
+  },
+  {
+    role: "administrator-acting",
+    email: "colin.thorpe@larkmoor.example",
+    screens: {
+      person: (page) => linkOn(page, "/people"),
+      "invite-refused": after("/people/invite", press("Send the invitation")),
+      "account-refused": after("/accounts/new", press("Open the account")),
+      "import-with-errors": after("/invoice-lines", sendBadLines),
+    },
+  },
+  {
+    role: "assessor-acting",
+    email: "ada.merrow@larkmoor.example",
+    screens: {
+      "decide-refused": after(claim("received", "held", { rest: "/decide" }), press("Send verdict")),
+      "claim-contested": claim("received", "toJudge", { marks: ["contested"] }),
+      "claim-upheld": claim("received", "decided", { marks: ["upheld", "upheldInPart"] }),
+      "all-claims": "/judging?view=all",
+    },
+  },
+];

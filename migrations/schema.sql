@@ -154,7 +154,8 @@ CREATE FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text DEFAULT NULL
         where l.seller_id = line.seller_id and l.unit_id = wanted and l.holds_unit;
       if holder is not null then
         perform guarded.flag_claim(line.claim_id, line.line_number, 'unitHeld', jsonb_build_object('otherClaim', holder));
-      elsif line.unit_id is not null then
+      elsif exists (select 1 from units where id = line.unit_id and buyer_id = line.workshop_id) then
+        -- Only who bought the unit holds it: an id that somebody guessed holds nothing.
         update claim_lines set holds_unit = true where id = p_line;
       end if;
     end $$;
@@ -166,7 +167,11 @@ CREATE FUNCTION guarded.invite_person(p_email text, p_name text, p_locale text) 
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
     AS $$ declare invited uuid;
      begin
-       if ctx_org() is null then raise exception 'no organisation in this transaction' using errcode = 'PP002'; end if;
+       if not exists (select 1 from memberships m join membership_roles r
+           on r.organisation_id = m.organisation_id and r.user_id = m.user_id and r.role = 'administrator'
+         where m.organisation_id = ctx_org() and m.user_id = ctx_actor() and m.disabled_at is null) then
+         raise exception 'only an administrator invites' using errcode = 'PP002';
+       end if;
        insert into users (email, name, locale) values (p_email, p_name, p_locale)
          on conflict (email) do nothing;
        select id into invited from users where email = p_email;
@@ -1456,11 +1461,29 @@ CREATE UNIQUE INDEX claim_lines_one_holder ON public.claim_lines USING btree (se
 
 CREATE INDEX claim_messages_by_claim ON public.claim_messages USING btree (claim_id, at);
 
-CREATE INDEX claims_by_seller_state ON public.claims USING btree (seller_id, state, filed_at);
-
 CREATE INDEX claims_by_vehicle ON public.claims USING btree (workshop_id, vehicle_id);
 
 CREATE INDEX claims_by_workshop_state ON public.claims USING btree (workshop_id, state, updated_at);
+
+CREATE INDEX claims_held ON public.claims USING btree (holder_id, state, safety_reported DESC, answer_due_at, filed_at NULLS FIRST, id) WHERE (holder_id IS NOT NULL);
+
+CREATE INDEX claims_own_asked ON public.claims USING btree (workshop_id, state, asked_minor, id);
+
+CREATE INDEX claims_own_due ON public.claims USING btree (workshop_id, state, answer_due_at, id);
+
+CREATE INDEX claims_own_filed ON public.claims USING btree (workshop_id, state, filed_at NULLS FIRST, id) INCLUDE (seller_id);
+
+CREATE INDEX claims_own_urgent ON public.claims USING btree (workshop_id, state, safety_reported DESC, answer_due_at, filed_at NULLS FIRST, id);
+
+CREATE INDEX claims_parked ON public.claims USING btree (parked_with_id, state, safety_reported DESC, answer_due_at, filed_at NULLS FIRST, id) WHERE (parked_with_id IS NOT NULL);
+
+CREATE INDEX claims_received_asked ON public.claims USING btree (seller_id, state, asked_minor, id);
+
+CREATE INDEX claims_received_due ON public.claims USING btree (seller_id, state, answer_due_at, id);
+
+CREATE INDEX claims_received_filed ON public.claims USING btree (seller_id, state, filed_at NULLS FIRST, id) INCLUDE (workshop_id);
+
+CREATE INDEX claims_received_urgent ON public.claims USING btree (seller_id, state, safety_reported DESC, answer_due_at, filed_at NULLS FIRST, id);
 
 CREATE INDEX evidence_files_by_claim ON public.evidence_files USING btree (claim_id);
 

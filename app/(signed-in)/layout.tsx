@@ -28,7 +28,7 @@ export default async function SignedInLayout({ children }: { children: ReactNode
         help={{ href: "/help", label: shell("help") }}
         tools={
           <LinkButton href="/account" kind="quiet" small>
-            {session.actor.name}
+            <span className="truncate">{session.actor.name}</span>
           </LinkButton>
         }
       />

@@ -1,4 +1,5 @@
 import { useTranslations } from "next-intl";
+import { Card } from "@/components/ui/card";
 import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
 
 type AccountItem = {
@@ -20,18 +21,20 @@ const COLUMNS = ["number", "buyer", "sites", "currency", "state"] as const;
 export function AccountTable({ accounts }: { accounts: readonly AccountItem[] }) {
   const t = useTranslations("accounts");
   return (
-    <Table caption={t("caption")} isHeadSticky>
-      <TableHead>
-        {COLUMNS.map((column) => (
-          <Th key={column}>{t(`columns.${column}`)}</Th>
-        ))}
-      </TableHead>
-      <TableBody>
-        {accounts.map((account) => (
-          <AccountRow key={account.number} account={account} />
-        ))}
-      </TableBody>
-    </Table>
+    <Card isInCharge>
+      <Table caption={t("caption")} isHeadSticky>
+        <TableHead>
+          {COLUMNS.map((column) => (
+            <Th key={column}>{t(`columns.${column}`)}</Th>
+          ))}
+        </TableHead>
+        <TableBody>
+          {accounts.map((account) => (
+            <AccountRow key={account.number} account={account} />
+          ))}
+        </TableBody>
+      </Table>
+    </Card>
   );
 }
 

@@ -1,5 +1,6 @@
 import { useTranslations } from "next-intl";
 import { TextLink } from "@/components/ui/link-button";
+import { Card } from "@/components/ui/card";
 import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
 
 type PartItem = {
@@ -17,18 +18,20 @@ const COLUMNS = ["number", "name", "family", "maker", "supersededBy", "tracking"
 export function PartTable({ parts }: { parts: readonly PartItem[] }) {
   const t = useTranslations("catalogue");
   return (
-    <Table caption={t("caption")} isHeadSticky>
-      <TableHead>
-        {COLUMNS.map((column) => (
-          <Th key={column}>{t(`columns.${column}`)}</Th>
-        ))}
-      </TableHead>
-      <TableBody>
-        {parts.map((part) => (
-          <PartRow key={part.partNumber} part={part} />
-        ))}
-      </TableBody>
-    </Table>
+    <Card isInCharge>
+      <Table caption={t("caption")} isHeadSticky>
+        <TableHead>
+          {COLUMNS.map((column) => (
+            <Th key={column}>{t(`columns.${column}`)}</Th>
+          ))}
+        </TableHead>
+        <TableBody>
+          {parts.map((part) => (
+            <PartRow key={part.partNumber} part={part} />
+          ))}
+        </TableBody>
+      </Table>
+    </Card>
   );
 }
 

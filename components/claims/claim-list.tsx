@@ -6,28 +6,26 @@ import { useTranslations } from "next-intl";
 import { useMemo } from "react";
 import { fetchJson } from "@/components/live/fetch-json";
 import { Button } from "@/components/ui/button";
+import { Card } from "@/components/ui/card";
 import { EmptyState } from "@/components/ui/empty-state";
 import { LinkButton, TextLink } from "@/components/ui/link-button";
 import { Pagination } from "@/components/ui/pagination";
 import { Serial } from "@/components/ui/serial";
-import { ClaimMark, LateMark, Mark } from "@/components/ui/status-mark";
 import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
 import { TextField } from "@/components/ui/text-field";
-import { dayInZone, daysBetween } from "@/lib/kernel/calendar-day";
 import { isCurrency } from "@/lib/kernel/currency";
-import { formatInstant, formatMoney } from "@/lib/kernel/format";
-import type { Locale } from "@/lib/kernel/locale";
+import { formatMoney } from "@/lib/kernel/format";
 import { money } from "@/lib/kernel/money";
 import type { ClaimItem, ClaimItems } from "@/lib/claims/lists/view";
+import { DueMark, StateMarks, type Reader, type Side } from "./claim-marks";
 
 type Query = { view: string; order: string; q: string; page: number };
-type Reader = { locale: Locale; timeZone: string };
 type ClaimListProps = Reader & {
   path: "/judging" | "/workshop-today";
   views: readonly (keyof ClaimItems["counts"])[];
   query: Query;
   initial: ClaimItems;
-  side: "workshop" | "distributor";
+  side: Side;
 };
 
 const features = tableFeatures({});
@@ -67,7 +65,13 @@ export function ClaimList(props: ClaimListProps) {
     <div className="grid gap-4">
       <ListHead {...props} list={list} />
       {isError ? <ListStale /> : null}
-      {list.items.length === 0 ? <ListEmpty {...props} /> : <ListTable {...props} list={list} />}
+      {list.items.length === 0 ? (
+        <ListEmpty {...props} />
+      ) : (
+        <Card isInCharge>
+          <ListTable {...props} list={list} />
+        </Card>
+      )}
       {list.pages > 1 ? (
         <Pagination
           page={query.page}
@@ -89,24 +93,25 @@ function ListHead({ path, views, query, list, side }: ClaimListProps & { list: C
   const t = useTranslations("live.lists");
   return (
     <div className="flex flex-wrap items-end justify-between gap-4">
-      <nav aria-label={t("views")}>
-        <ul className="flex flex-wrap gap-2">
+      <nav aria-label={t("views")} className="max-sm:w-full">
+        <ul className="grid grid-cols-2 gap-x-2 gap-y-1 sm:flex sm:flex-wrap sm:gap-y-2">
           {views.map((view) => (
             <li key={view}>
               <LinkButton
                 href={addressOf(path, query, { view })}
                 kind={view === query.view ? "secondary" : "quiet"}
                 small
+                wide
                 aria-current={view === query.view ? "true" : undefined}
               >
-                {t(`${side}.${view}`)}{" "}
+                <span className="max-sm:grow max-sm:text-left">{t(`${side}.${view}`)}</span>{" "}
                 <span className="text-ink-2 tabular-nums">{list.counts[view] ?? ""}</span>
               </LinkButton>
             </li>
           ))}
         </ul>
       </nav>
-      <form action={path} role="search" className="flex items-end gap-2">
+      <form action={path} role="search" className="flex items-end gap-2 max-sm:w-full max-sm:[&>div]:grow">
         <input type="hidden" name="view" value={query.view} />
         <TextField name="q" label={t("search")} type="search" defaultValue={query.q} maxLength={80} />
         <Button type="submit" kind="secondary">
@@ -136,12 +141,12 @@ function ListTable({ path, query, list, side, locale, timeZone }: ClaimListProps
     () =>
       helper.columns([
         helper.accessor("number", { header: t("columns.number") }),
+        helper.accessor("mark", { header: t("columns.state") }),
+        helper.accessor("answerDueAt", { header: t("columns.due") }),
         helper.accessor("partName", { header: t("columns.part") }),
         helper.accessor("otherParty", {
           header: t(`columns.${side === "distributor" ? "workshop" : "distributor"}`),
         }),
-        helper.accessor("mark", { header: t("columns.state") }),
-        helper.accessor("answerDueAt", { header: t("columns.due") }),
         helper.accessor("askedMinor", { header: t("columns.asked") }),
       ]),
     [t, side],
@@ -187,21 +192,22 @@ function ListTable({ path, query, list, side, locale, timeZone }: ClaimListProps
   );
 }
 
-function ClaimRow({
-  item,
-  side,
-  locale,
-  timeZone,
-}: Reader & { item: ClaimItem; side: "workshop" | "distributor" }) {
+function ClaimRow({ item, side, locale, timeZone }: Reader & { item: ClaimItem; side: Side }) {
   const t = useTranslations("live.lists");
   const currency = isCurrency(item.currency) ? item.currency : "EUR";
   return (
-    <Row>
+    <Row isAlarming={side === "distributor" && item.safetyReported}>
       <RowHead>
         <TextLink href={`/claims/${item.number}`}>
           <span className="font-mono">{item.number}</span>
         </TextLink>
       </RowHead>
+      <Td label={t("columns.state")}>
+        <StateMarks item={item} side={side} />
+      </Td>
+      <Td label={t("columns.due")}>
+        <DueMark item={item} side={side} locale={locale} timeZone={timeZone} />
+      </Td>
       <Td label={t("columns.part")}>
         {item.partName ?? t("noPart")}
         {item.lineCount > 1 ? ` (${t("lines", { count: item.lineCount })})` : null}
@@ -212,41 +218,9 @@ function ClaimRow({
         ) : null}
       </Td>
       <Td label={t(`columns.${side === "distributor" ? "workshop" : "distributor"}`)}>{item.otherParty}</Td>
-      <Td label={t("columns.state")}>
-        <span className="flex flex-wrap items-center gap-2">
-          <ClaimMark state={item.mark} />
-          {item.safetyReported ? (
-            <Mark shape="triangle" tone="refused" plain>
-              {t("safety")}
-            </Mark>
-          ) : null}
-          {item.flagCount > 0 ? (
-            <Mark shape="openTriangle" tone="wanting" plain>
-              {t("flags", { count: item.flagCount })}
-            </Mark>
-          ) : null}
-          {side === "distributor" && item.holderName ? (
-            <span className="text-small text-ink-2">{item.holderName}</span>
-          ) : null}
-        </span>
-      </Td>
-      <Td label={t("columns.due")}>
-        <Due item={item} locale={locale} timeZone={timeZone} />
-      </Td>
       <Td label={t("columns.asked")} isNumeric>
         {formatMoney(money(BigInt(item.askedMinor), currency), locale)}
       </Td>
     </Row>
   );
-}
-
-function Due({ item, locale, timeZone }: Reader & { item: ClaimItem }) {
-  const t = useTranslations("live.lists");
-  if (!item.answerDueAt || item.isClockStopped)
-    return <span className="text-ink-3">{t(item.isClockStopped ? "stopped" : "none")}</span>;
-  if (item.mark !== "filed" && item.mark !== "beingJudged")
-    return <span className="text-ink-3">{t("none")}</span>;
-  const due = new Date(item.answerDueAt);
-  const daysOver = daysBetween(dayInZone(due, timeZone), dayInZone(new Date(), timeZone));
-  return daysOver > 0 ? <LateMark daysOver={daysOver} /> : <>{formatInstant(due, locale, timeZone)}</>;
 }

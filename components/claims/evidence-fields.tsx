@@ -74,16 +74,22 @@ function Row({ row, isAsked, ...props }: RowProps) {
         isAsked && "border-l-4 border-l-wanting pl-4",
       )}
     >
-      <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
-        <EvidenceMark state={stateOf(row, draft, files)} />
-        <h3 className="text-18">{words(`${row.id}.name`)}</h3>
-        {row.need === "useful" ? <span className="text-small text-ink-2">{t("useful")}</span> : null}
-        {isAsked ? (
-          <Mark shape="openDiamond" tone="wanting" plain>
-            {t("asked")}
-          </Mark>
-        ) : null}
+      <div className="flex items-baseline justify-between gap-3">
+        <h3 className="min-w-0 text-18">{words(`${row.id}.name`)}</h3>
+        <span className="shrink-0">
+          <EvidenceMark state={stateOf(row, draft, files)} />
+        </span>
       </div>
+      {row.need === "useful" || isAsked ? (
+        <p className="-mt-2 flex flex-wrap items-center gap-x-3 text-small text-ink-2">
+          {isAsked ? (
+            <Mark shape="openDiamond" tone="wanting" plain>
+              {t("asked")}
+            </Mark>
+          ) : null}
+          {row.need === "useful" ? t("useful") : null}
+        </p>
+      ) : null}
       <p className="max-w-measure text-small text-ink-2">{words(`${row.why}.why`)}</p>
       {problem ? <p className="font-semibold text-refused">{problem.text}</p> : null}
       <RowInput row={row} {...props} />

@@ -35,6 +35,7 @@ export function ExclusionFields({ draft, family }: ExclusionFieldsProps) {
         <div className="grid gap-4">
           {family.conditionAsFound.map((item) => (
             <RadioGroup
+              isInline
               key={item}
               name={`condition.${item}`}
               label={words(`${family.code}.conditionAsFound.${item}`)}

@@ -2,7 +2,6 @@ import { useTranslations } from "next-intl";
 import { Card } from "@/components/ui/card";
 import { RadioGroup } from "@/components/ui/choice-group";
 import { DateField } from "@/components/ui/date-field";
-import { FamilyGlyph } from "@/components/ui/family-glyph";
 import { RadioTiles } from "@/components/ui/radio-tiles";
 import { TextArea } from "@/components/ui/text-area";
 import type { ClaimDraft } from "@/lib/claims/draft";
@@ -36,7 +35,6 @@ export function FaultFields({ draft, family, problems, locale, today }: FaultFie
           tiles={family.symptoms.map(({ code }) => ({
             value: code,
             label: words(`${family.code}.symptoms.${code}`),
-            picture: <FamilyGlyph family={family.code} />,
           }))}
         />
         <DateField
@@ -56,6 +54,7 @@ export function FaultFields({ draft, family, problems, locale, today }: FaultFie
           defaultValue={draft.note}
         />
         <RadioGroup
+          isInline
           name="incident"
           label={t("incident")}
           hint={t("incidentHint")}

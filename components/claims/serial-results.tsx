@@ -72,12 +72,19 @@ function UnitCard({ unit, coverage, locale, start }: Found & { locale: Locale; s
   const t = useTranslations("start");
   const currency = unit.currency.trim();
   return (
-    <Card title={unit.partName} note={unit.partNumber} actions={<FamilyGlyph family={unit.family} />}>
+    <Card
+      title={
+        <span className="inline-flex items-center gap-2">
+          <FamilyGlyph family={unit.family} className="size-6" /> {unit.partName}
+        </span>
+      }
+      note={unit.partNumber}
+    >
       <p className="mb-3 text-24">
         <Serial value={unit.serial} />
       </p>
       <TermLine coverage={coverage} locale={locale} />
-      <Facts>
+      <Facts columns={2}>
         <Fact term={t("batch")}>{unit.batchCode ?? t("notGiven")}</Fact>
         <Fact term={t("bought")}>
           {t("boughtFrom", { seller: unit.sellerName, day: formatDay(unit.invoicedOn, locale) })}

@@ -75,7 +75,7 @@ export function FileRow({ claimId, number, rowId, kind, files }: FileRowProps) {
           ))}
         </ul>
       ) : null}
-      <p className="flex flex-wrap gap-2">
+      <p className="flex flex-wrap gap-2 *:grow sm:*:grow-0">
         {kind === "photo" ? (
           <FilePick
             id={`${inputId}-camera`}
@@ -126,7 +126,7 @@ type FilePickProps = {
 /** A native picker under a label that looks like a button: a phone offers its camera, a desk its folders. It has no name: the form never carries the bytes. */
 function FilePick({ id, label, accept, isCamera = false, onTake }: FilePickProps) {
   return (
-    <span className="relative">
+    <span className="relative grid">
       <input
         id={id}
         type="file"

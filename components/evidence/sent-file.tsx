@@ -23,7 +23,7 @@ export function SentFile({ file, onWithdraw }: { file: EvidenceFileItem; onWithd
           <img
             src={`/api/v1/evidence/${file.id}/view`}
             alt=""
-            className="size-16 border border-edge object-cover"
+            className="size-28 border border-edge object-cover"
           />
         ) : undefined
       }

@@ -4,7 +4,8 @@ import { useActionState } from "react";
 import { useTranslations } from "next-intl";
 import { Banner } from "@/components/ui/banner";
 import { CheckboxGroup } from "@/components/ui/choice-group";
-import { SubmitButton } from "@/components/ui/submit-button";
+import { ErrorSummary } from "@/components/ui/error-summary";
+import { SubmitButton, SubmitRow } from "@/components/ui/submit-button";
 import { TextArea } from "@/components/ui/text-area";
 import type { FormAction } from "@/lib/kernel/action-result";
 
@@ -22,12 +23,14 @@ export function AskForm({ action, number, rows, round, workshop }: AskFormProps)
   const [state, send] = useActionState(action, null);
   const refused = state && !state.ok ? state : null;
   const typed = refused?.typed;
+  const problems = Object.entries(refused?.fields ?? {}).map(([fieldId, text]) => ({ fieldId, text }));
   const ticked = typed
     ? [typed.rowIds ?? []].flat()
     : rows.filter((row) => row.isMissing).map(({ id }) => id);
   return (
     <form action={send} noValidate className="grid gap-5">
       <input type="hidden" name="number" value={number} />
+      <ErrorSummary problems={problems} />
       {refused?.message ? (
         <Banner kind="refused" isLive>
           {refused.message}
@@ -48,7 +51,9 @@ export function AskForm({ action, number, rows, round, workshop }: AskFormProps)
         defaultValue={typeof typed?.question === "string" ? typed.question : ""}
         error={refused?.fields.question}
       />
-      <SubmitButton>{t("send")}</SubmitButton>
+      <SubmitRow>
+        <SubmitButton>{t("send")}</SubmitButton>
+      </SubmitRow>
     </form>
   );
 }

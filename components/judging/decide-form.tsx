@@ -1,14 +1,14 @@
 "use client";
 
 import { useTranslations } from "next-intl";
-import { useActionState, useState } from "react";
+import { useActionState, useState, type ReactNode } from "react";
 import { Banner } from "@/components/ui/banner";
 import { Card } from "@/components/ui/card";
 import { RadioGroup } from "@/components/ui/choice-group";
 import { ErrorSummary } from "@/components/ui/error-summary";
 import { Select } from "@/components/ui/select";
 import { Serial } from "@/components/ui/serial";
-import { SubmitButton } from "@/components/ui/submit-button";
+import { SubmitButton, SubmitRow } from "@/components/ui/submit-button";
 import { TextArea } from "@/components/ui/text-area";
 import { TextField } from "@/components/ui/text-field";
 import { VERDICT_OUTCOMES, type VerdictOutcome } from "@/lib/claims/lifecycle";
@@ -21,6 +21,8 @@ type Line = {
   name: string;
   serial: string | null;
   suggestion: VerdictOutcome | null;
+  /** Whether it is covered and why, step by step. */
+  cover: ReactNode;
 };
 type DecideFormProps = { action: FormAction; number: string; revision: number; lines: readonly Line[] };
 type LineProps = {
@@ -37,6 +39,8 @@ const textIn = (typed: Typed | undefined, name: string): string | undefined => {
 
 const isOutcome = (text: string | undefined): text is VerdictOutcome =>
   VERDICT_OUTCOMES.some((outcome) => outcome === text);
+
+const BESIDE = "grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]";
 
 /** The verdict of each line, whose doing it was in exact shares, the reason, and the letter the workshop reads. */
 export function DecideForm({ action, number, revision, lines }: DecideFormProps) {
@@ -56,30 +60,38 @@ export function DecideForm({ action, number, revision, lines }: DecideFormProps)
         </Banner>
       ) : null}
       {lines.map((line, place) => (
-        <LineVerdict key={line.lineId} line={line} place={place} typed={refused?.typed} fields={fields} />
-      ))}
-      <Card title={t("letterTitle")}>
-        <div className="grid gap-5">
-          <TextArea
-            name="letter"
-            label={t("letter")}
-            hint={t("letterHint")}
-            rows={6}
-            limit={4000}
-            defaultValue={textIn(refused?.typed, "letter") ?? ""}
-            error={fields.letter}
-          />
-          <TextField
-            name="returnWaivedReason"
-            label={t("returnWaived")}
-            hint={t("returnWaivedHint")}
-            maxLength={1000}
-            defaultValue={textIn(refused?.typed, "returnWaivedReason") ?? ""}
-            error={fields.returnWaivedReason}
-          />
-          <SubmitButton>{t("submit")}</SubmitButton>
+        <div key={line.lineId} className={BESIDE}>
+          <LineVerdict line={line} place={place} typed={refused?.typed} fields={fields} />
+          {/* On a phone the cover is read before the verdict is given. */}
+          <div className="min-w-0 max-xl:order-first">{line.cover}</div>
         </div>
-      </Card>
+      ))}
+      <div className={BESIDE}>
+        <Card title={t("letterTitle")}>
+          <div className="grid gap-5">
+            <TextArea
+              name="letter"
+              label={t("letter")}
+              hint={t("letterHint")}
+              rows={6}
+              limit={4000}
+              defaultValue={textIn(refused?.typed, "letter") ?? ""}
+              error={fields.letter}
+            />
+            <TextField
+              name="returnWaivedReason"
+              label={t("returnWaived")}
+              hint={t("returnWaivedHint")}
+              maxLength={1000}
+              defaultValue={textIn(refused?.typed, "returnWaivedReason") ?? ""}
+              error={fields.returnWaivedReason}
+            />
+            <SubmitRow>
+              <SubmitButton>{t("submit")}</SubmitButton>
+            </SubmitRow>
+          </div>
+        </Card>
+      </div>
     </form>
   );
 }
@@ -106,15 +118,17 @@ function LineVerdict({ line, place, typed, fields }: LineProps) {
           choices={VERDICT_OUTCOMES.map((value) => ({ value, label: t(`outcomes.${value}`) }))}
           error={fields[name("outcome")]}
         />
-        <fieldset className="grid gap-2" aria-describedby={`${name("shares")}-hint`}>
+        <fieldset className="grid gap-2" aria-describedby={`${name("shares")}-hint ${name("shares")}-error`}>
           <legend className="mb-1 font-semibold">{t("shares")}</legend>
           <p id={`${name("shares")}-hint`} className="max-w-measure text-small text-ink-2">
             {t("sharesHint")}
           </p>
-          <div id={name("shares")} className="grid grid-cols-2 gap-3 sm:grid-cols-5">
-            {CAUSES.map((cause) => (
+          <div className="grid grid-cols-2 gap-3 sm:grid-cols-5">
+            {CAUSES.map((cause, index) => (
               <TextField
                 key={cause}
+                // The first field carries the question's own id, so that the error summary lands there.
+                id={index === 0 ? name("shares") : undefined}
                 name={name(`shares.${cause}`)}
                 label={t(`causes.${cause}`)}
                 inputMode="text"
@@ -127,7 +141,7 @@ function LineVerdict({ line, place, typed, fields }: LineProps) {
             ))}
           </div>
           {fields[name("shares")] ? (
-            <p className="font-semibold text-refused">{fields[name("shares")]}</p>
+            <p id={`${name("shares")}-error`} className="font-semibold text-refused">{fields[name("shares")]}</p>
           ) : null}
         </fieldset>
         <Select

@@ -1,6 +1,7 @@
 import { useTranslations } from "next-intl";
 import { TextLink } from "@/components/ui/link-button";
 import { Mark } from "@/components/ui/status-mark";
+import { Card } from "@/components/ui/card";
 import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
 import type { Role } from "@/lib/access/roles";
 
@@ -27,18 +28,20 @@ const COLUMNS = ["name", "roles", "lastSeen", "state", "change"] as const;
 export function PersonTable({ people }: { people: readonly PersonItem[] }) {
   const t = useTranslations("people");
   return (
-    <Table caption={t("caption")} isHeadSticky>
-      <TableHead>
-        {COLUMNS.map((column) => (
-          <Th key={column}>{t(`columns.${column}`)}</Th>
-        ))}
-      </TableHead>
-      <TableBody>
-        {people.map((person) => (
-          <PersonRow key={person.id} person={person} />
-        ))}
-      </TableBody>
-    </Table>
+    <Card isInCharge>
+      <Table caption={t("caption")} isHeadSticky>
+        <TableHead>
+          {COLUMNS.map((column) => (
+            <Th key={column}>{t(`columns.${column}`)}</Th>
+          ))}
+        </TableHead>
+        <TableBody>
+          {people.map((person) => (
+            <PersonRow key={person.id} person={person} />
+          ))}
+        </TableBody>
+      </Table>
+    </Card>
   );
 }
 

@@ -1,71 +1,111 @@
 import { useTranslations } from "next-intl";
-import { RunLogFigure } from "@/components/evidence/run-log-figure";
 import { Card } from "@/components/ui/card";
 import { EmptyState } from "@/components/ui/empty-state";
 import { EvidenceMark, Mark } from "@/components/ui/status-mark";
-import type { EvidenceFileView, EvidenceRowView, ReadingView } from "@/lib/claims/sheet/view";
-import { formatBytes, formatNumber } from "@/lib/kernel/format";
+import type { EvidenceRowView, ReadingView } from "@/lib/claims/sheet/view";
+import { formatNumber } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
-import type { Limits } from "@/lib/rule-book/limits-shape";
+import { EvidenceFiles, type Against } from "./evidence-files";
 import type { SheetProps } from "./shared";
 
-/** All that was given as proof, in the order of the Evidence list; readings beside their limits, logs drawn at once. */
+const hasPhoto = (row: EvidenceRowView): boolean => row.files.some((file) => file.kind === "photo");
+
+/** All that was given as proof: the photos first and large, side by side; then readings beside their limits, logs drawn. */
 export function EvidenceCard({ sheet, locale }: SheetProps) {
   const t = useTranslations("sheet.evidence");
   const done = sheet.rows.filter((row) => row.state !== "toDo").length;
+  const pictured = sheet.rows.filter(hasPhoto);
+  const others = sheet.rows.filter((row) => !hasPhoto(row));
   return (
     <Card id="evidence" title={t("title")} note={t("count", { done, all: sheet.rows.length })}>
       {sheet.rows.length === 0 && sheet.otherFiles.length === 0 ? (
         <EmptyState kind="nothingYet" title={t("none")} />
       ) : null}
-      <ol className="grid">
-        {sheet.rows.map((row) => (
+      {pictured.length > 0 ? (
+        <ul className="mb-2 grid gap-x-4 gap-y-6 border-b border-rule pb-6 sm:grid-cols-2 print:grid-cols-2">
+          {pictured.map((row) => (
+            <PicturedRow key={row.id} row={row} limits={sheet.limits} locale={locale} />
+          ))}
+        </ul>
+      ) : null}
+      <ul className="grid">
+        {others.map((row) => (
           <EvidenceRow key={row.id} row={row} limits={sheet.limits} locale={locale} />
         ))}
-      </ol>
+      </ul>
       {sheet.otherFiles.length > 0 ? (
         <div className="mt-4">
           <h3 className="mb-2 text-18">{t("others")}</h3>
-          <Files files={sheet.otherFiles} limits={sheet.limits} locale={locale} />
+          <div className="grid gap-4 sm:grid-cols-2">
+            <EvidenceFiles files={sheet.otherFiles} limits={sheet.limits} locale={locale} />
+          </div>
         </div>
       ) : null}
     </Card>
   );
 }
 
-type Against = { limits: Limits | null; locale: Locale };
+function PicturedRow({ row, limits, locale }: { row: EvidenceRowView } & Against) {
+  return (
+    <li className="grid min-w-0 content-start gap-2 print:break-inside-avoid">
+      <RowName row={row} />
+      <EvidenceFiles files={row.files} limits={limits} locale={locale} />
+      <Said row={row} locale={locale} />
+    </li>
+  );
+}
 
 function EvidenceRow({ row, limits, locale }: { row: EvidenceRowView } & Against) {
-  const t = useTranslations("sheet.evidence");
-  const words = useTranslations("evidence.rows");
   const log = row.files.find((file) => file.kind === "runLog");
   return (
-    <li className="grid gap-x-6 gap-y-2 border-b border-rule py-4 first:pt-0 last:border-b-0 lg:grid-cols-[minmax(12rem,1fr)_2fr]">
-      <div className="flex flex-wrap items-center gap-x-3 gap-y-1 self-start">
-        <EvidenceMark state={row.state} plain={row.state === "done"} />
-        <h3 className="text-16">{words(`${row.id}.name`)}</h3>
-        {row.need === "useful" ? <span className="text-small text-ink-2">{t("useful")}</span> : null}
-      </div>
+    <li className="grid gap-x-6 gap-y-2 border-b border-rule py-4 last:border-b-0 lg:grid-cols-[minmax(14rem,1fr)_2fr] print:break-inside-avoid">
+      <RowName row={row} />
       {/* A drawing needs the whole width; everything else stands beside its name. */}
-      <div className={log ? "min-w-0 lg:col-span-2" : "grid min-w-0 gap-2"}>
-        {row.answer ? <p className="max-w-measure whitespace-pre-wrap">{row.answer}</p> : null}
-        {row.reason ? (
-          <p className="max-w-measure text-ink-2">{t("cannotGet", { reason: row.reason })}</p>
-        ) : null}
-        {row.reading ? <ReadingLine reading={row.reading} locale={locale} /> : null}
-        {isSaidBelow(row) ? (
-          <a href="#seen" className="text-petrol underline underline-offset-4">
-            {t("saidBelow")}
-          </a>
-        ) : null}
-        <Files files={row.files} limits={limits} locale={locale} />
+      <div className={log ? "grid min-w-0 gap-2 lg:col-span-2" : "grid min-w-0 content-start gap-2"}>
+        <Said row={row} locale={locale} />
+        <EvidenceFiles files={row.files} limits={limits} locale={locale} />
       </div>
     </li>
   );
 }
 
-/** Rows answered by questions of their own on the draft: their answers stand in the card below. */
-const isSaidBelow = (row: EvidenceRowView): boolean =>
+/** The name on the left edge, its state on the right: both can be run down with the eye. */
+function RowName({ row }: { row: EvidenceRowView }) {
+  const t = useTranslations("sheet.evidence");
+  const words = useTranslations("evidence.rows");
+  return (
+    <div className="flex items-baseline justify-between gap-3 self-start">
+      <div className="min-w-0">
+        <h3 className="text-16">{words(`${row.id}.name`)}</h3>
+        {row.need === "useful" ? <p className="text-small text-ink-2">{t("useful")}</p> : null}
+      </div>
+      <span className="shrink-0">
+        <EvidenceMark state={row.state} plain={row.state === "done"} />
+      </span>
+    </div>
+  );
+}
+
+function Said({ row, locale }: { row: EvidenceRowView; locale: Locale }) {
+  const t = useTranslations("sheet.evidence");
+  return (
+    <>
+      {row.answer ? <p className="max-w-measure whitespace-pre-wrap">{row.answer}</p> : null}
+      {row.reason ? (
+        <p className="max-w-measure text-ink-2">{t("cannotGet", { reason: row.reason })}</p>
+      ) : null}
+      {row.reading ? <ReadingLine reading={row.reading} locale={locale} /> : null}
+      {isSaidElsewhere(row) ? (
+        <a href="#seen" className="text-petrol underline underline-offset-4">
+          {t("saidElsewhere")}
+        </a>
+      ) : null}
+    </>
+  );
+}
+
+/** Rows answered by questions of their own on the draft: their answers stand in a card of their own. */
+const isSaidElsewhere = (row: EvidenceRowView): boolean =>
   row.state === "done" && !row.answer && !row.reading && row.files.length === 0;
 
 const JUDGEMENT = {
@@ -114,61 +154,5 @@ function ReadingLine({ reading, locale }: { reading: ReadingView; locale: Locale
         {reading.instrument ? ` ${t("instrument", { instrument: reading.instrument })}` : null}
       </p>
     </div>
-  );
-}
-
-function Files({ files, limits, locale }: { files: readonly EvidenceFileView[] } & Against) {
-  const t = useTranslations("sheet.evidence");
-  if (files.length === 0) return null;
-  const pictures = files.filter((file) => file.kind === "photo");
-  const others = files.filter((file) => file.kind !== "photo");
-  return (
-    <div className="grid gap-4">
-      {pictures.length > 0 ? (
-        <ul className="grid grid-cols-2 gap-3 sm:grid-cols-3">
-          {pictures.map((file) => (
-            <li key={file.id} className="min-w-0">
-              <a href={`/api/v1/evidence/${file.id}/view`} className="block">
-                {file.viewState === "ready" ? (
-                  // eslint-disable-next-line @next/next/no-img-element -- view copies come small from our own store
-                  <img
-                    src={`/api/v1/evidence/${file.id}/view`}
-                    alt={t("photo", { name: file.originalName })}
-                    loading="lazy"
-                    className="aspect-4/3 w-full border border-edge object-cover"
-                  />
-                ) : (
-                  <span className="grid aspect-4/3 place-items-center border border-dashed border-edge text-small text-ink-2">
-                    {t(`view.${file.viewState}`)}
-                  </span>
-                )}
-              </a>
-              <FileNote file={file} locale={locale} />
-            </li>
-          ))}
-        </ul>
-      ) : null}
-      {others.map((file) => (
-        <div key={file.id} className="min-w-0">
-          {file.kind === "runLog" ? (
-            <RunLogFigure fileId={file.id} summary={file.summary} limits={limits} locale={locale} />
-          ) : null}
-          <FileNote file={file} locale={locale} />
-        </div>
-      ))}
-    </div>
-  );
-}
-
-function FileNote({ file, locale }: { file: EvidenceFileView; locale: Locale }) {
-  const t = useTranslations("sheet.evidence");
-  return (
-    <p className="text-small break-all text-ink-2">
-      <a href={`/api/v1/evidence/${file.id}`} className="font-mono text-petrol underline underline-offset-4">
-        {file.originalName}
-      </a>{" "}
-      {formatBytes(file.sizeBytes, locale)}
-      {file.isInRevision ? null : ` ${t("notInRevision")}`}
-    </p>
   );
 }

@@ -45,7 +45,10 @@ export function LineCard({ line, sheet, locale }: SheetProps & { line: LineView 
         </Fact>
         <Fact term={t("replacement")}>
           {line.replacement
-            ? t("replacedBy", { serial: line.replacement.serial, day: day(line.replacement.fittedOn) })
+            ? t.rich("replacedBy", {
+                serial: () => <Serial value={line.replacement?.serial ?? ""} />,
+                day: day(line.replacement.fittedOn),
+              })
             : t("notGiven")}
         </Fact>
         <Fact term={t("asked")}>{formatMoney(line.asked, locale)}</Fact>

@@ -3,6 +3,7 @@
 import { useActionState } from "react";
 import { Banner } from "@/components/ui/banner";
 import { buttonStyle } from "@/components/ui/button-style";
+import { closeOnEscape } from "@/components/ui/close-on-escape";
 import { Select } from "@/components/ui/select";
 import { SubmitButton } from "@/components/ui/submit-button";
 import { TextArea } from "@/components/ui/text-area";
@@ -24,7 +25,7 @@ export function ReasonDrawer({ action, number, trigger, label, field, submit, ch
   const refused = state && !state.ok ? state : null;
   const typed = refused?.typed[field];
   return (
-    <details className="group" open={refused !== null}>
+    <details className="group" open={refused !== null} onKeyDown={closeOnEscape}>
       <summary className={`${buttonStyle({ kind: "quiet" })} list-none [&::-webkit-details-marker]:hidden`}>
         {trigger}
       </summary>

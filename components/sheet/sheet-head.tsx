@@ -11,6 +11,7 @@ import type { SheetProps } from "./shared";
 export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
   const t = useTranslations("sheet");
   const words = useTranslations("families");
+  const draft = useTranslations("draft");
   const mark =
     sheet.state === "decided" && sheet.outcome
       ? sheet.outcome
@@ -21,6 +22,8 @@ export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
     ? words(`${sheet.family}.symptoms.${sheet.symptom}`)
     : words(`${sheet.family}.name`);
   const other = sheet.side === "distributor" ? sheet.workshopName : sheet.sellerName;
+  const asked =
+    sheet.state === "answerNeeded" ? sheet.queries.find(({ answeredAt }) => !answeredAt) : undefined;
   return (
     <div className="grid gap-4">
       <PageHeader
@@ -32,15 +35,15 @@ export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
         }
         title={
           <span className="inline-flex items-center gap-3">
-            <FamilyGlyph family={sheet.family} /> {title}
+            <FamilyGlyph family={sheet.family} className="size-6 sm:size-7" /> {title}
           </span>
         }
         note={
           <>
             <ClaimMark state={mark} />
+            <Due sheet={sheet} locale={locale} timeZone={timeZone} />
             <span>{t("asked", { amount: formatMoney(sheet.asked, locale) })}</span>
             <span>{t("revision", { revision: sheet.revision })}</span>
-            <Due sheet={sheet} locale={locale} timeZone={timeZone} />
           </>
         }
       />
@@ -49,6 +52,11 @@ export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
           {t("safety", {
             at: sheet.incidentKnownAt ? formatInstant(new Date(sheet.incidentKnownAt), locale, timeZone) : "",
           })}
+        </Banner>
+      ) : null}
+      {asked ? (
+        <Banner kind="wanting" title={draft("queryTitle")}>
+          <p className="whitespace-pre-wrap">{asked.question}</p>
         </Banner>
       ) : null}
       {sheet.parked ? (
@@ -67,6 +75,6 @@ function Due({ sheet, locale, timeZone }: SheetProps) {
   if (!sheet.answerDueAt || (sheet.state !== "filed" && sheet.state !== "beingJudged")) return null;
   const due = new Date(sheet.answerDueAt);
   const daysOver = daysBetween(dayInZone(due, timeZone), dayInZone(new Date(), timeZone));
-  if (daysOver > 0) return <LateMark daysOver={daysOver} />;
+  if (daysOver > 0) return <LateMark daysOver={daysOver} plain={sheet.side === "workshop"} />;
   return <span>{t("dueBy", { at: formatInstant(due, locale, timeZone) })}</span>;
 }

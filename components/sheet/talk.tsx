@@ -72,6 +72,7 @@ export function Talk({ number, initial, locale, timeZone }: TalkProps) {
       <form ref={form} onSubmit={submit} className="mt-5 grid gap-3 border-t border-rule pt-4 print:hidden">
         <TextArea name="body" label={t("write")} rows={3} limit={4000} error={error} />
         <RadioGroup
+          isInline
           name="audience"
           label={t("for")}
           chosen="both"
@@ -80,9 +81,11 @@ export function Talk({ number, initial, locale, timeZone }: TalkProps) {
             { value: "own", label: t("own") },
           ]}
         />
-        <Button type="submit" kind="secondary" isPending={say.isPending}>
-          {t("send")}
-        </Button>
+        <div className="grid sm:flex">
+          <Button type="submit" kind="secondary" isPending={say.isPending}>
+            {t("send")}
+          </Button>
+        </div>
       </form>
     </Card>
   );

@@ -21,11 +21,11 @@ export function AppHeader({ home, places = [], tools, help }: AppHeaderProps) {
     <>
       <SkipLink />
       <header className="border-b border-edge bg-paper print:hidden">
-        <div className="relative mx-auto flex max-w-page flex-wrap items-center gap-x-4 px-4 sm:px-6">
-          <Link href={home} aria-label={t("home")} className="my-2 rounded-sheet py-1.5">
+        <div className="relative mx-auto flex max-w-page items-center gap-x-2 px-4 sm:px-6 md:flex-wrap md:gap-x-4">
+          <Link href={home} aria-label={t("home")} className="my-2 shrink-0 rounded-sheet py-1.5">
             <Wordmark />
           </Link>
-          {tools ? <div className="ml-auto flex items-center gap-2">{tools}</div> : null}
+          {tools ? <div className="ml-auto flex min-w-0 items-center gap-2">{tools}</div> : null}
           <MainNav places={places} help={help} hasTools={Boolean(tools)} />
         </div>
       </header>

@@ -38,22 +38,30 @@ export function CheckboxGroup({
   );
 }
 
-/** Exactly one of the choices. */
-export function RadioGroup({ choices, chosen, onChange, ...props }: GroupProps & { chosen?: string }) {
+/** Exactly one of the choices. `isInline` for two or three short ones: a long list of questions stays half as long. */
+export function RadioGroup({
+  choices,
+  chosen,
+  onChange,
+  isInline = false,
+  ...props
+}: GroupProps & { chosen?: string; isInline?: boolean }) {
   const [field] = splitField(props);
   const { id, name } = controlOf(field);
   return (
     <FieldGroup {...field} isOneOf>
-      {choices.map((choice, index) => (
-        <Radio
-          key={choice.value}
-          {...choice}
-          id={idAt(id, index)}
-          name={name}
-          defaultChecked={chosen === choice.value}
-          onChange={onChange && (() => onChange(choice.value, true))}
-        />
-      ))}
+      <div className={isInline ? "flex flex-wrap gap-x-8 gap-y-2" : "contents"}>
+        {choices.map((choice, index) => (
+          <Radio
+            key={choice.value}
+            {...choice}
+            id={idAt(id, index)}
+            name={name}
+            defaultChecked={chosen === choice.value}
+            onChange={onChange && (() => onChange(choice.value, true))}
+          />
+        ))}
+      </div>
     </FieldGroup>
   );
 }

@@ -6,6 +6,7 @@ import { usePathname } from "next/navigation";
 import { useTranslations } from "next-intl";
 import type { ComponentProps, ReactNode } from "react";
 import { buttonStyle } from "./button-style";
+import { closeOnEscape } from "./close-on-escape";
 import { Glyph } from "./glyph";
 
 export type Place = { href: ComponentProps<typeof Link>["href"]; label: ReactNode; count?: number };
@@ -33,9 +34,16 @@ export function MainNav({ places, help, hasTools }: MainNavProps) {
         </ul>
       </nav>
       {/* A new key on each page closes the menu after it has led somewhere. */}
-      <details key={pathname} className={clsx("group md:hidden", !hasTools && "ml-auto")}>
+      <details
+        key={pathname}
+        onKeyDown={closeOnEscape}
+        className={clsx("group shrink-0 md:hidden", !hasTools && "ml-auto")}
+      >
         <summary
-          className={clsx(buttonStyle({ kind: "quiet" }), "list-none [&::-webkit-details-marker]:hidden")}
+          className={clsx(
+            buttonStyle({ kind: "quiet" }),
+            "-mr-2 list-none px-2! [&::-webkit-details-marker]:hidden",
+          )}
         >
           <Glyph name="bars" className="group-open:hidden" />
           <Glyph name="cross" className="hidden group-open:block" />

@@ -1,3 +1,4 @@
+import clsx from "clsx";
 import type { ReactNode } from "react";
 import { controlOf, FieldGroup, type FieldText } from "./field";
 import { splitField } from "./split-field";
@@ -19,10 +20,13 @@ export function RadioTiles({ tiles, chosen, onChange, ...props }: RadioTilesProp
         {tiles.map(({ value, label, hint, picture }, index) => (
           <label
             key={value}
-            className="relative flex min-h-24 cursor-pointer flex-col justify-between gap-3 rounded-control border border-edge bg-card p-3 hover:border-ink-2 has-checked:border-petrol has-checked:bg-well has-checked:shadow-[inset_0_0_0_1px_var(--petrol)] has-focus-visible:outline-3 has-focus-visible:outline-offset-3 has-focus-visible:outline-focus"
+            className={clsx(
+              picture ? "min-h-24 flex-col justify-between" : "min-h-16 items-center",
+              "relative flex cursor-pointer gap-3 rounded-control border border-edge bg-card p-3 hover:border-ink-2 has-checked:border-petrol has-checked:bg-well has-checked:shadow-[inset_0_0_0_1px_var(--petrol)] has-focus-visible:outline-3 has-focus-visible:outline-offset-3 has-focus-visible:outline-focus",
+            )}
           >
-            <span className="flex items-start justify-between gap-2 text-petrol">
-              {picture ?? <span />}
+            <span className={picture ? "flex items-start justify-between gap-2 text-petrol" : "contents"}>
+              {picture}
               <input
                 type="radio"
                 id={index === 0 ? id : `${id}-${index + 1}`}

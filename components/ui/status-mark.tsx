@@ -19,7 +19,7 @@ export function Mark({ shape, tone, plain = false, children }: MarkProps) {
   return (
     <span
       className={clsx(
-        "mark inline-flex items-center gap-2 text-14 leading-5 font-semibold",
+        "mark inline-flex items-center gap-2 font-text text-14 leading-5 font-semibold",
         toneText[tone],
         !plain && ["rounded-sheet border-l-3 border-current py-0.5 pr-2 pl-1.5", toneWash[tone]],
       )}
@@ -93,10 +93,10 @@ export function MatchMark({ state, plain, children }: StateProps<typeof MATCH_MA
 }
 
 /** Being late is never a change of the state's colour: it is a clock of its own, with the days in words. */
-export function LateMark({ daysOver }: { daysOver: number }) {
+export function LateMark({ daysOver, plain = true }: { daysOver: number; plain?: boolean }) {
   const t = useTranslations("ui");
   return (
-    <Mark shape="clock" tone="wanting" plain>
+    <Mark shape="clock" tone="wanting" plain={plain}>
       {t("daysOver", { days: daysOver })}
     </Mark>
   );

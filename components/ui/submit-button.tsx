@@ -1,7 +1,7 @@
 "use client";
 
 import { useTranslations } from "next-intl";
-import type { ComponentProps, MouseEvent } from "react";
+import type { ComponentProps, MouseEvent, ReactNode } from "react";
 import { useFormStatus } from "react-dom";
 import { buttonStyle, type ButtonLook } from "./button-style";
 import { ButtonWords } from "./button-words";
@@ -46,3 +46,8 @@ export function SubmitButton({
     </>
   );
 }
+
+/** The foot of a form: as wide as the page for a thumb, as wide as its words at a desk. */
+export const SubmitRow = ({ children }: { children: ReactNode }) => (
+  <div className="grid gap-2 sm:flex sm:flex-wrap">{children}</div>
+);

@@ -53,9 +53,16 @@ export const TableBody = ({ children }: { children: ReactNode }) => <tbody role=
 /** Sums under a double rule. */
 export const TableFoot = ({ children }: { children: ReactNode }) => <tfoot role="rowgroup">{children}</tfoot>;
 
-/** `isCurrent` marks the row being worked on. */
-export const Row = ({ isCurrent = false, ...props }: ComponentProps<"tr"> & { isCurrent?: boolean }) => (
-  <tr role="row" aria-current={isCurrent ? "true" : undefined} {...props} />
+type RowProps = ComponentProps<"tr"> & { isCurrent?: boolean; isAlarming?: boolean };
+
+/** `isCurrent` marks the row being worked on; `isAlarming` the one that cannot wait, beside the words that say why. */
+export const Row = ({ isCurrent = false, isAlarming = false, ...props }: RowProps) => (
+  <tr
+    role="row"
+    aria-current={isCurrent ? "true" : undefined}
+    data-alarming={isAlarming ? "" : undefined}
+    {...props}
+  />
 );
 
 type Sort = { href: ComponentProps<typeof Link>["href"]; direction?: "ascending" | "descending" };
@@ -92,8 +99,11 @@ type TdProps = Omit<ComponentProps<"td">, "className"> & {
   isNumeric?: boolean;
 };
 
-export const Td = ({ label, isNumeric = false, ...props }: TdProps) => (
-  <td role="cell" data-label={label} {...props} className={clsx(isNumeric && "ledger-number")} />
+/** Its value stands in a box of its own, so that a phone can set label and value side by side. */
+export const Td = ({ label, isNumeric = false, children, ...props }: TdProps) => (
+  <td role="cell" data-label={label} {...props} className={clsx(isNumeric && "ledger-number")}>
+    {children ? <div className="ledger-value">{children}</div> : null}
+  </td>
 );
 
 /** The cell that names its row. */

@@ -31,7 +31,11 @@ export function TextArea({ limit, defaultValue = "", rows = 4, onChange, ...prop
           setLength(event.target.value.length);
           onChange?.(event);
         }}
-        className={clsx(inputStyle, "field-sizing-content min-h-24 py-2")}
+        className={clsx(
+          inputStyle,
+          "field-sizing-content py-2",
+          rows > 4 ? "min-h-40!" : rows > 2 ? "min-h-24!" : "min-h-16!",
+        )}
       />
       {limit ? <CharacterCount id={countId} left={limit - length} /> : null}
     </Field>

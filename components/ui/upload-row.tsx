@@ -20,8 +20,13 @@ type UploadRowProps = {
 export function UploadRow({ fileName, state, percent = 0, note, picture, action }: UploadRowProps) {
   const t = useTranslations("ui.upload");
   return (
-    <li className="flex min-h-row flex-wrap items-center gap-x-4 gap-y-2 border-b border-rule py-2">
-      {picture}
+    <li
+      className={clsx(
+        "flex min-h-row flex-wrap items-center gap-x-4 gap-y-1 border-b border-rule py-2",
+        picture && "max-sm:grid max-sm:grid-cols-[auto_minmax(0,1fr)]",
+      )}
+    >
+      {picture ? <div className="max-sm:row-span-2 max-sm:self-start">{picture}</div> : null}
       <div className="min-w-0 flex-1 basis-48">
         <p className="flex flex-wrap justify-between gap-x-4">
           <span className="font-mono break-all">{fileName}</span>
@@ -45,7 +50,7 @@ export function UploadRow({ fileName, state, percent = 0, note, picture, action 
           <p className={clsx("text-small", state === "failed" ? "text-refused" : "text-ink-2")}>{note}</p>
         ) : null}
       </div>
-      {action}
+      {action ? <div className={clsx(picture && "max-sm:-ml-3 max-sm:self-start")}>{action}</div> : null}
     </li>
   );
 }

@@ -110,13 +110,13 @@ export class Disk {
     return upload;
   }
 
-  async upload(bucket, upload) {
+  /** What is known of an upload that was begun for this key and has not ended. */
+  async upload(bucket, upload, key) {
     if (!/^[0-9a-f-]{36}$/.test(upload)) throw new StoreError("NoSuchUpload", 404);
-    try {
-      return JSON.parse(await readFile(join(this.parts(bucket, upload), "upload.json"), "utf8"));
-    } catch {
-      throw new StoreError("NoSuchUpload", 404);
-    }
+    const text = await readFile(join(this.parts(bucket, upload), "upload.json"), "utf8").catch(() => null);
+    const begun = text === null ? null : JSON.parse(text);
+    if (begun?.key !== key) throw new StoreError("NoSuchUpload", 404);
+    return begun;
   }
 
   keepPart = async (bucket, upload, number, path, meta) => {

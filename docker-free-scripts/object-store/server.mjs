@@ -144,7 +144,7 @@ async function deleteObjects(disk, { request, bucket }, response) {
 
 async function completeUpload(disk, { request, params, headers, bucket, key }, response) {
   const upload = params.get("uploadId");
-  const { meta } = await disk.upload(bucket, upload);
+  const { meta } = await disk.upload(bucket, upload, key);
   const numbers = [...(await textOf(request)).matchAll(/<PartNumber>(\d+)<\/PartNumber>/g)].map((found) =>
     Number(found[1]),
   );
@@ -190,10 +190,10 @@ async function startUpload(disk, { headers, bucket, key }, response) {
 }
 
 async function uploadPart(disk, asked, response) {
-  const { params, bucket } = asked;
+  const { params, bucket, key } = asked;
   const number = Number(params.get("partNumber"));
   if (!(number >= 1 && number <= 10_000)) throw new StoreError("InvalidArgument", 400);
-  await disk.upload(bucket, params.get("uploadId"));
+  await disk.upload(bucket, params.get("uploadId"), key);
   await store(disk, asked, async (path, received) => {
     await disk.keepPart(bucket, params.get("uploadId"), number, path, received);
     send(response, 200, "", { etag: `"${received.etag}"`, ...received.checksums });
@@ -233,7 +233,7 @@ async function objectRequest(disk, asked, response) {
   if (method === "PUT" && headers["x-amz-copy-source"]) return copyObject(disk, asked, response);
   if (method === "PUT") return putObject(disk, asked, response);
   if (method === "DELETE" && params.has("uploadId")) {
-    await disk.upload(bucket, params.get("uploadId"));
+    await disk.upload(bucket, params.get("uploadId"), key);
     await disk.dropUpload(bucket, params.get("uploadId"));
     return send(response, 204);
   }

@@ -2,7 +2,9 @@ import { z } from "zod";
 import { emptyDraft } from "./draft";
 
 const typed = (max: number) => z.string().max(max);
-const notesById = z.record(z.string().max(60), z.string().max(1000));
+// Names of rows, symptoms and conditions: what is none of them could neither be read nor, with a NUL in it, be kept.
+const rowId = z.string().regex(/^[A-Za-z][A-Za-z0-9]{0,59}$/u);
+const notesById = z.record(rowId, z.string().max(1000));
 const yesNo = z.enum(["", "yes", "no"]);
 
 const lineShape = {
@@ -26,13 +28,13 @@ const shape = {
   failedOn: typed(40),
   repairedOn: typed(40),
   readings: z.record(
-    z.string().max(60),
+    rowId,
     z.strictObject({ raw: typed(60), temperature: typed(20), instrument: typed(120) }),
   ),
   answers: notesById,
   cannotGet: notesById,
   ruledOut: notesById,
-  condition: z.record(z.string().max(60), yesNo),
+  condition: z.record(rowId, yesNo),
   conditionNote: typed(1000),
   earlierWork: typed(1000),
   swapMinutes: typed(20),

@@ -45,6 +45,15 @@ export const emptyDraft = (): ClaimDraft => ({
   incidentNote: "",
 });
 
+/** Far above the rows of any list: what is sent beyond them is not kept, so that a draft cannot grow without end. */
+const MOST_NAMES = 100;
+
+const joined = <Value>(
+  kept: Readonly<Record<string, Value>>,
+  sent: Readonly<Record<string, Value>> = {},
+): Record<string, Value> =>
+  Object.fromEntries(Object.entries({ ...kept, ...sent }).slice(0, MOST_NAMES));
+
 /** The draft with a change applied. Pure: the same change twice is the same draft. */
 export function changedDraft(draft: ClaimDraft, change: DraftChange): ClaimDraft {
   const { lines, replaces = [], readings, answers, cannotGet, ruledOut, condition, ...texts } = change;
@@ -54,11 +63,11 @@ export function changedDraft(draft: ClaimDraft, change: DraftChange): ClaimDraft
     ...draft,
     ...texts,
     lines: draft.lines.map((line, place) => ({ ...line, ...lines?.[String(place)] })),
-    readings: { ...draft.readings, ...readings },
-    answers: { ...draft.answers, ...answers },
-    cannotGet: { ...draft.cannotGet, ...cannotGet },
-    ruledOut: { ...base("ruledOut", draft.ruledOut), ...ruledOut },
-    condition: { ...base("condition", draft.condition), ...condition },
+    readings: joined(draft.readings, readings),
+    answers: joined(draft.answers, answers),
+    cannotGet: joined(draft.cannotGet, cannotGet),
+    ruledOut: joined(base("ruledOut", draft.ruledOut), ruledOut),
+    condition: joined(base("condition", draft.condition), condition),
   };
 }
 

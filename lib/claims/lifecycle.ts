@@ -107,9 +107,12 @@ const isOpenTo = (mover: Mover, claim: ClaimParties, name: ClaimMove): boolean =
   if (!move.from.includes(claim.state) || !sideOf(mover, claim, move.side)) return false;
   if (!move.by.some((role) => mover.roles.has(role))) return false;
   if (HOLDER_ONLY.includes(name) && claim.holderId !== mover.userId) return false;
-  // A contested verdict is heard by somebody who did not give it.
-  return !(name === "take" && claim.state === "contested" && claim.decidedById === mover.userId);
+  return !(name === "take" && gaveTheVerdict(mover, claim));
 };
+
+/** A contested verdict is heard by somebody who did not give it, also once that claim was put back or is held by another. */
+export const gaveTheVerdict = (mover: Pick<Mover, "userId">, claim: ClaimParties): boolean =>
+  claim.decidedById === mover.userId;
 
 /** Draws the buttons and guards the services: one answer for both. */
 export const movesOpenTo = (mover: Mover, claim: ClaimParties): ClaimMove[] =>

@@ -1,6 +1,7 @@
 export type EvidenceRow = {
   id: string;
   claimId: string;
+  workshopId: string;
   rowId: string;
   kind: "photo" | "runLog" | "document";
   mediaType: string;

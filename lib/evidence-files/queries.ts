@@ -1,11 +1,12 @@
 import "server-only";
 import { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
+import { seesClaim } from "@/lib/claims/seeing";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
 import { serve } from "@/lib/storage/serve";
 import { presentEvidence, type EvidenceRow, type EvidenceView } from "./present";
 
-export const EVIDENCE = `select id, claim_id as "claimId", row_id as "rowId", kind, media_type as "mediaType",
+export const EVIDENCE = `select id, claim_id as "claimId", workshop_id as "workshopId", row_id as "rowId", kind, media_type as "mediaType",
   original_name as "originalName", size_bytes as "sizeBytes", sha256, object_key as "objectKey", view_key as "viewKey",
   view_state as "viewState", received_at as "receivedAt" from evidence_files where withdrawn_at is null`;
 
@@ -21,8 +22,12 @@ export const listEvidence = (actor: Actor, claimId: string): Promise<EvidenceVie
 /** The same by the claim's number; null where this organisation has no such claim. */
 export const listEvidenceOfClaim = (actor: Actor, number: string): Promise<EvidenceView[] | null> =>
   unitOfWork(actor, async (work) => {
-    const [claim] = await rows<{ id: string }>(work, "select id from claims where number = $1", [number]);
-    if (!claim) return null;
+    const [claim] = await rows<{ id: string; workshopId: string }>(
+      work,
+      `select id, workshop_id as "workshopId" from claims where number = $1`,
+      [number],
+    );
+    if (!claim || !seesClaim(actor, claim)) return null;
     const files = await rows<EvidenceRow>(work, `${EVIDENCE} and claim_id = $1 order by received_at, id`, [
       claim.id,
     ]);
@@ -37,7 +42,7 @@ const findEvidence = (actor: Actor, id: string): Promise<EvidenceRow | null> =>
   unitOfWork(actor, async (work) => {
     if (!isEvidenceId(id)) return null;
     const [file] = await rows<EvidenceRow>(work, `${EVIDENCE} and id = $1`, [id]);
-    return file ?? null;
+    return file && seesClaim(actor, file) ? file : null;
   });
 
 /** The original, byte for byte, to be kept and never shown by a browser; null where there is none for this reader. */

@@ -1,6 +1,7 @@
 import "server-only";
 import { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
+import { hasRight } from "@/lib/access/rights";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { FILE_KINDS, LIMITS, type FileKind } from "@/lib/kernel/limits";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
@@ -25,7 +26,7 @@ type ClaimRow = {
   workshopId: string;
   state: string;
 };
-export type EvidenceRefusal = ReceiveRefusal | "notFound" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
+export type EvidenceRefusal = ReceiveRefusal | "notFound" | "notAllowed" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
 
 /** The claim an upload is for, locked, if it is this workshop's and still takes files. */
 async function openClaim(
@@ -60,12 +61,16 @@ async function room(
   return isOver ? refuse("bytesTooMany", { mostMb: LIMITS.bytesPerClaim / 1e6 }) : ok(true);
 }
 
+const writesClaims = ({ roles }: Actor): boolean =>
+  hasRight(roles, "startClaim", { sells: false, buys: true });
+
 /** Before a byte is kept: is there such a claim, does it take files, is there room. */
 const decideFor =
   (actor: Actor) =>
   async (fields: Readonly<Record<string, string>>): Promise<Outcome<FileKind, EvidenceRefusal>> => {
     const given = target.safeParse(fields);
     if (!given.success) return refuse("notFound");
+    if (!writesClaims(actor)) return refuse("notAllowed");
     return unitOfWork(actor, async (work) => {
       const claim = await openClaim(work, given.data.claimId);
       if (!claim.ok) return claim;
@@ -157,8 +162,16 @@ export async function receiveEvidence(actor: Actor, request: Request) {
 
 /** Takes back a file that no sent revision holds. Its bytes stay until retention ends; nobody is shown them any more. */
 export const withdrawEvidence = (actor: Actor, id: string) =>
-  undoing<{ id: string }, "notFound" | "evidenceSent">(actor, async (work) => {
+  undoing<{ id: string }, "notFound" | "notAllowed" | "evidenceSent">(actor, async (work) => {
     if (!isEvidenceId(id)) return refuse("notFound");
+    if (!writesClaims(actor)) return refuse("notAllowed");
+    // Under the claim's lock, in a statement of its own: a revision that is being sent just now keeps its files.
+    await rows(
+      work,
+      `select c.id from claims c join evidence_files e on e.claim_id = c.id
+       where e.id = $1 and c.workshop_id = $2 for update of c`,
+      [id, actor.organisationId],
+    );
     const [file] = await rows<{ id: string; isSent: boolean }>(
       work,
       `select e.id, exists (select 1 from revision_evidence r where r.evidence_id = e.id) as "isSent"

@@ -47,6 +47,13 @@ type Records = Outcome<CsvRow[], "importQuoteOpen" | "importLineTooLong">;
 const breaksIn = (cells: readonly string[]): number =>
   cells.reduce((breaks, cell) => breaks + (cell.includes("\n") ? cell.split("\n").length - 1 : 0), 0);
 
+/** Whether a text runs over more lines than that, blank ones too: looked at first, for reading each of them costs. */
+function isLongerThan(text: string, mostLines: number): boolean {
+  let breaks = 0;
+  for (let at = text.indexOf("\n"); at >= 0 && breaks <= mostLines; at = text.indexOf("\n", at + 1)) breaks += 1;
+  return breaks > mostLines;
+}
+
 /** The rows with the line each began on; blank ones left out. A quoted cell may run over several lines. */
 function recordsOf(text: string, delimiter: Delimiter, most?: number): Records {
   const found: CsvRow[] = [];
@@ -104,6 +111,7 @@ export function readCsv(bytes: Uint8Array, mostLines: number): Outcome<CsvFile, 
   const source = decoded(bytes);
   if (!source.ok) return source;
   const text = source.value.text.replace(/\r\n?/gu, "\n");
+  if (isLongerThan(text, mostLines + 1)) return refuse("importTooManyLines", { most: mostLines });
   const delimiter = delimiterOf(text);
   const records = recordsOf(text, delimiter);
   if (!records.ok) return records;

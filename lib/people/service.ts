@@ -10,6 +10,8 @@ import { readAddress } from "./address";
 
 const sha256 = (text: string) => createHash("sha256").update(text).digest("hex");
 
+const accountKey = (email: string) => sha256(`account:${email}`);
+
 type Candidate = { user_id: string; password_hash: string | null; organisation_id: string; roles: string[] };
 
 /** How long a session lasts at most, and unused: a week at the bench, a working day where money is decided. */
@@ -29,7 +31,7 @@ export async function signIn(given: {
   device: string;
 }): Promise<string | null> {
   const email = readAddress(given.email);
-  const account = sha256(`account:${email ?? given.email.slice(0, 300)}`);
+  const account = accountKey(email ?? given.email.slice(0, 300));
   const [attempt] = await beforeSignIn<{ allowed: boolean }>(
     "select guarded.begin_attempt($1, $2) as allowed",
     [account, sha256(`address:${given.address}`)],
@@ -37,7 +39,9 @@ export async function signIn(given: {
   const [candidate] = email
     ? await beforeSignIn<Candidate>("select * from guarded.sign_in_candidate($1)", [email])
     : [];
-  const fits = await passwordFits(candidate?.password_hash ?? null, given.password.slice(0, 1000));
+  // Behind the limit no password is looked at: hashing costs, and a flood must not get it for nothing.
+  const fits =
+    attempt?.allowed && (await passwordFits(candidate?.password_hash ?? null, given.password.slice(0, 1000)));
   if (!attempt?.allowed || !fits || !candidate) {
     log.warn({ event: "signInRefused", account: account.slice(0, 12), throttled: !attempt?.allowed });
     return null;
@@ -91,5 +95,7 @@ export async function setPasswordByLink(token: string, password: string): Promis
     sha256(token),
     hashed,
   ]);
+  // Whoever can read the account's mail is its owner: tries of somebody else no longer keep them out.
+  if (used?.email) await beforeSignIn("select guarded.clear_attempts($1)", [accountKey(used.email)]);
   return used?.email ?? null;
 }

@@ -22,7 +22,7 @@ type Watched = { readonly body: Readable; readonly halt: () => void; readonly le
 /**
  * A request's body, piece by piece: the parser itself does not wait, so the next piece is given to it when there is
  * room. Ends a request that sends nothing for too long. Halted, nothing more is read; let go, what still comes is thrown
- * away as it comes: the framework would keep it in memory, and takes it badly when its stream is cancelled.
+ * away as it comes: to cancel the stream would cut the line before the answer has gone out.
  */
 export function watch(request: Request, room: () => Promise<void>): Watched {
   const source = request.body instanceof WebStream ? Readable.fromWeb(request.body) : Readable.from([]);

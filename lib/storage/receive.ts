@@ -176,11 +176,14 @@ function parserFor<Code extends string>(
     },
   });
   const usual = form.onPart.bind(form);
+  let isDecided = false;
   form.on("field", (name, value) => {
-    fields[name] = value;
+    // What comes behind the file comes too late: the file was taken for what the fields before it say.
+    if (!isDecided) fields[name] = value;
   });
   const begin = async (part: formidable.Part): Promise<void> => {
     if (typeof part.originalFilename === "string") {
+      isDecided = true;
       const decided = await decide(fields).catch((fault: unknown) => hooks.onFault(fault));
       if (!decided?.ok) {
         if (decided) hooks.onRefusal(decided);

@@ -1,7 +1,7 @@
 import "server-only";
 import type { NextAuthOptions } from "next-auth";
 import Credentials from "next-auth/providers/credentials";
-import { signIn } from "@/lib/people/service";
+import { endSession, signIn } from "@/lib/people/service";
 import { addressOf } from "./address";
 import { SESSION_COOKIE, SESSION_SECONDS } from "./cookie";
 import { isSecure, setting } from "./settings";
@@ -40,6 +40,12 @@ export const authOptions = (): NextAuthOptions => ({
       },
     }),
   ],
+  // Signing out by the session route ends the row as well: a copied cookie is worth nothing afterwards.
+  events: {
+    signOut: async ({ token }) => {
+      if (typeof token.sid === "string") await endSession(token.sid);
+    },
+  },
   callbacks: {
     jwt: ({ token, user, trigger }) => (trigger === "signIn" && user ? { sid: user.id } : { sid: token.sid }),
     session: ({ session }) => ({ expires: session.expires }),

@@ -88,14 +88,18 @@ const pointerTo = (place: readonly PropertyKey[]): string =>
 const placesOf = (issue: z.core.$ZodIssue): PropertyKey[][] =>
   issue.code === "unrecognized_keys" ? issue.keys.map((key) => [...issue.path, key]) : [issue.path];
 
+/** More than any form has fields: a body of nothing but faults is not answered by a larger one. */
+const MOST_PROBLEMS = 100;
+
 async function fieldProblems(error: z.ZodError, locale: Locale): Promise<FieldProblem[]> {
   const t = await words(locale);
   return error.issues
     .flatMap(placesOf)
+    .slice(0, MOST_PROBLEMS)
     .map((place) => ({ pointer: pointerTo(place), detail: t("fieldShape") }));
 }
 
-/** What still comes of a refused body is let go as it comes: the framework takes it badly when its stream is cancelled. */
+/** What still comes of a refused body is let go as it comes: to cancel it would cut the line before the answer. */
 async function throwAway(reader: ReadableStreamDefaultReader<Uint8Array>): Promise<void> {
   try {
     while (!(await reader.read()).done);
@@ -121,9 +125,14 @@ async function readText(request: Request, maxBytes: number): Promise<string | nu
   return Buffer.concat(chunks).toString("utf8");
 }
 
-/** Every text of a body, names of fields left alone: those are checked against their shape. */
-const storable = (_key: string, value: unknown): unknown =>
-  typeof value === "string" ? storableText(value) : value;
+/** Every text of a body, and every name: a map keyed by what somebody sent is kept as well. */
+const storable = (_key: string, value: unknown): unknown => {
+  if (typeof value === "string") return storableText(value);
+  if (typeof value !== "object" || value === null || Array.isArray(value)) return value;
+  const members = Object.entries(value);
+  const isKept = members.every(([name]) => storableText(name) === name);
+  return isKept ? value : Object.fromEntries(members.map(([name, one]) => [storableText(name), one]));
+};
 
 const parseJson = (text: string): unknown => {
   try {

@@ -165,6 +165,23 @@ export async function coverageOfLine(work: Work, line: LineToCover): Promise<Cov
   return { coverage: coverageOn(seen), terms: known.terms };
 }
 
+/** What the seller knows of a line without what belongs to another organisation: as if the workshop itself had asked. */
+const knownToBoth = (line: LineToCover, known: Gathered): Gathered => {
+  const others = known.others.filter(({ workshopId }) => workshopId === line.workshopId);
+  if (known.unit === null || known.unit.buyerId === line.workshopId) return { ...known, others };
+  return { unit: null, chain: [], others, terms: null, rootTerms: null };
+};
+
+/**
+ * The same as both parties may keep it, whoever asks: the cover a verdict is stored with, which the workshop reads. The
+ * terms are those the distributor found.
+ */
+export async function coverageForBoth(work: Work, line: LineToCover): Promise<CoveredLine> {
+  const known = await gather(work, line);
+  const facts = factsOf(line, knownToBoth(line, known), await zoneOf(work, line.sellerId));
+  return { coverage: coverageOn(asSeenByWorkshop(facts)), terms: known.terms };
+}
+
 const NO_CLAIM = "00000000-0000-0000-0000-000000000000";
 
 type UnitToPreview = {

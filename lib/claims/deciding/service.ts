@@ -6,7 +6,7 @@ import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { mailClaimPeople } from "@/lib/mail/outbox";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
-import { coverageOfLine, type CoveredLine } from "../cover/queries";
+import { coverageForBoth, type CoveredLine } from "../cover/queries";
 import { claimFacts, type ClaimFacts } from "../facts-shape";
 import { nameOf } from "../judging/queries";
 import { todayOf } from "../judging/service";
@@ -61,7 +61,7 @@ async function coverLine(
 ): Promise<CoveredLine> {
   const line = facts.lines.find((one) => one.lineNumber === lineNumber);
   if (!line) throw new Error(`claim ${claim.number} has no line ${lineNumber} in its facts`);
-  return coverageOfLine(work, {
+  return coverageForBoth(work, {
     claimId: claim.id,
     sellerId: claim.sellerId,
     workshopId: claim.workshopId,

@@ -9,6 +9,7 @@ import { evidenceListOn } from "@/lib/rule-book/queries";
 import { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
 import { type ClaimDraft, type DraftLine } from "../draft";
+import { seesClaim } from "../seeing";
 import { storedDraft } from "../draft-shape";
 import type { ClaimFacts } from "../facts-shape";
 import { readDraft, type DraftContext, type DraftProblem, type FoundLine } from "./read-draft";
@@ -153,7 +154,7 @@ export const checkDraft = (actor: Actor, number: string): Promise<CheckedDraft |
     const { transaction } = work;
     const claim = await Claim.findOne({ where: { number, workshopId: actor.organisationId }, transaction });
     const kept = claim && (await DraftRow.findOne({ where: { claimId: claim.id }, transaction }));
-    if (!claim || !kept) return null;
+    if (!claim || !kept || !seesClaim(actor, claim)) return null;
     const draft = storedDraft(kept.body);
     const context = await draftContext(work, claim, { draft, now: new Date() });
     return { claim, draft, savedAt: kept.savedAt, context, ...readDraft(draft, context) };

@@ -107,10 +107,12 @@ function readLine(
   if (!found) return problems.add(at("serial"), "partMissing");
   const fittedOn = readPastDay(line.fittedOn, at("fittedOn"), reading);
   const replacedOn = readPastDay(line.replacementFittedOn, at("replacementFittedOn"), reading);
-  if (!QUANTITY.test(line.quantity.trim())) problems.add(at("quantity"), "quantityUnread");
+  // A serial names one piece; the page asks how many only where there is none, and nobody else may answer it.
+  const isOnePiece = found.unit !== null || line.serial.trim() !== "";
+  if (!isOnePiece && !QUANTITY.test(line.quantity.trim())) problems.add(at("quantity"), "quantityUnread");
   if (fittedOn && failedOn && isBefore(failedOn, fittedOn))
     problems.add({ step: "fault", field: "failedOn" }, "failedBeforeFitting");
-  const quantity = Number(line.quantity) || 1;
+  const quantity = isOnePiece ? 1 : Number(line.quantity) || 1;
   return {
     lineNumber: index + 1,
     part: found.part,

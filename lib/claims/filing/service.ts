@@ -1,5 +1,6 @@
 import "server-only";
 import { randomInt } from "node:crypto";
+import { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
 import { hasRight } from "@/lib/access/rights";
 import { rows, type Work } from "@/lib/db/unit-of-work";
@@ -29,7 +30,8 @@ type Start = {
 };
 
 async function startFromUnit(work: Work, unitId: string): Promise<Start | null> {
-  const unit = await findSoldUnit(work, unitId);
+  // A form may send any text as an id; what is none is answered like a unit of somebody else.
+  const unit = z.uuid().safeParse(unitId).success ? await findSoldUnit(work, unitId) : null;
   if (!unit) return null;
   const line = {
     ...emptyLine(),

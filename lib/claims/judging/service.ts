@@ -4,9 +4,10 @@ import { rows, type Work } from "@/lib/db/unit-of-work";
 import { addDays, dayInZone, type CalendarDay } from "@/lib/kernel/calendar-day";
 import { ok, refuse } from "@/lib/kernel/outcome";
 import { mailClaimPeople } from "@/lib/mail/outbox";
-import { findRule } from "@/lib/rule-book/queries";
+import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
+import { gaveTheVerdict } from "../lifecycle";
 import { claimForChange, moveClaim, undoing } from "../moves/service";
 import { printClaimNumber } from "../number";
 import { claimPath } from "../paths";
@@ -31,6 +32,7 @@ export const putBackClaim = (actor: Actor, { number, reason }: { number: string;
     ok({
       changes: { holderId: null, heldUntil: null, parkedWithId: null, parkedQuestion: null },
       detail: { reason },
+      isOwnOnly: true,
     }),
   );
 
@@ -54,17 +56,20 @@ const whileJudging = <Code extends string>(
 
 /** Takes over a claim a colleague holds: a deliberate step, and it is written down. */
 export const takeOverClaim = (actor: Actor, { number }: { number: string }) =>
-  whileJudging<never>(actor, number, async (claim, { transaction }) => {
+  whileJudging<"moveNotOpen">(actor, number, async (claim, { transaction }) => {
+    if (gaveTheVerdict(actor, claim)) return "moveNotOpen" as const;
     await claim.update({ holderId: actor.userId, heldUntil: holdFromNow() }, { transaction });
     return { kind: "takenOver", detail: {} };
   });
 
 /** Leaves a claim with a question to a colleague. It stays being judged; the clock of the distributor runs on. */
 export const parkClaim = (actor: Actor, input: { number: string; colleagueId: string; question: string }) =>
-  whileJudging<"notFound">(actor, input.number, async (claim, work) => {
+  whileJudging<"notFound" | "moveNotOpen">(actor, input.number, async (claim, work) => {
+    if (claim.holderId !== actor.userId) return "moveNotOpen" as const;
     const [colleague] = await rows<{ name: string }>(
       work,
       `select u.name from users u join membership_roles r on r.user_id = u.id and r.organisation_id = $2 and r.role = 'assessor'
+         join memberships m on m.user_id = u.id and m.organisation_id = $2 and m.disabled_at is null
        where u.id = $1`,
       [input.colleagueId, actor.organisationId],
     );
@@ -88,10 +93,27 @@ const nextRound = async (work: Work, claimId: string): Promise<number> => {
   return Number(last?.round ?? 1);
 };
 
+/** Of the rows asked for, those of the claim's Evidence list: a row without a name would keep the mail from being written. */
+async function rowsOnList(work: Work, claim: Claim, rowIds: readonly string[]): Promise<string[]> {
+  const [sent] = await rows<{ filedOn: CalendarDay | null }>(
+    work,
+    `select facts ->> 'filedOn' as "filedOn" from claim_revisions where claim_id = $1 and revision = $2`,
+    [claim.id, claim.revision],
+  );
+  const list = await evidenceListOn(work, {
+    sellerId: claim.sellerId,
+    family: claim.family ?? "",
+    symptom: claim.symptom ?? "",
+    on: sent?.filedOn ?? todayOf(work.actor),
+  });
+  return rowIds.filter((asked) => list.rows.some(({ id }) => id === asked));
+}
+
 /** Asks the workshop once for all that is missing. Its clock starts, the distributor's stops, a mail goes out. */
 export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
   moveClaim<never>(actor, { number, move: "ask" }, async (claim, work) => {
     const round = await nextRound(work, claim.id);
+    const wanted = await rowsOnList(work, claim, rowIds);
     const terms = await findRule(work, "terms", {
       sellerId: claim.sellerId,
       family: claim.family,
@@ -102,7 +124,7 @@ export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
       work,
       `insert into claim_queries (claim_id, seller_id, workshop_id, round, items, question, asked_by_id)
        values ($1, $2, $3, $4, $5, $6, $7)`,
-      [claim.id, claim.sellerId, claim.workshopId, round, JSON.stringify(rowIds), question, actor.userId],
+      [claim.id, claim.sellerId, claim.workshopId, round, JSON.stringify(wanted), question, actor.userId],
     );
     await mailClaimPeople(
       work,
@@ -116,13 +138,13 @@ export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
           distributor: await nameOf(work, claim.sellerId),
           question,
           family: claim.family ?? "",
-          rowIds: [...rowIds],
+          rowIds: wanted,
           answerBy: lapsesOn,
         },
       },
     );
     return ok({
       changes: { clockStoppedAt: new Date(), queryLapsesOn: lapsesOn },
-      detail: { round, question, rowIds, answerBy: lapsesOn },
+      detail: { round, question, rowIds: wanted, answerBy: lapsesOn },
     });
   });

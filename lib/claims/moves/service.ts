@@ -14,6 +14,8 @@ export const claimForChange = ({ transaction }: Work, number: string): Promise<C
 export type Decision = {
   readonly changes?: Partial<Claim["dataValues"]>;
   readonly detail?: Readonly<Record<string, unknown>>;
+  /** Whether only the mover's organisation reads what is noted of it; the new state itself both sides see. */
+  readonly isOwnOnly?: boolean;
 };
 
 type Decided<Code extends string> = Outcome<Decision, Code> | Promise<Outcome<Decision, Code>>;
@@ -66,7 +68,12 @@ export function moveClaim<Code extends string>(
       { ...decision.value.changes, state: MOVES[move].to },
       { transaction: work.transaction },
     );
-    await appendToTimeline(work, claim, { kind: move, detail: decision.value.detail });
+    const { detail, isOwnOnly } = decision.value;
+    await appendToTimeline(work, claim, {
+      kind: move,
+      ...(detail ? { detail } : {}),
+      ...(isOwnOnly ? { onlyForId: actor.organisationId } : {}),
+    });
     return ok({ number });
   });
 }

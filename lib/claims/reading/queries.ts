@@ -7,6 +7,7 @@ import { familyOf } from "@/lib/parts/families";
 import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
 import { coverageOfLine } from "../cover/queries";
 import type { ClaimFacts } from "../facts-shape";
+import { seesClaim } from "../seeing";
 import { judgeReading, type LimitsInForce } from "../sheet/judge-reading";
 import { factsOf, presentFile, presentSheet, type WorkedOut } from "../sheet/present";
 import { sheetRows, type SheetRows } from "../sheet/queries";
@@ -121,5 +122,6 @@ async function workOut(work: Work, sheet: SheetRows): Promise<WorkedOut> {
 export const findClaimSheet = (actor: Actor, number: string): Promise<SheetView | null> =>
   unitOfWork(actor, async (work) => {
     const sheet = await sheetRows(work, number);
-    return sheet && presentSheet(actor, sheet, await workOut(work, sheet));
+    if (!sheet || !seesClaim(actor, sheet.claim)) return null;
+    return presentSheet(actor, sheet, await workOut(work, sheet));
   });

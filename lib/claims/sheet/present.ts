@@ -5,10 +5,11 @@ import { isCurrency, type Currency } from "@/lib/kernel/currency";
 import { money, type Money } from "@/lib/kernel/money";
 import type { Limits } from "@/lib/rule-book/limits-shape";
 import { claimFacts, type ClaimFacts, type FactLine } from "../facts-shape";
-import { movesOpenTo } from "../lifecycle";
+import { gaveTheVerdict, movesOpenTo } from "../lifecycle";
 import { printClaimNumber } from "../number";
 import type {
   SheetClaim,
+  SheetEntry,
   SheetEvidence,
   SheetLine,
   SheetRows,
@@ -132,6 +133,7 @@ const presentHolder = (claim: SheetClaim, actor: Actor, isSeller: boolean) => ({
     isSeller &&
     claim.state === "beingJudged" &&
     claim.holderId !== actor.userId &&
+    !gaveTheVerdict(actor, claim) &&
     actor.roles.has("assessor"),
   parked:
     isSeller && claim.parkedWithName && claim.parkedQuestion
@@ -143,7 +145,14 @@ const presentHolder = (claim: SheetClaim, actor: Actor, isSeller: boolean) => ({
       : null,
 });
 
-const presentRecord = (sheet: SheetRows) => ({
+/** An entry in the name of the organisation alone. */
+const withoutPerson = (entry: Omit<SheetEntry, "onlyForId" | "at">) => ({
+  ...entry,
+  actorName: entry.actorOrganisation ?? "",
+  actorOrganisation: null,
+});
+
+const presentRecord = (sheet: SheetRows, isSeller: boolean) => ({
   queries: sheet.queries.map((query) => ({
     round: query.round,
     rowIds: Array.isArray(query.items) ? query.items.map(String) : [],
@@ -158,7 +167,7 @@ const presentRecord = (sheet: SheetRows) => ({
     at: at.toISOString(),
   })),
   timeline: sheet.timeline.map(({ onlyForId, at, ...entry }) => ({
-    ...entry,
+    ...(entry.kind === "take" && !isSeller ? withoutPerson(entry) : entry),
     isOwnOnly: onlyForId !== null,
     at: at.toISOString(),
   })),
@@ -213,7 +222,7 @@ export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOu
     otherFiles: files.filter((file) => !rowIds.has(file.rowId)),
     limits: workedOut.limits,
     caseLine: workedOut.caseLine,
-    ...presentRecord(sheet),
+    ...presentRecord(sheet, isSeller),
     verdicts: sheet.verdicts.map(presentVerdict),
     flags: sheet.flags.map(({ kind, lineNumber, detail }) => ({ kind, lineNumber, detail })),
   };

@@ -1,6 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
+import { seesClaim } from "../seeing";
 import type { MessageView } from "../sheet/view";
 
 type Row = Omit<MessageView, "isOwnOnly" | "at"> & { audience: "both" | "own"; at: Date };
@@ -8,8 +9,12 @@ type Row = Omit<MessageView, "isOwnOnly" | "at"> & { audience: "both" | "own"; a
 /** What was said on a claim, as far as the asking organisation may read it; null where it has no such claim. */
 export const listMessages = (actor: Actor, number: string): Promise<MessageView[] | null> =>
   unitOfWork(actor, async (work) => {
-    const [claim] = await rows<{ id: string }>(work, "select id from claims where number = $1", [number]);
-    if (!claim) return null;
+    const [claim] = await rows<{ id: string; workshopId: string }>(
+      work,
+      `select id, workshop_id as "workshopId" from claims where number = $1`,
+      [number],
+    );
+    if (!claim || !seesClaim(actor, claim)) return null;
     const said = await rows<Row>(
       work,
       `select m.id, m.author_name as "authorName", o.name as "authorOrganisation", m.audience, m.body, m.at

@@ -3,6 +3,7 @@ import type { Actor } from "@/lib/access/actor";
 import { rows } from "@/lib/db/unit-of-work";
 import { ok, refuse } from "@/lib/kernel/outcome";
 import { Claim } from "@/models/claim";
+import { seesClaim } from "../seeing";
 import { undoing } from "../moves/service";
 
 type Said = { number: string; body: string; audience: "both" | "own" };
@@ -11,7 +12,8 @@ type Said = { number: string; body: string; audience: "both" | "own" };
 export const sayOnClaim = (actor: Actor, { number, body, audience }: Said) =>
   undoing(actor, async (work) => {
     const claim = await Claim.findOne({ where: { number }, transaction: work.transaction });
-    if (!claim || claim.state === "draft" || claim.state === "discarded") return refuse("notFound" as const);
+    if (!claim || !seesClaim(actor, claim)) return refuse("notFound" as const);
+    if (claim.state === "draft" || claim.state === "discarded") return refuse("notFound" as const);
     await rows(
       work,
       `insert into claim_messages (claim_id, seller_id, workshop_id, author_id, author_name, author_organisation_id, audience, body)

@@ -3,6 +3,7 @@ import { beforeAll, describe, expect, it } from "vitest";
 import { printClaimNumber } from "@/lib/claims/number";
 import { apiRoutes, ask, FROM_OUR_PAGES, type ApiRoute, type Method } from "../../support/http";
 import { buildClaim, buildFile, buildPerson, FILED } from "../../support/build";
+import { adminQuery } from "../../support/database";
 import { startSession } from "../signed-in";
 import { twoShops } from "../shops";
 
@@ -131,5 +132,58 @@ describe("a stranger who asks for a thing by its number or id", () => {
     expect(await answer.text()).not.toContain(printClaimNumber(claim.number));
     const own = await ask("GET", "/api/v1/claims?side=own&view=all", { session: owner });
     expect(await own.text()).toContain(printClaimNumber(claim.number));
+  });
+});
+
+describe("with a session", () => {
+  it("no answer of any route may be kept by a cache", async () => {
+    const reads = everyMethod().filter(([method]) => method === "GET");
+    for (const [method, route] of reads) {
+      const answer = await send(method, route, filled(route, claim.number, file.id), owner);
+      expect(answer.headers.get("cache-control"), route.address).toMatch(/no-store/u);
+      if (!(route.address in OPEN_TO_ALL)) {
+        expect(answer.headers.get("cache-control"), route.address).toBe("private, no-store");
+        expect(answer.headers.get("x-request-id"), route.address).toBe("sweep-of-every-route");
+      }
+      await answer.body?.cancel();
+    }
+  });
+
+  it.each<[string, string]>([
+    ["the person was disabled", "update users set disabled_at = now() where id = $1"],
+    ["the membership was ended", "update memberships set disabled_at = now() where user_id = $1"],
+    ["they signed out everywhere", "update users set session_version = session_version + 1 where id = $1"],
+    [
+      "the session ran out",
+      "update sessions set expires_at = now() - interval '1 second' where user_id = $1",
+    ],
+    ["the session was deleted", "delete from sessions where user_id = $1"],
+  ])("the next request is refused once %s, whatever the cookie says", async (_said, sql) => {
+    const { workshop } = world.shops[0];
+    const person = await buildPerson(workshop, ["technician"]);
+    const session = await startSession(person, workshop);
+    const reads = [
+      `/api/v1/claims/${claim.number}/evidence`,
+      `/api/v1/evidence/${file.id}`,
+      "/api/v1/claims",
+    ];
+    expect((await ask("GET", reads[0] ?? "", { session })).status).toBe(200);
+    await adminQuery(sql, [person.id]);
+    for (const read of reads) expect((await ask("GET", read, { session })).status, read).toBe(401);
+    const body = JSON.stringify({ body: "still here", audience: "both" });
+    const said = await ask("POST", `/api/v1/claims/${claim.number}/messages`, { session, body });
+    expect(said.status).toBe(401);
+  });
+
+  it("who lost the role may no longer do what it allowed, at once", async () => {
+    const { workshop } = world.shops[0];
+    const person = await buildPerson(workshop, ["technician"]);
+    const session = await startSession(person, workshop);
+    const draft = await buildClaim(world.shops[0]);
+    const save = () =>
+      ask("PUT", `/api/v1/claims/${draft.number}/draft`, { session, body: JSON.stringify({ note: "mine" }) });
+    expect((await save()).status).toBe(200);
+    await adminQuery("delete from membership_roles where user_id = $1", [person.id]);
+    expect([401, 403]).toContain((await save()).status);
   });
 });

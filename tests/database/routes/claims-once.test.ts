@@ -76,6 +76,19 @@ describe("POST /claims", () => {
     expect(await claimsOf()).toBe(before + 200);
     expect(Object.keys(statuses).filter((status) => status !== "200" && status !== "409")).toEqual([]);
     process.stdout.write(`idempotency: 200 keys x 5, 200 effects, answers ${JSON.stringify(statuses)}\n`);
+  }, 120_000);
+
+  it("that names nothing to start from, or half of it, is refused like a thing that is not there", async () => {
+    const before = await claimsOf();
+    const { account } = world.shops[0];
+    for (const sent of [{}, { serial: "BR-1" }, { accountId: account.id }, { partId: world.part.id }]) {
+      const answer = await askJson("POST", "/api/v1/claims", sent, {
+        session,
+        headers: { "idempotency-key": randomUUID() },
+      });
+      expect([answer.status, (await problemOf(answer))["code"]]).toEqual([404, "notFound"]);
+    }
+    expect(await claimsOf()).toBe(before);
   });
 
   it("a key of another organisation is apart", async () => {

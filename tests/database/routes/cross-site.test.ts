@@ -71,7 +71,7 @@ describe("a write with the cookie of somebody signed in", () => {
   });
 
   it("from a page of ours is never refused for where it came from", async () => {
-    const ours = [
+    const ours: readonly Record<string, string>[] = [
       { origin: here().origin },
       { origin: here().origin, "sec-fetch-site": "same-origin" },
       { "sec-fetch-site": "same-origin" },

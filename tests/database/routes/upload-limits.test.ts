@@ -1,13 +1,13 @@
-import { beforeAll, beforeEach, describe, expect, it } from "vitest";
+import { beforeAll, beforeEach, describe, expect, it, vi } from "vitest";
 import { LIMITS } from "@/lib/kernel/limits";
 import { ask, problemOf } from "../../support/http";
-import { buildClaim, buildFile } from "../../support/build";
+import { buildClaim, buildFile, FILED } from "../../support/build";
 import { adminQuery } from "../../support/database";
 import { startSession } from "../signed-in";
 import { twoShops, type Shop } from "../shops";
 import * as made from "../storage/material";
 import { keysIn, openUploads, useOwnBucket } from "../storage/own-bucket";
-import { form, post, type Taken } from "./multipart";
+import { bodyOf, form, post, type Taken } from "./multipart";
 
 let shop: Shop;
 let session: string;
@@ -59,6 +59,39 @@ describe("a file over its limit", () => {
     process.stdout.write(`${kind} of 120 MB: refused after ${takenBytes} bytes, limit ${limit}\n`);
   });
 
+  it("is let go of as it comes, never cancelled: that would cut the line before the answer", async () => {
+    const sent = form(fields("photo"), { name: "label.jpg", content: [] }, false);
+    const head = await made.jpegPhoto();
+    const said = { pieces: 0, isCancelled: false, isRead: false };
+    const piece = new Uint8Array(1_000_000);
+    // Pushes whatever comes in, whether or not somebody reads, and sees whether it is told to stop.
+    const pushing = new ReadableStream<Uint8Array<ArrayBuffer>>({
+      async start(controller) {
+        for await (const one of sent.pieces) controller.enqueue(one);
+        controller.enqueue(new Uint8Array(head));
+        for (; said.pieces < 60; said.pieces += 1) {
+          controller.enqueue(piece);
+          await new Promise((resolve) => setTimeout(resolve, 5));
+        }
+        controller.close();
+        await vi.waitFor(() => expect(controller.desiredSize).toBe(0));
+        said.isRead = true;
+      },
+      cancel() {
+        said.isCancelled = true;
+      },
+    });
+    const headers = {
+      origin: new URL(process.env["PUBLIC_URL"] ?? "").origin,
+      "content-type": sent.contentType,
+    };
+    const answer = await ask("POST", "/api/v1/evidence", { session, headers, body: pushing });
+    expect(answer.status).toBe(413);
+    expect(said.pieces).toBeLessThan(60);
+    await vi.waitFor(() => expect(said).toEqual({ pieces: 60, isCancelled: false, isRead: true }), 5000);
+    await expectNothingLeft();
+  });
+
   it("by one byte is refused, and of exactly that size is taken", async () => {
     const head = await made.jpegPhoto();
     const over = await send("photo", "label.jpg", endless(head, LIMITS.photoBytes + 1));
@@ -74,7 +107,6 @@ describe("a file over its limit", () => {
         name: "label.jpg",
         content: endless(await made.jpegPhoto(), 20e6),
       });
-      const { bodyOf } = await import("./multipart");
       const answer = await ask("POST", "/api/v1/evidence", {
         session,
         headers: {
@@ -125,7 +157,6 @@ describe("a claim that is full", () => {
   });
 
   it("that is out of the workshop's hands takes nothing", async () => {
-    const { FILED } = await import("../../support/build");
     claim = await buildClaim(shop, { ...FILED, state: "filed" });
     expect(await said(await send("photo", "late.jpg", await made.jpegPhoto()))).toEqual([409, "moveNotOpen"]);
     await expectNothingLeft();

@@ -16,7 +16,14 @@ import { claimDigits } from "@/lib/claims/number";
 import { claimPath, draftStepPath } from "@/lib/claims/paths";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
 import { requireSession } from "@/lib/web/session";
-import { contestAction, parkAction, putBackAction, takeAction, takeOverAction, withdrawAction } from "./actions";
+import {
+  contestAction,
+  parkAction,
+  putBackAction,
+  takeAction,
+  takeOverAction,
+  withdrawAction,
+} from "./actions";
 
 type Props = { params: Promise<{ number: string }>; searchParams: Promise<{ sent?: string }> };
 
@@ -62,9 +69,9 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
             <LineCard key={line.lineNumber} line={line} {...shared} />
           ))}
           <EvidenceCard {...shared} />
-          <ConditionCard {...shared} />
         </div>
         <div className="grid min-w-0 gap-6">
+          <ConditionCard {...shared} />
           <Talk
             number={sheet.number}
             initial={sheet.messages}

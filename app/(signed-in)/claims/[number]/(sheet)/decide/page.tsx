@@ -5,7 +5,10 @@ import { DecideForm } from "@/components/judging/decide-form";
 import { CaseLineView } from "@/components/sheet/case-line";
 import { CoverageSteps } from "@/components/sheet/coverage-steps";
 import { Card } from "@/components/ui/card";
+import { TextLink } from "@/components/ui/link-button";
 import { PageHeader } from "@/components/ui/page-header";
+import { Serial } from "@/components/ui/serial";
+import { claimPath } from "@/lib/claims/paths";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
 import { claimDigits } from "@/lib/claims/number";
 import { requireSession } from "@/lib/web/session";
@@ -28,34 +31,35 @@ export default async function DecidePage({ params }: { params: Promise<{ number:
   return (
     <>
       <PageHeader
-        eyebrow={`${sheet.number} · ${sheet.workshopName}`}
+        eyebrow={
+          <>
+            <TextLink href={claimPath({ number: sheet.number })}>
+              <span className="font-mono">{sheet.number}</span>
+            </TextLink>{" "}
+            · {sheet.workshopName}
+          </>
+        }
         title={t("title")}
         note={t("revision", { revision: sheet.revision })}
       />
       <CaseLineView sheet={sheet} locale={actor.locale} timeZone={actor.timeZone} />
-      <div className="grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
-        <DecideForm
-          action={decideAction}
-          number={sheet.number}
-          revision={sheet.revision}
-          lines={sheet.lines.map((line) => ({
-            lineId: line.lineId,
-            lineNumber: line.lineNumber,
-            name: line.partName,
-            serial: line.serial,
-            suggestion: line.coverage?.answer === "covered" ? "upheld" : null,
-          }))}
-        />
-        <div className="grid gap-6">
-          {sheet.lines.map((line) =>
-            line.coverage ? (
-              <Card key={line.lineNumber} title={line.partName} note={t("cover")}>
-                <CoverageSteps coverage={line.coverage} locale={actor.locale} />
-              </Card>
-            ) : null,
-          )}
-        </div>
-      </div>
+      <DecideForm
+        action={decideAction}
+        number={sheet.number}
+        revision={sheet.revision}
+        lines={sheet.lines.map((line) => ({
+          lineId: line.lineId,
+          lineNumber: line.lineNumber,
+          name: line.partName,
+          serial: line.serial,
+          suggestion: line.coverage?.answer === "covered" ? "upheld" : null,
+          cover: line.coverage ? (
+            <Card title={t("cover")} note={line.serial ? <Serial value={line.serial} /> : line.partName}>
+              <CoverageSteps coverage={line.coverage} locale={actor.locale} />
+            </Card>
+          ) : null,
+        }))}
+      />
     </>
   );
 }

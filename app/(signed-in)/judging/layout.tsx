@@ -1,9 +1,0 @@
-import { notFound } from "next/navigation";
-import type { ReactNode } from "react";
-import { may, requireSession } from "@/lib/web/session";
-
-/** Asked above the loading page: once that has been sent, an answer of 404 comes too late. */
-export default async function JudgingLayout({ children }: { children: ReactNode }) {
-  if (!may(await requireSession(), "seeReceivedClaims")) notFound();
-  return children;
-}
