@@ -104,6 +104,11 @@ const sendBadLines = async (page) => {
 /** More people, and states of a page that somebody has to bring about; for pictures only. */
 export const MORE_SCREENS = [
   {
+    role: "technician-acting",
+    email: "lou.tanner@saltmarsh.example",
+    screens: { sent: claim("own", "onThem", { rest: "?sent=1" }) },
+  },
+  {
     role: "manager",
     email: "maren.holt@saltmarsh.example",
     screens: {

@@ -75,7 +75,7 @@ function Row({ row, isAsked, ...props }: RowProps) {
       )}
     >
       <div className="flex items-baseline justify-between gap-3">
-        <h3 className="min-w-0 text-18">{words(`${row.id}.name`)}</h3>
+        <h3 className="min-w-0 text-18 wrap-break-word hyphens-auto">{words(`${row.id}.name`)}</h3>
         <span className="shrink-0">
           <EvidenceMark state={stateOf(row, draft, files)} />
         </span>

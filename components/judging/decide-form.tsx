@@ -40,6 +40,7 @@ const textIn = (typed: Typed | undefined, name: string): string | undefined => {
 const isOutcome = (text: string | undefined): text is VerdictOutcome =>
   VERDICT_OUTCOMES.some((outcome) => outcome === text);
 
+const QUESTIONS = ["outcome", "shares", "reasonCode", "reason", "letter"] as const;
 const BESIDE = "grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]";
 
 /** The verdict of each line, whose doing it was in exact shares, the reason, and the letter the workshop reads. */
@@ -48,7 +49,11 @@ export function DecideForm({ action, number, revision, lines }: DecideFormProps)
   const [state, send] = useActionState(action, null);
   const refused = state && !state.ok ? state : null;
   const fields = refused?.fields ?? {};
-  const problems = Object.entries(fields).map(([fieldId, text]) => ({ fieldId, text }));
+  // Several lines may lack the same thing: each problem says which question it belongs to.
+  const problems = Object.entries(fields).map(([fieldId, text]) => {
+    const question = QUESTIONS.find((name) => fieldId === name || fieldId.endsWith(`.${name}`));
+    return { fieldId, text: question ? `${t(question)}: ${text}` : text };
+  });
   return (
     <form action={send} noValidate className="grid gap-6">
       <input type="hidden" name="number" value={number} />
@@ -141,7 +146,9 @@ function LineVerdict({ line, place, typed, fields }: LineProps) {
             ))}
           </div>
           {fields[name("shares")] ? (
-            <p id={`${name("shares")}-error`} className="font-semibold text-refused">{fields[name("shares")]}</p>
+            <p id={`${name("shares")}-error`} className="font-semibold text-refused">
+              {fields[name("shares")]}
+            </p>
           ) : null}
         </fieldset>
         <Select

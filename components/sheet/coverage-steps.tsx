@@ -38,7 +38,7 @@ export function CoverageSteps({ coverage, locale }: { coverage: Coverage; locale
           </li>
         ))}
       </ul>
-      <details>
+      <details className="print-open">
         <summary className="min-h-target cursor-pointer py-2 text-petrol underline underline-offset-4">
           {sheet("how")}
         </summary>

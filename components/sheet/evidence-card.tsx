@@ -1,3 +1,4 @@
+import clsx from "clsx";
 import { useTranslations } from "next-intl";
 import { Card } from "@/components/ui/card";
 import { EmptyState } from "@/components/ui/empty-state";
@@ -59,7 +60,7 @@ function EvidenceRow({ row, limits, locale }: { row: EvidenceRowView } & Against
   const log = row.files.find((file) => file.kind === "runLog");
   return (
     <li className="grid gap-x-6 gap-y-2 border-b border-rule py-4 last:border-b-0 lg:grid-cols-[minmax(14rem,1fr)_2fr] print:break-inside-avoid">
-      <RowName row={row} />
+      <RowName row={row} isBeside />
       {/* A drawing needs the whole width; everything else stands beside its name. */}
       <div className={log ? "grid min-w-0 gap-2 lg:col-span-2" : "grid min-w-0 content-start gap-2"}>
         <Said row={row} locale={locale} />
@@ -69,14 +70,19 @@ function EvidenceRow({ row, limits, locale }: { row: EvidenceRowView } & Against
   );
 }
 
-/** The name on the left edge, its state on the right: both can be run down with the eye. */
-function RowName({ row }: { row: EvidenceRowView }) {
+/** The name on the left edge, its state on the right, or under it where the answer stands beside: both can be run down with the eye. */
+function RowName({ row, isBeside = false }: { row: EvidenceRowView; isBeside?: boolean }) {
   const t = useTranslations("sheet.evidence");
   const words = useTranslations("evidence.rows");
   return (
-    <div className="flex items-baseline justify-between gap-3 self-start">
+    <div
+      className={clsx(
+        "flex items-baseline justify-between gap-x-3 gap-y-1 self-start",
+        isBeside && "lg:flex-col lg:justify-start",
+      )}
+    >
       <div className="min-w-0">
-        <h3 className="text-16">{words(`${row.id}.name`)}</h3>
+        <h3 className="text-16 wrap-break-word hyphens-auto">{words(`${row.id}.name`)}</h3>
         {row.need === "useful" ? <p className="text-small text-ink-2">{t("useful")}</p> : null}
       </div>
       <span className="shrink-0">
@@ -150,7 +156,9 @@ function ReadingLine({ reading, locale }: { reading: ReadingView; locale: Locale
               source: reading.limit.source,
             })
           : t("noLimit")}
-        {reading.rawText.trim() === String(reading.value) ? null : ` ${t("typed", { raw: reading.rawText })}`}
+        {reading.rawText.trim().replace(",", ".") === String(reading.value)
+          ? null
+          : ` ${t("typed", { raw: reading.rawText })}`}
         {reading.instrument ? ` ${t("instrument", { instrument: reading.instrument })}` : null}
       </p>
     </div>

@@ -81,7 +81,7 @@ export function Th({ isNumeric = false, sort, children, ...props }: ThProps) {
       {sort ? (
         <Link
           href={sort.href}
-          className="inline-flex items-center gap-1 align-bottom underline-offset-3 hover:underline"
+          className="inline-flex min-h-target items-end gap-1 align-bottom underline-offset-3 hover:underline"
         >
           {children}
           {sort.direction ? <Glyph name={sort.direction} className="size-4" /> : null}

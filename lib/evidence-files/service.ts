@@ -26,7 +26,8 @@ type ClaimRow = {
   workshopId: string;
   state: string;
 };
-export type EvidenceRefusal = ReceiveRefusal | "notFound" | "notAllowed" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
+export type EvidenceRefusal =
+  ReceiveRefusal | "notFound" | "notAllowed" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
 
 /** The claim an upload is for, locked, if it is this workshop's and still takes files. */
 async function openClaim(

@@ -1,8 +1,8 @@
 import AxeBuilder from "@axe-core/playwright";
 import type { Page } from "@playwright/test";
-import { SCREENS } from "../../docker-free-scripts/screens.mjs";
 import { axe, expect, test } from "./fixtures";
 import { openAs } from "./people";
+import { PEOPLE } from "./screens";
 
 const SIZES = [
   { width: 390, height: 844 },
@@ -10,10 +10,6 @@ const SIZES = [
 ];
 // A trace would cost more than the looking.
 test.use({ trace: "off" });
-
-type Place = string | ((page: Page) => Promise<string | undefined>);
-
-const pathOf = (page: Page, place: Place) => (typeof place === "string" ? place : place(page));
 
 /** How far the page reaches past the window to the right. */
 const overhang = (page: Page) =>
@@ -47,15 +43,15 @@ test.describe("every page, on a phone and at the desk, light and dark", () => {
   // The page that is not there is told by the browser's own line about it.
   test.use({ expectedConsole: [/status of 404/] });
 
-  for (const { role, email, screens } of SCREENS)
+  for (const { role, email, screens } of PEOPLE)
     test(`of the ${role}`, async ({ browser, watch }) => {
       test.setTimeout(180_000);
       const context = await openAs(browser, email, { colorScheme: "light", reducedMotion: "reduce" });
       await watch(context);
       const page = await context.newPage();
-      for (const [name, place] of Object.entries<Place>(screens))
+      for (const { name, pathFor } of screens)
         await test.step(name, async () => {
-          const path = await pathOf(page, place);
+          const path = await pathFor(page);
           expect(path, `the demo has a claim for ${name}`).toBeTruthy();
           await checkScreen(page, path ?? "", name === "not-found" ? 404 : 200);
         });

@@ -1,7 +1,7 @@
 import type { Page } from "@playwright/test";
-import { SCREENS } from "../../docker-free-scripts/screens.mjs";
 import { expect, test } from "./fixtures";
 import { ADA, LOU, openAs } from "./people";
+import { screensOf } from "./screens";
 import { focusedId, smallTargets, tabThrough } from "./reach";
 
 const heldClaim = async (page: Page): Promise<string> => {
@@ -135,7 +135,6 @@ test.describe("with the keyboard alone", () => {
 });
 
 test.describe("everything that is pressed is large enough", () => {
-  const places = (person: string) => SCREENS.find(({ role }) => role === person)?.screens ?? {};
   for (const { role, email, size, viewport } of [
     { role: "technician", email: LOU, size: 44, viewport: { width: 390, height: 844 } },
     { role: "assessor", email: ADA, size: 24, viewport: { width: 1440, height: 900 } },
@@ -145,11 +144,12 @@ test.describe("everything that is pressed is large enough", () => {
       const context = await openAs(browser, email, { viewport, hasTouch: size === 44 });
       await watch(context);
       const page = await context.newPage();
-      for (const [name, place] of Object.entries<string | ((page: Page) => Promise<string>)>(places(role))) {
-        const path = typeof place === "string" ? place : await place(page);
-        await page.goto(path);
-        expect(await smallTargets(page, size), `on ${name}`).toEqual([]);
+      const small = [];
+      for (const { name, pathFor } of screensOf(role)) {
+        await page.goto((await pathFor(page)) ?? "/");
+        small.push(...(await smallTargets(page, size)).map((target) => `${name}: ${target}`));
       }
+      expect(small).toEqual([]);
       await context.close();
     });
 });

@@ -1,23 +1,21 @@
 import type { Browser, Page } from "@playwright/test";
-import { SCREENS } from "../../docker-free-scripts/screens.mjs";
 import { expect, test } from "./fixtures";
 import { openAs } from "./people";
+import { PEOPLE, screensOf } from "./screens";
 import { englishPieces, german } from "./sentences";
 
-type Place = string | ((page: Page) => Promise<string | undefined>);
+// A trace would cost more than the looking.
+test.use({ trace: "off" });
 
 const JONAS = "jonas.ehrler@quayhead.example";
 const GRETA = "greta.lindau@fenwright.example";
 const PHONE_WIDE = { width: 390, height: 844 };
 
-const screensOf = (person: string) =>
-  Object.entries<Place>(SCREENS.find(({ role }) => role === person)?.screens ?? {});
-
 /** Walks the screens of a role that have something to show for this person; says how many there were. */
 async function walk(page: Page, role: string, look: (name: string) => Promise<void>) {
   let walked = 0;
-  for (const [name, place] of screensOf(role)) {
-    const path = typeof place === "string" ? place : await place(page);
+  for (const { name, pathFor } of screensOf(role)) {
+    const path = await pathFor(page);
     if (!path) continue;
     await test.step(name, async () => {
       const answer = await page.goto(path);
@@ -62,7 +60,10 @@ test.describe("German", () => {
     const page = await bench.newPage();
     await page.goto("/workshop-today");
     await expect(heading(page, german("lists", "workshopTitle"))).toBeVisible();
-    await page.getByRole("link", { name: german("navigation", "startClaim"), exact: true }).first().click();
+    await page
+      .getByRole("link", { name: german("navigation", "startClaim"), exact: true })
+      .first()
+      .click();
     await page.waitForURL(/\/claims\/new$/);
     await expect(heading(page, german("start", "title"))).toBeVisible();
     await expect(page.getByRole("button", { name: german("start", "lookUp") })).toBeVisible();
@@ -116,7 +117,7 @@ async function openLong(browser: Browser, email: string, home: string) {
 }
 
 test.describe("a wordier language, on a phone", () => {
-  for (const { role, email } of SCREENS.filter((person) => ["technician", "assessor"].includes(person.role)))
+  for (const { role, email } of PEOPLE.filter((person) => ["technician", "assessor"].includes(person.role)))
     test(`cuts nothing off and pushes nothing out for the ${role}`, async ({ browser, watch, baseURL }) => {
       const context = await openLong(browser, email ?? "", baseURL ?? "");
       await watch(context);

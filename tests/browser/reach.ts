@@ -5,7 +5,8 @@ const REACHABLE =
   'a[href], button:not([disabled]), input:not([type="hidden"]):not([disabled]), select, textarea, summary';
 
 /** The id of the element that has the focus. */
-export const focusedId = (page: Page): Promise<string> => page.evaluate(() => document.activeElement?.id ?? "");
+export const focusedId = (page: Page): Promise<string> =>
+  page.evaluate(() => document.activeElement?.id ?? "");
 
 /** Numbers all that should be reached, and names each for a sentence in a failure. */
 const markReachable = (page: Page) =>
@@ -65,8 +66,9 @@ export const smallTargets = (page: Page, least: number): Promise<string[]> =>
         const pressed = ticked ? (element.labels?.[0] ?? element) : element;
         const isInText = getComputedStyle(pressed).display === "inline";
         const { width, height } = pressed.getBoundingClientRect();
-        // What is kept for readers of the screen alone measures one pixel until it has the focus.
-        if (isInText || width <= 1 || (width >= size - 0.5 && height >= size - 0.5)) return [];
+        // What waits in a box of one pixel until it has the focus is never pressed: the skip link, heads of a list.
+        const isTuckedAway = width <= 1 || (pressed.closest("thead")?.clientWidth ?? width) <= 1;
+        if (isInText || isTuckedAway || (width >= size - 0.5 && height >= size - 0.5)) return [];
         const words = (element.textContent.trim() || element.getAttribute("name")) ?? "";
         return [`${element.tagName} ${words.slice(0, 40)}: ${Math.round(width)} × ${Math.round(height)}`];
       }),

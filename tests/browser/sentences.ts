@@ -27,7 +27,9 @@ export function german(namespace: string, ...way: readonly string[]): string {
 
 /** The pieces of a message that stand as they are, whatever is put into it. */
 const fixedPieces = (message: string): string[] =>
-  /\{\w+, (plural|select)/.test(message) ? [] : message.split(/\{[^{}]*\}|<[^<>]*>/).map((piece) => piece.trim());
+  /\{\w+, (plural|select)/.test(message)
+    ? []
+    : message.split(/\{[^{}]*\}|<[^<>]*>/).map((piece) => piece.trim());
 
 /** Whatever of ours is English and cannot be German: three words or more that no German sentence holds. */
 export function englishPieces(): string[] {

@@ -1,8 +1,8 @@
 import { randomInt } from "node:crypto";
 import type { BrowserContext, Page } from "@playwright/test";
-import { SCREENS } from "../../docker-free-scripts/screens.mjs";
 import { expect, signInAs, test } from "./fixtures";
 import { ADA, COLIN, IDRIS, LOU, openAnew, openAs } from "./people";
+import { PEOPLE } from "./screens";
 import { askPlainly, variantsOf } from "./plain-request";
 
 // Nobody else's tests use these two: what they have open is ended here, and one of them is shut out for a while.
@@ -11,8 +11,6 @@ const ROSA = "rosa.finchley@larkmoor.example";
 
 // Pages that are not there, and answers of 401, are told by the browser's own line about them.
 test.use({ expectedConsole: [/status of 40[14]/], trace: "off" });
-
-type Place = string | ((page: Page) => Promise<string | undefined>);
 
 const password = () => process.env.DEMO_PASSWORD ?? "";
 const cookieHeader = async (context: BrowserContext) =>
@@ -34,13 +32,13 @@ const NOTHING = { page: 307, names: [false, false], api: 401 };
 
 test.describe("what a signed-in page answers", () => {
   test("is private and kept nowhere, on every page of every role", async ({ browser }) => {
-    for (const { email, screens } of SCREENS.filter((person) => person.email !== null)) {
+    for (const { email, screens } of PEOPLE.filter((person) => person.email !== null)) {
       const context = await openAs(browser, email);
       const page = await context.newPage();
-      for (const place of Object.values<Place>(screens)) {
-        const path = typeof place === "string" ? place : await place(page);
+      for (const { pathFor } of screens) {
+        const path = await pathFor(page);
         if (!path) continue;
-        for (const headers of [{}, { rsc: "1" }]) {
+        for (const headers of [undefined, { rsc: "1" }]) {
           const answer = await context.request.get(path, { headers });
           const kept = answer.headers()["cache-control"];
           expect(answer.status(), path).toBe(200);
@@ -150,23 +148,23 @@ test.describe("a session", () => {
     const office = await openAs(browser, COLIN);
     await watch(office);
     const page = await office.newPage();
-    const judging = async () => (await person.request.get("/judging", { maxRedirects: 0 })).status();
-    const tick = (isAssessor: boolean) =>
+    const catalogue = async () => (await person.request.get("/catalogue", { maxRedirects: 0 })).status();
+    const tick = (isKeeper: boolean) =>
       change(page, NADIA.name, async () => {
-        await page.getByRole("checkbox", { name: "Assessor" }).setChecked(isAssessor);
+        await page.getByRole("checkbox", { name: "Administrator" }).setChecked(isKeeper);
         await page.getByRole("button", { name: "Keep the roles" }).click();
       });
-    expect(await judging()).toBe(404);
+    expect(await catalogue()).toBe(404);
     await tick(true);
     try {
       // What was open has ended; signed in anew, the new role is there.
-      expect(await judging()).toBe(307);
+      expect(await catalogue()).toBe(307);
       await signInAs(await person.newPage(), NADIA.email);
-      expect(await judging()).toBe(200);
+      expect(await catalogue()).toBe(200);
     } finally {
       await tick(false);
     }
-    expect(await judging()).toBe(307);
+    expect(await catalogue()).toBe(307);
     await person.close();
     await office.close();
   });
@@ -215,7 +213,10 @@ test.describe("no spelling of an address and no header", () => {
     const answers = [];
     for (const one of [number, "9999-9999"]) {
       const { status, body } = await askPlainly(home, `/claims/${one}`, { cookie });
-      answers.push({ status, body: body.replaceAll(one, "NUMBER").replace(/nonce(=|\\?":\\?)"?[\w+/=]+/g, "NONCE") });
+      answers.push({
+        status,
+        body: body.replaceAll(one, "NUMBER").replace(/nonce(=|\\?":\\?)"?[\w+/=]+/g, "NONCE"),
+      });
     }
     expect(answers[0]?.status).toBe(404);
     expect(answers[0]?.body.length).toBe(answers[1]?.body.length);

@@ -66,13 +66,15 @@ describe("what the workshop reads of its claim", () => {
     const unit = await world.sell(shop);
     const claim = await taken({ unitId: unit.id, serial: unit.serial });
     const reason = "The manager knows these people.";
-    expect(
-      await putBackClaim(judge(world.assessor), { number: claim.number, reason }),
-    ).toMatchObject({ ok: true });
+    expect(await putBackClaim(judge(world.assessor), { number: claim.number, reason })).toMatchObject({
+      ok: true,
+    });
     const seen = JSON.stringify((await findClaimSheet(workerOf(shop), claim.number))?.timeline);
     expect(seen).not.toContain(reason);
     expect(seen).not.toContain(world.assessor.name);
-    expect(JSON.stringify((await findClaimSheet(judge(colleague), claim.number))?.timeline)).toContain(reason);
+    expect(JSON.stringify((await findClaimSheet(judge(colleague), claim.number))?.timeline)).toContain(
+      reason,
+    );
   });
 });
 

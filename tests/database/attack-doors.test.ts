@@ -117,20 +117,16 @@ describe("a file of a claim", () => {
       sha256: "0".repeat(64),
       sent_by_id: person.id,
     });
-    const withdrawn = await inTransaction(
-      "web",
-      { actor: person.id, org: workshop.id },
-      async (run) => {
-        await run("select id from claims where id = $1 for update", [claim.id]);
-        const waiting = withdrawEvidence(actorAt(workshop, person, ["technician"]), file.id);
-        await new Promise((resolve) => setTimeout(resolve, 300));
-        await run(
-          "insert into revision_evidence (revision_id, evidence_id, seller_id, workshop_id) values ($1, $2, $3, $4)",
-          [revision["id"], file.id, ...parties.slice(1)],
-        );
-        return { waiting };
-      },
-    );
+    const withdrawn = await inTransaction("web", { actor: person.id, org: workshop.id }, async (run) => {
+      await run("select id from claims where id = $1 for update", [claim.id]);
+      const waiting = withdrawEvidence(actorAt(workshop, person, ["technician"]), file.id);
+      await new Promise((resolve) => setTimeout(resolve, 300));
+      await run(
+        "insert into revision_evidence (revision_id, evidence_id, seller_id, workshop_id) values ($1, $2, $3, $4)",
+        [revision["id"], file.id, ...parties.slice(1)],
+      );
+      return { waiting };
+    });
     expect(await withdrawn.waiting).toMatchObject({ ok: false, code: "evidenceSent" });
     const kept = await adminQuery("select withdrawn_at from evidence_files where id = $1", [file.id]);
     expect(kept).toEqual([{ withdrawn_at: null }]);

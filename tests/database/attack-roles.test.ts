@@ -56,7 +56,9 @@ describe("in a distributor that also buys", () => {
     expect(await openOriginal(technician, file.id, null)).toBeNull();
     expect(await listReceivedClaims(technician, all)).toMatchObject({ items: [], total: 0, counts: {} });
     const said = { number, body: "Let me see.", audience: "own" } as const;
-    expect(await sayOnClaim(technician, said)).toEqual(await sayOnClaim(technician, { ...said, number: "00000000" }));
+    expect(await sayOnClaim(technician, said)).toEqual(
+      await sayOnClaim(technician, { ...said, number: "00000000" }),
+    );
     expect(await findClaimSheet(inHouse(["goodsIn"]), number)).toMatchObject({ side: "distributor" });
     expect((await listReceivedClaims(inHouse(["analyst"]), all)).total).toBe(1);
   });

@@ -53,7 +53,9 @@ describe("fields behind the file", () => {
     ];
     const answer = await sendParts(shop, [...fieldsFor(id, "runLog"), ["file", log()], ...behind]);
     expect(answer.status).toBe(200);
-    const rows = await adminQuery("select kind, row_id, media_type from evidence_files where claim_id = $1", [id]);
+    const rows = await adminQuery("select kind, row_id, media_type from evidence_files where claim_id = $1", [
+      id,
+    ]);
     expect(rows).toEqual([{ kind: "runLog", row_id: "runLog", media_type: "text/csv" }]);
   });
 

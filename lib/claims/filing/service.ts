@@ -92,7 +92,7 @@ async function startFromPart(work: Work, { accountId, partId, serial }: PartByHa
 const startFrom = (work: Work, from: DraftStart): Promise<Start | null> => {
   if (from.unitId) return startFromUnit(work, from.unitId);
   if (from.invoiceLineId) return startFromLine(work, from.invoiceLineId);
-  return startFromPart(work, from);
+  return from.accountId && from.partId ? startFromPart(work, from) : Promise.resolve(null);
 };
 
 /** Inserts the claim under a number nobody has yet; a clash is drawn again inside the same transaction. */
