@@ -19,7 +19,7 @@ const quantile = (values: readonly number[], at: number): number =>
   ascending(values)[Math.min(values.length - 1, Math.floor(at * values.length))] ?? Number.NaN;
 
 /** The middle of some values. */
-export const medianOf = (values: readonly number[]): number => quantile(values, 0.5);
+const medianOf = (values: readonly number[]): number => quantile(values, 0.5);
 
 async function timed(work: Work): Promise<number> {
   const startedMs = performance.now();

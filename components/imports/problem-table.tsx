@@ -35,7 +35,7 @@ export function ProblemTable({ problems, locale }: ProblemTableProps) {
       <TableBody>
         {problems.map((problem) => (
           <Row key={`${problem.line} ${problem.heading} ${problem.code}`}>
-            <RowHead>{formatNumber(problem.line, locale)}</RowHead>
+            <RowHead label={t("line")}>{formatNumber(problem.line, locale)}</RowHead>
             <Td label={t("column")}>{problem.heading ?? t("wholeLine")}</Td>
             <Td label={t("given")}>
               {problem.given ? (

@@ -9,13 +9,15 @@ import { formatDay, formatMoney } from "@/lib/kernel/format";
 import { CoverageSteps } from "./coverage-steps";
 import type { SheetProps } from "./shared";
 
+type LineCardProps = SheetProps & { line: LineView; isInCharge: boolean };
+
 /** One line of the claim: the unit, its days and its price, and whether it is covered, step by step. */
-export function LineCard({ line, sheet, locale }: SheetProps & { line: LineView }) {
+export function LineCard({ line, sheet, locale, isInCharge }: LineCardProps) {
   const t = useTranslations("sheet.line");
   const day = (text: string | null) => (text ? formatDay(calendarDay(text), locale) : t("notGiven"));
   return (
     <Card
-      isInCharge={line.lineNumber === 1 && sheet.verdicts.length === 0}
+      isInCharge={isInCharge}
       title={line.partName}
       note={line.partNumber}
       actions={line.verdict ? <ClaimMark state={line.verdict} /> : undefined}

@@ -8,7 +8,11 @@ export function SentNote({ sheet, locale, timeZone }: SheetProps) {
   const t = useTranslations("sheet.sent");
   return (
     <Card isInCharge title={t("title")}>
-      <p className="my-2 font-mono text-40" translate="no">
+      {/* Set like the plate it is copied onto. */}
+      <p
+        className="mb-4 w-fit rounded-sheet border-2 border-ink bg-well px-4 py-2 font-mono text-40 font-semibold"
+        translate="no"
+      >
         {sheet.number}
       </p>
       <p className="text-18 font-semibold">{t("write")}</p>

@@ -59,12 +59,25 @@ export function SheetHead({ sheet, locale, timeZone }: SheetProps) {
           <p className="whitespace-pre-wrap">{asked.question}</p>
         </Banner>
       ) : null}
+      {sheet.state === "contested" ? <Contested sheet={sheet} /> : null}
       {sheet.parked ? (
         <Banner kind="info" title={t("parkedTitle", { name: sheet.parked.withName })}>
           {sheet.parked.question}
         </Banner>
       ) : null}
     </div>
+  );
+}
+
+/** Why the verdict is contested, in the words of the workshop: it is what is to be judged now. */
+function Contested({ sheet }: Pick<SheetProps, "sheet">) {
+  const kinds = useTranslations("sheet.record.kinds");
+  const reason = sheet.timeline.findLast(({ kind }) => kind === "contest")?.detail.reason;
+  if (typeof reason !== "string") return null;
+  return (
+    <Banner kind="wanting" title={kinds("contest")}>
+      <p className="whitespace-pre-wrap">{reason}</p>
+    </Banner>
   );
 }
 

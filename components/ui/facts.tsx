@@ -3,7 +3,11 @@ import type { ReactNode } from "react";
 /** Facts side by side: what it is called, what it is. Children are Fact. */
 export function Facts({ children, columns = 1 }: { children: ReactNode; columns?: 1 | 2 }) {
   return (
-    <dl className={columns === 2 ? "facts-short group/facts grid gap-x-8 lg:grid-cols-2 print:grid-cols-2" : "grid"}>
+    <dl
+      className={
+        columns === 2 ? "facts-short group/facts grid gap-x-8 lg:grid-cols-2 print:grid-cols-2" : "grid"
+      }
+    >
       {children}
     </dl>
   );

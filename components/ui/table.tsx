@@ -106,7 +106,10 @@ export const Td = ({ label, isNumeric = false, children, ...props }: TdProps) =>
   </td>
 );
 
-/** The cell that names its row. */
-export const RowHead = (props: Omit<ComponentProps<"th">, "className">) => (
-  <th role="rowheader" scope="row" {...props} />
+/** The cell that names its row. `label` for one that says nothing without its column's head: a line number. */
+export const RowHead = ({
+  label,
+  ...props
+}: Omit<ComponentProps<"th">, "className"> & { label?: string }) => (
+  <th role="rowheader" scope="row" data-label={label} {...props} />
 );

@@ -51,8 +51,7 @@ const MOST_NAMES = 100;
 const joined = <Value>(
   kept: Readonly<Record<string, Value>>,
   sent: Readonly<Record<string, Value>> = {},
-): Record<string, Value> =>
-  Object.fromEntries(Object.entries({ ...kept, ...sent }).slice(0, MOST_NAMES));
+): Record<string, Value> => Object.fromEntries(Object.entries({ ...kept, ...sent }).slice(0, MOST_NAMES));
 
 /** The draft with a change applied. Pure: the same change twice is the same draft. */
 export function changedDraft(draft: ClaimDraft, change: DraftChange): ClaimDraft {

@@ -50,7 +50,8 @@ const breaksIn = (cells: readonly string[]): number =>
 /** Whether a text runs over more lines than that, blank ones too: looked at first, for reading each of them costs. */
 function isLongerThan(text: string, mostLines: number): boolean {
   let breaks = 0;
-  for (let at = text.indexOf("\n"); at >= 0 && breaks <= mostLines; at = text.indexOf("\n", at + 1)) breaks += 1;
+  for (let at = text.indexOf("\n"); at >= 0 && breaks <= mostLines; at = text.indexOf("\n", at + 1))
+    breaks += 1;
   return breaks > mostLines;
 }
 

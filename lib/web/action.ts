@@ -31,6 +31,15 @@ type After<T> = {
   readonly shapeFields?: (typed: Readonly<Record<string, string | readonly string[]>>) => unknown;
 };
 
+/** What every line about an action says: who, for whom, how long; the id is the one in the outbox and the audit. */
+const lineOf = ({ requestId, userId, organisationId }: Actor, startedAt: number) => ({
+  event: "action",
+  requestId,
+  userId,
+  organisationId,
+  durationMs: Math.round(performance.now() - startedAt),
+});
+
 /** Every server action is one call of this: origin, session, shape, the domain's verb, the wording. */
 export function action<Shape extends z.ZodType, T>(
   shape: Shape,
@@ -51,8 +60,14 @@ export function action<Shape extends z.ZodType, T>(
       const t: Sentences = await getTranslations({ locale: actor.locale, namespace: "forms" });
       return { ok: false, fields: fieldSentences(input.error, t), typed };
     }
+    const startedAt = performance.now();
     try {
       const outcome = await verb(actor, input.data);
+      log.info({
+        ...lineOf(actor, startedAt),
+        verb: verb.name,
+        refused: outcome.ok ? undefined : outcome.code,
+      });
       if (!outcome.ok) {
         const message = await wordingFor(outcome, actor.locale);
         return outcome.field
@@ -63,8 +78,8 @@ export function action<Shape extends z.ZodType, T>(
       return outcome;
     } catch (fault) {
       log.error({
+        ...lineOf(actor, startedAt),
         event: "fault",
-        requestId: actor.requestId,
         fault: fault instanceof Error ? fault.stack : String(fault),
       });
       return { ok: false, message: problems("fault", { id: actor.requestId }), fields: {}, typed };

@@ -166,3 +166,55 @@ describe("a draft", () => {
     expect(await add(foreign.id)).toMatchObject({ ok: false, code: "notFound" });
   });
 });
+
+describe("the same step sent twenty times at once", () => {
+  const TIMES = 20;
+  const oks = (answers: readonly { ok: boolean }[]) => answers.filter(({ ok }) => ok).length;
+
+  it("files a claim once: one revision, one line, one mail each", async () => {
+    const [shop] = world.shops;
+    const unit = await world.sell(shop);
+    const claim = await draftReady(shop, { unitId: unit.id, serial: unit.serial });
+    const sent = Array.from({ length: TIMES }, () => fileClaim(workerOf(shop), claim));
+    expect(oks(await Promise.all(sent))).toBe(1);
+    const [kept] = await adminQuery(
+      `select (select count(*)::int from claim_revisions where claim_id = $1) as revisions,
+         (select count(*)::int from claim_lines where claim_id = $1) as lines,
+         (select count(*)::int from timeline_entries where claim_id = $1) as entries,
+         (select count(*)::int from outbox where dedupe_key like 'claimFiled:' || $1 || '%') as mails`,
+      [claim.id],
+    );
+    expect(kept).toEqual({ revisions: 1, lines: 1, entries: 1, mails: 1 });
+  });
+
+  it("gives one verdict, and none on a revision that is not the newest", async () => {
+    const [shop] = world.shops;
+    const unit = await world.sell(shop);
+    const claim = await taken({ unitId: unit.id, serial: unit.serial });
+    const [line] = await adminQuery<{ id: string }>("select id from claim_lines where claim_id = $1", [
+      claim.id,
+    ]);
+    const verdict = (revision: number, person = world.assessor) =>
+      decideClaim(judge(person), {
+        number: claim.number,
+        revision,
+        lines: [
+          {
+            lineId: line?.id ?? "",
+            outcome: "declined",
+            shares: { maker: "", carrier: "", fitter: "1", user: "", wear: "" },
+            reasonCode: "fittingFault",
+            reason: "The hub nut was not tightened.",
+          },
+        ],
+        letter: "We cannot credit this claim.",
+        returnWaivedReason: "Nothing to examine.",
+      });
+    expect(await verdict(0)).toMatchObject({ code: "staleVersion" });
+    expect(await verdict(2)).toMatchObject({ code: "staleVersion" });
+    expect(await verdict(1, colleague)).toMatchObject({ code: "moveNotOpen" });
+    expect(oks(await Promise.all(Array.from({ length: TIMES }, () => verdict(1))))).toBe(1);
+    const verdicts = await adminQuery("select 1 from verdicts where claim_id = $1", [claim.id]);
+    expect(verdicts).toHaveLength(1);
+  });
+});

@@ -85,7 +85,6 @@ const HOSTILE = [
   "+",
   "Z ",
   "T1 ",
-  "\n",
   ",",
   "; ",
 ].map((piece) => [piece, repeated(piece)] as const);

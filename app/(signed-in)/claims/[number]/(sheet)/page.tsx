@@ -49,10 +49,11 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
     withdraw: withdrawAction,
     contest: contestAction,
   };
+  const isJustSent = Boolean(sent) && sheet.side === "workshop";
   const shared = { sheet, locale: actor.locale, timeZone: actor.timeZone };
   return (
     <>
-      {sent && sheet.side === "workshop" ? <SentNote {...shared} /> : null}
+      {isJustSent ? <SentNote {...shared} /> : null}
       <SheetHead {...shared} />
       <SheetActions
         sheet={sheet}
@@ -66,7 +67,12 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
         <div className="grid min-w-0 gap-6">
           {sheet.verdicts[0] ? <VerdictCard {...shared} verdict={sheet.verdicts[0]} /> : null}
           {sheet.lines.map((line) => (
-            <LineCard key={line.lineNumber} line={line} {...shared} />
+            <LineCard
+              key={line.lineNumber}
+              line={line}
+              isInCharge={line.lineNumber === 1 && sheet.verdicts.length === 0 && !isJustSent}
+              {...shared}
+            />
           ))}
           <EvidenceCard {...shared} />
         </div>
