@@ -82,6 +82,7 @@ export function environmentFor({ secrets, ports, folder, database = "partproof" 
     NEXTAUTH_URL: publicUrl,
     NEXTAUTH_SECRET: secrets.session,
     NEXT_SERVER_ACTIONS_ENCRYPTION_KEY: secrets.actions,
+    AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true",
     STORE_ENDPOINT: `http://127.0.0.1:${ports.store}`,
     STORE_PORT: String(ports.store),
     STORE_FOLDER: join(folder, "store"),

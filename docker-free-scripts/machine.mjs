@@ -56,7 +56,7 @@ export function needModules() {
     .digest("hex");
   const mark = join(root, "node_modules", ".partproof-lock");
   if (existsSync(mark) && readFileSync(mark, "utf8") === hash) return "unchanged";
-  execFileSync("npm", ["ci", "--no-audit", "--no-fund"], {
+  execFileSync("npm", ["ci", "--no-audit", "--no-fund", "--no-update-notifier", "--loglevel=error"], {
     cwd: root,
     stdio: ["ignore", "ignore", "inherit"],
   });

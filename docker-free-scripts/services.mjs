@@ -17,6 +17,8 @@ export async function startFakes(processes, environment) {
 }
 
 async function makeBucket(environment) {
+  // The pinned SDK runs on Node 20; that a later one will not is known, and no news at every start.
+  process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED = "true";
   const { CreateBucketCommand, S3Client } = await import("@aws-sdk/client-s3");
   const client = new S3Client({
     endpoint: environment.STORE_ENDPOINT,

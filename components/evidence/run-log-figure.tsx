@@ -109,7 +109,10 @@ function Findings({ run }: Pick<ReadLogProps, "run">) {
 function Download({ fileId }: { fileId: string }) {
   const t = useTranslations("evidence.runLog");
   return (
-    <a href={`/api/v1/evidence/${fileId}`} className="text-petrol underline underline-offset-4">
+    <a
+      href={`/api/v1/evidence/${fileId}`}
+      className="min-h-target content-center text-petrol underline underline-offset-4"
+    >
       {t("download")}
     </a>
   );

@@ -40,7 +40,7 @@ const textIn = (typed: Typed | undefined, name: string): string | undefined => {
 const isOutcome = (text: string | undefined): text is VerdictOutcome =>
   VERDICT_OUTCOMES.some((outcome) => outcome === text);
 
-const QUESTIONS = ["outcome", "shares", "reasonCode", "reason", "letter"] as const;
+const QUESTIONS = ["outcome", "shares", "reasonCode", "reason", "letter", "returnWaived"] as const;
 const BESIDE = "grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]";
 
 /** The verdict of each line, whose doing it was in exact shares, the reason, and the letter the workshop reads. */
@@ -51,7 +51,8 @@ export function DecideForm({ action, number, revision, lines }: DecideFormProps)
   const fields = refused?.fields ?? {};
   // Several lines may lack the same thing: each problem says which question it belongs to.
   const problems = Object.entries(fields).map(([fieldId, text]) => {
-    const question = QUESTIONS.find((name) => fieldId === name || fieldId.endsWith(`.${name}`));
+    const last = fieldId.split(".").at(-1) ?? "";
+    const question = QUESTIONS.find((name) => last === name || last === `${name}Reason`);
     return { fieldId, text: question ? `${t(question)}: ${text}` : text };
   });
   return (
@@ -105,8 +106,10 @@ function LineVerdict({ line, place, typed, fields }: LineProps) {
   const t = useTranslations("live.decide");
   const name = (field: string) => `lines.${place}.${field}`;
   const sent = textIn(typed, name("outcome"));
-  const [outcome, setOutcome] = useState<VerdictOutcome | null>(isOutcome(sent) ? sent : line.suggestion);
-  const reasons = outcome ? REASONS[outcome] : Object.values(REASONS).flat();
+  // Only a press in the browser narrows the reasons: without script every outcome needs its own within reach.
+  const [pressed, setPressed] = useState<VerdictOutcome | null>(null);
+  const outcome = pressed ?? (isOutcome(sent) ? sent : line.suggestion);
+  const reasons = pressed ? REASONS[pressed] : Object.values(REASONS).flat();
   return (
     <Card
       isInCharge={place === 0}
@@ -119,11 +122,14 @@ function LineVerdict({ line, place, typed, fields }: LineProps) {
           name={name("outcome")}
           label={t("outcome")}
           chosen={outcome ?? undefined}
-          onChange={(value) => setOutcome(isOutcome(value) ? value : null)}
+          onChange={(value) => setPressed(isOutcome(value) ? value : null)}
           choices={VERDICT_OUTCOMES.map((value) => ({ value, label: t(`outcomes.${value}`) }))}
           error={fields[name("outcome")]}
         />
-        <fieldset className="grid gap-2" aria-describedby={`${name("shares")}-hint ${name("shares")}-error`}>
+        <fieldset
+          className="grid gap-2"
+          aria-describedby={`${name("shares")}-hint${fields[name("shares")] ? ` ${name("shares")}-error` : ""}`}
+        >
           <legend className="mb-1 font-semibold">{t("shares")}</legend>
           <p id={`${name("shares")}-hint`} className="max-w-measure text-small text-ink-2">
             {t("sharesHint")}

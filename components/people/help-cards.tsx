@@ -76,7 +76,7 @@ export async function AskCard({
               <span className="font-semibold">{name}</span>
               <a
                 href={`mailto:${email}`}
-                className="text-petrol underline decoration-edge underline-offset-4 hover:text-petrol-deep hover:decoration-current"
+                className="min-h-target content-center text-petrol underline decoration-edge underline-offset-4 hover:text-petrol-deep hover:decoration-current"
               >
                 {email}
               </a>

@@ -102,7 +102,7 @@ function Said({ row, locale }: { row: EvidenceRowView; locale: Locale }) {
       ) : null}
       {row.reading ? <ReadingLine reading={row.reading} locale={locale} /> : null}
       {isSaidElsewhere(row) ? (
-        <a href="#seen" className="text-petrol underline underline-offset-4">
+        <a href="#seen" className="min-h-target content-center text-petrol underline underline-offset-4">
           {t("saidElsewhere")}
         </a>
       ) : null}

@@ -194,7 +194,7 @@ describe("the same step sent twenty times at once", () => {
     const [line] = await adminQuery<{ id: string }>("select id from claim_lines where claim_id = $1", [
       claim.id,
     ]);
-    const verdict = (revision: number, person = world.assessor) =>
+    const verdict = (revision: number, person: { id: string; name: string } = world.assessor) =>
       decideClaim(judge(person), {
         number: claim.number,
         revision,

@@ -13,7 +13,8 @@ import { normaliseSerial } from "@/lib/labels/serial";
 import { readAddress } from "@/lib/people/address";
 import { chosenLocale } from "@/lib/web/chosen-locale";
 
-const MOST_MS = 1000;
+// A pattern that goes back over its text takes minutes for this length; one that does not, milliseconds on an idle machine.
+const MOST_MS = 5000;
 const LENGTH = 100_000;
 const today = calendarDay("2026-05-04");
 const ohm = { code: "coil", dimension: "resistance", unit: "Ω", temperature: "copperTo20" } as const;
@@ -90,7 +91,7 @@ const HOSTILE = [
 ].map((piece) => [piece, repeated(piece)] as const);
 
 describe("a text of 100 kB made to hurt", () => {
-  it.each(Object.entries(READERS))("is read or refused as %s within a second", (_name, read) => {
+  it.each(Object.entries(READERS))("is read or refused as %s without going back over it", (_name, read) => {
     const slow: unknown[] = [];
     for (const [piece, text] of HOSTILE)
       for (const whole of [text, `a${text}b`, `1${text}1`]) {

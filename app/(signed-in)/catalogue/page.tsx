@@ -50,7 +50,7 @@ export default async function CataloguePage({ searchParams }: Props) {
           {t(`notes.${query.note}`)}
         </Banner>
       ) : null}
-      <form action="/catalogue" role="search" className="flex flex-wrap items-end gap-2">
+      <form action="/catalogue" role="search" className="flex items-end gap-2 max-sm:[&>div]:grow">
         <TextField name="q" label={t("search")} type="search" defaultValue={q} maxLength={80} />
         <Button type="submit" kind="secondary">
           {t("find")}
