@@ -60,7 +60,7 @@ function EvidenceRow({ row, limits, locale }: { row: EvidenceRowView } & Against
   const log = row.files.find((file) => file.kind === "runLog");
   return (
     <li className="grid gap-x-6 gap-y-2 border-b border-rule py-4 last:border-b-0 lg:grid-cols-[minmax(14rem,1fr)_2fr] print:break-inside-avoid">
-      <RowName row={row} isBeside />
+      <RowName row={row} isBeside={!log} />
       {/* A drawing needs the whole width; everything else stands beside its name. */}
       <div className={log ? "grid min-w-0 gap-2 lg:col-span-2" : "grid min-w-0 content-start gap-2"}>
         <Said row={row} locale={locale} />
