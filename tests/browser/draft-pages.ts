@@ -43,11 +43,7 @@ export async function fillFault(page: Page, failedOn: string) {
 }
 
 /** A photo or a log into its row, and the row says when it is safe. */
-async function upload(
-  page: Page,
-  rowId: string,
-  file: { name: string; mimeType: string; buffer: Buffer },
-) {
+async function upload(page: Page, rowId: string, file: { name: string; mimeType: string; buffer: Buffer }) {
   const row = page.locator(`[id="rows.${rowId}"]`);
   await row.locator('input[type="file"]:not([capture])').setInputFiles(file);
   await expect(row.getByText("Safe with us")).toBeVisible({ timeout: 30_000 });
