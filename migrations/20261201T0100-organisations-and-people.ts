@@ -100,9 +100,14 @@ const people = `
   create table memberships (
     user_id uuid not null references users,
     organisation_id uuid not null references organisations,
+    -- Until the person accepts, the organisation knows of them what it wrote into the invitation, and no more.
+    invited_name text check (length(invited_name) between 1 and 120),
+    invited_email text,
+    accepted_at timestamptz,
     disabled_at timestamptz,
     created_at timestamptz not null default now(),
-    primary key (organisation_id, user_id)
+    primary key (organisation_id, user_id),
+    check (accepted_at is not null or (invited_name is not null and invited_email is not null))
   );
   create index memberships_by_user on memberships (user_id);
   create table membership_roles (
@@ -125,7 +130,7 @@ const people = `
     expires_at timestamptz not null,
     ended_at timestamptz
   );
-  create index sessions_by_user on sessions (user_id) where ended_at is null;
+  create index sessions_by_user on sessions (user_id, organisation_id, last_seen_at);
   create table login_attempts (
     id bigint generated always as identity primary key,
     key_hash text not null,
@@ -136,10 +141,13 @@ const people = `
     id uuid primary key default gen_random_uuid(),
     user_id uuid not null references users,
     purpose text not null check (purpose in ('invitation', 'reset')),
+    organisation_id uuid,
     token_hash text not null unique check (length(token_hash) = 64),
     expires_at timestamptz not null,
     used_at timestamptz,
-    created_at timestamptz not null default now()
+    created_at timestamptz not null default now(),
+    foreign key (organisation_id, user_id) references memberships (organisation_id, user_id),
+    check ((purpose = 'invitation') = (organisation_id is not null))
   );
 `;
 
@@ -147,7 +155,7 @@ const peopleSecurity = `
   ${secure("users")}
   ${policies("users", "web", {
     select: `id = (select ctx_actor()) or exists (select 1 from memberships m
-      where m.user_id = users.id and m.organisation_id = (select ctx_org()))`,
+      where m.user_id = users.id and m.organisation_id = (select ctx_org()) and m.accepted_at is not null)`,
     update: "id = (select ctx_actor())",
   })}
   revoke update on users from web;
@@ -155,7 +163,9 @@ const peopleSecurity = `
   revoke select on users from web;
   grant select (id, email, name, locale, theme, density, disabled_at, created_at, session_version) on users to web;
   ${ownRows("memberships")}
-  revoke delete on memberships from web;
+  -- Nobody is a member by a statement of the web: guarded functions invite and accept.
+  revoke insert, update, delete on memberships from web;
+  grant update (disabled_at) on memberships to web;
   ${ownRows("membership_roles")}
   ${secure("sessions")}
   ${policies("sessions", "web", { select: "user_id = (select ctx_actor())" })}

@@ -180,11 +180,11 @@ const claimMail = `
         from users u
         where u.disabled_at is null and (
           (p_to = 'workshop' and exists (select 1 from memberships m where m.user_id = u.id
-            and m.organisation_id = claim.workshop_id and m.disabled_at is null)
+            and m.organisation_id = claim.workshop_id and m.disabled_at is null and m.accepted_at is not null)
             and (u.id = claim.created_by_id or exists (select 1 from membership_roles r where r.user_id = u.id
               and r.organisation_id = claim.workshop_id and r.role = 'workshopManager')))
           or (p_to = 'holder' and u.id = claim.holder_id and exists (select 1 from memberships m where m.user_id = u.id
-            and m.organisation_id = claim.seller_id and m.disabled_at is null)));
+            and m.organisation_id = claim.seller_id and m.disabled_at is null and m.accepted_at is not null)));
       get diagnostics sent = row_count;
       return sent;
     end $body$;

@@ -8,6 +8,25 @@ ALTER SCHEMA public OWNER TO pg_database_owner;
 
 COMMENT ON SCHEMA public IS 'standard public schema';
 
+CREATE FUNCTION guarded.accept_invitation(p_token_hash text, p_user uuid) RETURNS uuid
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ declare joined uuid;
+     begin
+       perform 1 from memberships m join single_use_links l
+         on l.user_id = m.user_id and l.organisation_id = m.organisation_id
+       where l.token_hash = p_token_hash for update of m;
+       update single_use_links l set used_at = now()
+         where l.token_hash = p_token_hash and l.user_id = p_user and l.purpose = 'invitation' and l.used_at is null
+           and l.expires_at > now() and exists (select 1 from users u where u.id = p_user and u.disabled_at is null)
+         returning l.organisation_id into joined;
+       update memberships m set accepted_at = now() where m.user_id = p_user and m.organisation_id = joined
+         and m.accepted_at is null and m.disabled_at is null returning m.organisation_id into joined;
+       return joined;
+     end $$;
+
+ALTER FUNCTION guarded.accept_invitation(p_token_hash text, p_user uuid) OWNER TO keeper;
+
 CREATE FUNCTION guarded.append_audit(p_action text, p_detail jsonb) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -31,8 +50,7 @@ CREATE FUNCTION guarded.begin_attempt(p_account text, p_address text) RETURNS bo
     AS $$ declare allowed boolean;
      begin
        -- Always the account before the address: two tries at once neither deadlock nor both take the last place.
-       perform pg_advisory_xact_lock(hashtextextended(p_account, 0));
-       perform pg_advisory_xact_lock(hashtextextended(p_address, 1));
+       perform pg_advisory_xact_lock(hashtextextended(p_account, 0)), pg_advisory_xact_lock(hashtextextended(p_address, 1));
        delete from login_attempts where key_hash in (p_account, p_address) and at < now() - interval '15 minutes';
        select (select count(*) from login_attempts where key_hash = p_account) < 10
           and (select count(*) from login_attempts where key_hash = p_address) < 50 into allowed;
@@ -61,12 +79,19 @@ CREATE FUNCTION guarded.chain_timeline() RETURNS trigger
 
 ALTER FUNCTION guarded.chain_timeline() OWNER TO keeper;
 
-CREATE FUNCTION guarded.clear_attempts(p_account text) RETURNS void
+CREATE FUNCTION guarded.clear_attempts(p_account text, p_address text) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
-    AS $$ begin delete from login_attempts where key_hash = p_account; end $$;
+    AS $$ begin
+       -- The try was counted before the password was looked at; one that succeeds gives its place back, so that a
+       -- workshop behind one address is not locked out by its own sign-ins.
+       perform pg_advisory_xact_lock(hashtextextended(p_account, 0)), pg_advisory_xact_lock(hashtextextended(p_address, 1));
+       delete from login_attempts where key_hash = p_account;
+       delete from login_attempts where id =
+         (select a.id from login_attempts a where a.key_hash = p_address order by a.at desc, a.id desc limit 1);
+     end $$;
 
-ALTER FUNCTION guarded.clear_attempts(p_account text) OWNER TO keeper;
+ALTER FUNCTION guarded.clear_attempts(p_account text, p_address text) OWNER TO keeper;
 
 CREATE FUNCTION guarded.end_session(p_session uuid) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
@@ -134,6 +159,22 @@ CREATE FUNCTION guarded.flag_serial(p_claim uuid, p_line integer, p_serial_norma
 
 ALTER FUNCTION guarded.flag_serial(p_claim uuid, p_line integer, p_serial_normal text) OWNER TO keeper;
 
+CREATE FUNCTION guarded.hold_query(p_query uuid) RETURNS TABLE(query_id uuid, asked_on text, lapses_on text, today text, reminders_sent integer, number text, family text, distributor text, question text, row_ids jsonb)
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ begin
+     perform 1 from claims c where c.id = (select q.claim_id from claim_queries q where q.id = p_query)
+       for update skip locked;
+     if not found then return; end if;
+     -- A statement of its own: what is read now is what stands under the lock, not what stood before it.
+     return query select q.id, (q.asked_at at time zone o.time_zone)::date::text, c.query_lapses_on::text,
+  (now() at time zone o.time_zone)::date::text, q.reminders_sent, c.number, c.family, s.name, q.question, q.items
+       from claims c join claim_queries q on q.claim_id = c.id and q.answered_at is null
+  join organisations o on o.id = c.workshop_id join organisations s on s.id = c.seller_id where q.id = p_query and c.state = 'answerNeeded' and c.query_lapses_on is not null;
+   end $$;
+
+ALTER FUNCTION guarded.hold_query(p_query uuid) OWNER TO keeper;
+
 CREATE FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text DEFAULT NULL::text) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -162,6 +203,19 @@ CREATE FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text DEFAULT NULL
 
 ALTER FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text) OWNER TO keeper;
 
+CREATE FUNCTION guarded.invitation_candidate(p_token_hash text) RETURNS TABLE(user_id uuid, email text, password_hash text, roles text[])
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ begin
+       return query select u.id, u.email, u.password_hash, array(select r.role from membership_roles r
+           where r.user_id = m.user_id and r.organisation_id = m.organisation_id)
+         from single_use_links l join users u on u.id = l.user_id and u.disabled_at is null and u.password_hash is not null
+         join memberships m on m.user_id = l.user_id and m.organisation_id = l.organisation_id and m.accepted_at is null and m.disabled_at is null
+         where l.token_hash = p_token_hash and l.used_at is null and l.expires_at > now();
+     end $$;
+
+ALTER FUNCTION guarded.invitation_candidate(p_token_hash text) OWNER TO keeper;
+
 CREATE FUNCTION guarded.invite_person(p_email text, p_name text, p_locale text) RETURNS uuid
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -169,39 +223,53 @@ CREATE FUNCTION guarded.invite_person(p_email text, p_name text, p_locale text) 
      begin
        if not exists (select 1 from memberships m join membership_roles r
            on r.organisation_id = m.organisation_id and r.user_id = m.user_id and r.role = 'administrator'
-         where m.organisation_id = ctx_org() and m.user_id = ctx_actor() and m.disabled_at is null) then
+         where m.organisation_id = ctx_org() and m.user_id = ctx_actor() and m.accepted_at is not null and m.disabled_at is null) then
          raise exception 'only an administrator invites' using errcode = 'PP002';
        end if;
        insert into users (email, name, locale) values (p_email, p_name, p_locale)
          on conflict (email) do nothing;
        select id into invited from users where email = p_email;
-       insert into memberships (user_id, organisation_id) values (invited, ctx_org())
-         on conflict (organisation_id, user_id) do update set disabled_at = null;
+       insert into memberships (user_id, organisation_id, invited_name, invited_email)
+         values (invited, ctx_org(), p_name, p_email) on conflict (organisation_id, user_id) do nothing;
        return invited;
      end $$;
 
 ALTER FUNCTION guarded.invite_person(p_email text, p_name text, p_locale text) OWNER TO keeper;
 
-CREATE FUNCTION guarded.link_organisation(p_token_hash text) RETURNS text
+CREATE FUNCTION guarded.lapse_query(p_query uuid, p_params jsonb) RETURNS boolean
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
-    AS $$
-    begin
-      return (select o.name from single_use_links l
-        join memberships m on m.user_id = l.user_id and m.disabled_at is null
-        join organisations o on o.id = m.organisation_id
-        where l.token_hash = p_token_hash and l.used_at is null and l.expires_at > now()
-        order by m.created_at desc, o.id limit 1);
-    end $$;
+    AS $$ declare claim claims; asked claim_queries; today date;
+   begin
+     
+  select * into claim from claims c where c.id = (select q.claim_id from claim_queries q where q.id = p_query) for update;
+  select * into asked from claim_queries q where q.id = p_query;
+  if claim.id is null or claim.state <> 'answerNeeded' or asked.answered_at is not null then return false; end if;
+  select (now() at time zone o.time_zone)::date into today from organisations o where o.id = claim.workshop_id;
+     if claim.query_lapses_on is null or claim.query_lapses_on >= today or asked.reminders_sent = 0 then return false; end if;
+     update claims set state = 'lapsed', holder_id = null, held_until = null, parked_with_id = null, parked_question = null
+       where id = claim.id;
+     update claim_lines set holds_unit = false where claim_id = claim.id and holds_unit;
+     
+  insert into timeline_entries (claim_id, seq, seller_id, workshop_id, kind, actor_name, detail, prev_hash, hash)
+    values (claim.id, 0, claim.seller_id, claim.workshop_id, 'lapse', 'Partproof', jsonb_build_object('answerBy', claim.query_lapses_on), '', '');
+     perform guarded.mail_of_query(p_query, 'claimLapsed', 'claimLapsed:' || p_query, p_params, true);
+     return true;
+   end $$;
 
-ALTER FUNCTION guarded.link_organisation(p_token_hash text) OWNER TO keeper;
+ALTER FUNCTION guarded.lapse_query(p_query uuid, p_params jsonb) OWNER TO keeper;
 
-CREATE FUNCTION guarded.link_owner(p_token_hash text) RETURNS TABLE(email text, name text, purpose text)
+CREATE FUNCTION guarded.link_owner(p_token_hash text) RETURNS TABLE(email text, name text, purpose text, organisation text, has_password boolean)
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
     AS $$ begin
-       return query select u.email, u.name, l.purpose from single_use_links l join users u on u.id = l.user_id
-         where l.token_hash = p_token_hash and l.used_at is null and l.expires_at > now() and u.disabled_at is null;
+       return query select u.email, case when u.password_hash is null then coalesce(m.invited_name, u.name) else u.name end,
+           l.purpose, coalesce(o.name, ''), u.password_hash is not null
+         from single_use_links l join users u on u.id = l.user_id
+         left join memberships m on m.user_id = l.user_id and m.organisation_id = l.organisation_id
+         left join organisations o on o.id = l.organisation_id
+         where l.token_hash = p_token_hash and l.used_at is null and l.expires_at > now() and u.disabled_at is null
+           and (l.purpose = 'reset' or (m.accepted_at is null and m.disabled_at is null));
      end $$;
 
 ALTER FUNCTION guarded.link_owner(p_token_hash text) OWNER TO keeper;
@@ -220,11 +288,11 @@ CREATE FUNCTION guarded.mail_claim_people(p_claim uuid, p_to text, p_kind text, 
         from users u
         where u.disabled_at is null and (
           (p_to = 'workshop' and exists (select 1 from memberships m where m.user_id = u.id
-            and m.organisation_id = claim.workshop_id and m.disabled_at is null)
+            and m.organisation_id = claim.workshop_id and m.disabled_at is null and m.accepted_at is not null)
             and (u.id = claim.created_by_id or exists (select 1 from membership_roles r where r.user_id = u.id
               and r.organisation_id = claim.workshop_id and r.role = 'workshopManager')))
           or (p_to = 'holder' and u.id = claim.holder_id and exists (select 1 from memberships m where m.user_id = u.id
-            and m.organisation_id = claim.seller_id and m.disabled_at is null)));
+            and m.organisation_id = claim.seller_id and m.disabled_at is null and m.accepted_at is not null)));
       get diagnostics sent = row_count;
       return sent;
     end $$;
@@ -244,18 +312,37 @@ CREATE FUNCTION guarded.mail_link_owner(p_token_hash text, p_kind text, p_params
 
 ALTER FUNCTION guarded.mail_link_owner(p_token_hash text, p_kind text, p_params jsonb, p_request text) OWNER TO keeper;
 
-CREATE FUNCTION guarded.make_link(p_email text, p_purpose text, p_token_hash text, p_minutes integer) RETURNS TABLE(user_id uuid, name text, locale text)
+CREATE FUNCTION guarded.mail_of_query(p_query uuid, p_kind text, p_dedupe text, p_params jsonb, p_asker_too boolean) RETURNS void
+    LANGUAGE sql
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$
+    insert into outbox (kind, dedupe_key, recipient, locale, params)
+      select p_kind, p_dedupe || ':' || u.id, u.email, u.locale, p_params || jsonb_build_object('name', u.name)
+      from claim_queries q join claims c on c.id = q.claim_id join users u on u.disabled_at is null
+      where q.id = p_query and (
+        (exists (select 1 from memberships m where m.user_id = u.id and m.organisation_id = c.workshop_id
+            and m.disabled_at is null)
+          and (u.id = c.created_by_id or exists (select 1 from membership_roles r where r.user_id = u.id
+            and r.organisation_id = c.workshop_id and r.role = 'workshopManager')))
+        or (p_asker_too and u.id = q.asked_by_id and exists (select 1 from memberships m where m.user_id = u.id
+          and m.organisation_id = c.seller_id and m.disabled_at is null)))
+      on conflict do nothing $$;
+
+ALTER FUNCTION guarded.mail_of_query(p_query uuid, p_kind text, p_dedupe text, p_params jsonb, p_asker_too boolean) OWNER TO keeper;
+
+CREATE FUNCTION guarded.make_link(p_email text, p_purpose text, p_token_hash text, p_minutes integer) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
-    AS $$ declare found users;
+    AS $$ declare found users; inviting uuid := case when p_purpose = 'invitation' then ctx_org() end;
      begin
        -- The row's lock lets one request for a link finish before the next: only the latest link stays open.
        select * into found from users u where u.email = p_email and u.disabled_at is null for update;
-       if found.id is null then return; end if;
-       update single_use_links l set used_at = now() where l.user_id = found.id and l.purpose = p_purpose and l.used_at is null;
-       insert into single_use_links (user_id, purpose, token_hash, expires_at)
-         values (found.id, p_purpose, p_token_hash, now() + make_interval(mins => p_minutes));
-       return query select found.id, found.name, found.locale;
+       if found.id is null or p_purpose = 'invitation' and not exists (select 1 from memberships m where m.user_id = found.id
+           and m.organisation_id = inviting and m.accepted_at is null and m.disabled_at is null) then return; end if;
+       update single_use_links l set used_at = now() where l.user_id = found.id and l.purpose = p_purpose
+         and l.organisation_id is not distinct from inviting and l.used_at is null;
+       insert into single_use_links (user_id, purpose, organisation_id, token_hash, expires_at)
+         values (found.id, p_purpose, inviting, p_token_hash, now() + make_interval(mins => p_minutes));
      end $$;
 
 ALTER FUNCTION guarded.make_link(p_email text, p_purpose text, p_token_hash text, p_minutes integer) OWNER TO keeper;
@@ -290,15 +377,17 @@ CREATE FUNCTION guarded.open_workshop(p_given jsonb) RETURNS TABLE(organisation_
 
 ALTER FUNCTION guarded.open_workshop(p_given jsonb) OWNER TO keeper;
 
-CREATE FUNCTION guarded.organisations_of(p_session uuid) RETURNS TABLE(organisation_id uuid, name text)
+CREATE FUNCTION guarded.organisations_of(p_session uuid) RETURNS TABLE(organisation_id uuid, name text, roles text[])
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
     AS $$ begin
-       return query select o.id, o.name from sessions s
-         join users u on u.id = s.user_id and u.disabled_at is null and u.session_version = s.version
-         join memberships m on m.user_id = s.user_id and m.disabled_at is null
+       return query select o.id, o.name, array(select r.role from membership_roles r
+           where r.user_id = m.user_id and r.organisation_id = m.organisation_id order by r.role)
+         from sessions s join users u on u.id = s.user_id and u.disabled_at is null and u.session_version = s.version
+         join memberships m on m.user_id = s.user_id and m.accepted_at is not null and m.disabled_at is null
          join organisations o on o.id = m.organisation_id
-         where s.id = p_session and s.ended_at is null and s.expires_at > now() order by o.name;
+         where s.id = p_session and s.ended_at is null and s.expires_at > now()
+           and s.last_seen_at > now() - make_interval(hours => s.idle_hours) order by o.name, o.id;
      end $$;
 
 ALTER FUNCTION guarded.organisations_of(p_session uuid) OWNER TO keeper;
@@ -327,6 +416,32 @@ CREATE FUNCTION guarded.people_seen() RETURNS TABLE(user_id uuid, last_seen_at t
 
 ALTER FUNCTION guarded.people_seen() OWNER TO keeper;
 
+CREATE FUNCTION guarded.remind_query(p_query uuid, p_reminder integer, p_lapses_on date, p_params jsonb) RETURNS boolean
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ declare claim claims; asked claim_queries; today date;
+   begin
+     
+  select * into claim from claims c where c.id = (select q.claim_id from claim_queries q where q.id = p_query) for update;
+  select * into asked from claim_queries q where q.id = p_query;
+  if claim.id is null or claim.state <> 'answerNeeded' or asked.answered_at is not null then return false; end if;
+  select (now() at time zone o.time_zone)::date into today from organisations o where o.id = claim.workshop_id;
+     if asked.reminders_sent >= p_reminder then return false; end if;
+     if p_lapses_on < today or (p_lapses_on <> claim.query_lapses_on
+         and (asked.reminders_sent > 0 or claim.query_lapses_on >= today)) then
+       raise exception 'the last day of a query stays' using errcode = 'PP003';
+     end if;
+     update claim_queries set reminders_sent = p_reminder where id = p_query;
+     update claims set query_lapses_on = p_lapses_on where id = claim.id and query_lapses_on <> p_lapses_on;
+     
+  insert into timeline_entries (claim_id, seq, seller_id, workshop_id, kind, actor_name, detail, prev_hash, hash)
+    values (claim.id, 0, claim.seller_id, claim.workshop_id, 'reminded', 'Partproof', jsonb_build_object('round', asked.round, 'reminder', p_reminder, 'answerBy', p_lapses_on), '', '');
+     perform guarded.mail_of_query(p_query, 'queryReminder', 'queryReminder:' || p_query || ':' || p_reminder, p_params, false);
+     return true;
+   end $$;
+
+ALTER FUNCTION guarded.remind_query(p_query uuid, p_reminder integer, p_lapses_on date, p_params jsonb) OWNER TO keeper;
+
 CREATE FUNCTION guarded.session_context(p_session uuid) RETURNS TABLE(user_id uuid, organisation_id uuid, name text, email text, locale text, theme text, density text, roles text[], started_at timestamp with time zone, organisation_name text, sells boolean, buys boolean, time_zone text, currency text)
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -340,7 +455,7 @@ CREATE FUNCTION guarded.session_context(p_session uuid) RETURNS TABLE(user_id uu
            o.name, o.sells, o.buys, o.time_zone, o.currency::text
          from sessions s join users u on u.id = s.user_id
            join organisations o on o.id = s.organisation_id
-           join memberships m on m.user_id = u.id and m.organisation_id = s.organisation_id and m.disabled_at is null
+           join memberships m on m.user_id = u.id and m.organisation_id = s.organisation_id and m.accepted_at is not null and m.disabled_at is null
          where s.id = p_session and s.ended_at is null and s.expires_at > now() and s.version = u.session_version
            and s.last_seen_at > now() - make_interval(hours => s.idle_hours) and u.disabled_at is null;
      end $$;
@@ -363,8 +478,11 @@ CREATE FUNCTION guarded.sign_in_candidate(p_email text) RETURNS TABLE(user_id uu
     AS $$ begin
        return query select u.id, u.password_hash, m.organisation_id,
            array(select r.role from membership_roles r where r.user_id = u.id and r.organisation_id = m.organisation_id)
-         from users u join memberships m on m.user_id = u.id and m.disabled_at is null
-         where u.email = p_email and u.disabled_at is null order by m.created_at, m.organisation_id limit 1;
+         from users u join memberships m on m.user_id = u.id and m.accepted_at is not null and m.disabled_at is null
+         where u.email = p_email and u.disabled_at is null
+         -- Where the person was last at work; for the first time, where they have been a member longest.
+         order by (select max(s.last_seen_at) from sessions s where s.user_id = u.id and s.organisation_id = m.organisation_id)
+           desc nulls last, m.accepted_at, m.organisation_id limit 1;
      end $$;
 
 ALTER FUNCTION guarded.sign_in_candidate(p_email text) OWNER TO keeper;
@@ -376,7 +494,7 @@ CREATE FUNCTION guarded.start_session(p_user uuid, p_organisation uuid, p_hours 
      begin
        insert into sessions (user_id, organisation_id, version, device, idle_hours, expires_at)
          select u.id, m.organisation_id, u.session_version, left(p_device, 200), p_idle_hours, now() + make_interval(hours => p_hours)
-         from users u join memberships m on m.user_id = u.id and m.disabled_at is null
+         from users u join memberships m on m.user_id = u.id and m.accepted_at is not null and m.disabled_at is null
          where u.id = p_user and m.organisation_id = p_organisation and u.disabled_at is null
          returning id into made;
        return made;
@@ -384,22 +502,69 @@ CREATE FUNCTION guarded.start_session(p_user uuid, p_organisation uuid, p_hours 
 
 ALTER FUNCTION guarded.start_session(p_user uuid, p_organisation uuid, p_hours integer, p_idle_hours integer, p_device text) OWNER TO keeper;
 
+CREATE FUNCTION guarded.switch_session(p_session uuid, p_organisation uuid, p_hours integer, p_idle_hours integer) RETURNS uuid
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ declare left_one sessions; made uuid;
+     begin
+       select s.* into left_one from sessions s
+         where s.id = p_session and s.ended_at is null and s.expires_at > now()
+           and s.last_seen_at > now() - make_interval(hours => s.idle_hours) for update;
+       -- The life of the new session is counted from when the password was typed: going back and forth gains nothing.
+       insert into sessions (user_id, organisation_id, version, device, idle_hours, started_at, expires_at)
+         select u.id, m.organisation_id, u.session_version, left_one.device, p_idle_hours, left_one.started_at,
+           left_one.started_at + make_interval(hours => p_hours)
+         from users u join memberships m on m.user_id = u.id and m.accepted_at is not null and m.disabled_at is null
+         where u.id = left_one.user_id and u.session_version = left_one.version and u.disabled_at is null
+           and m.organisation_id = p_organisation and left_one.started_at + make_interval(hours => p_hours) > now()
+         returning id into made;
+       if found then update sessions set ended_at = now() where id = p_session; end if;
+       return made;
+     end $$;
+
+ALTER FUNCTION guarded.switch_session(p_session uuid, p_organisation uuid, p_hours integer, p_idle_hours integer) OWNER TO keeper;
+
 CREATE FUNCTION guarded.use_link(p_token_hash text, p_password_hash text) RETURNS text
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
-    AS $$ declare owner_id uuid; owner_email text;
+    AS $$ declare link single_use_links; owner users; invited memberships;
      begin
-       update single_use_links l set used_at = now()
-         where l.token_hash = p_token_hash and l.used_at is null and l.expires_at > now() returning l.user_id into owner_id;
-       if owner_id is null then return null; end if;
+       perform 1 from memberships m join single_use_links l
+         on l.user_id = m.user_id and l.organisation_id = m.organisation_id
+       where l.token_hash = p_token_hash for update of m;
+       select u.* into owner from users u join single_use_links l on l.user_id = u.id
+         where l.token_hash = p_token_hash and u.disabled_at is null for update of u;
+       select l.* into link from single_use_links l
+         where l.token_hash = p_token_hash and l.user_id = owner.id and l.used_at is null and l.expires_at > now();
+       if link.id is null then return null; end if;
+       if link.purpose = 'invitation' then
+         -- Whoever invites an address must not be able to have its password set anew: once there is one, only its
+         -- owner accepts, and signs in for it.
+         if owner.password_hash is not null then return null; end if;
+         update memberships m set accepted_at = now() where m.user_id = owner.id and m.organisation_id = link.organisation_id
+           and m.accepted_at is null and m.disabled_at is null returning m.* into invited;
+         if not found then return null; end if;
+       end if;
        -- Whoever still holds an older mail cannot set the password again.
-       update single_use_links l set used_at = now() where l.user_id = owner_id and l.used_at is null;
-       update users u set password_hash = p_password_hash, session_version = u.session_version + 1
-         where u.id = owner_id and u.disabled_at is null returning u.email into owner_email;
-       return owner_email;
+       update single_use_links l set used_at = now()
+         where l.user_id = owner.id and l.used_at is null and (l.id = link.id or l.purpose = 'reset');
+       update users u set password_hash = p_password_hash, session_version = u.session_version + 1,
+         name = coalesce(invited.invited_name, u.name) where u.id = owner.id;
+       return owner.email;
      end $$;
 
 ALTER FUNCTION guarded.use_link(p_token_hash text, p_password_hash text) OWNER TO keeper;
+
+CREATE FUNCTION guarded.waiting_queries() RETURNS TABLE(query_id uuid, asked_on text, lapses_on text, today text, reminders_sent integer)
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ begin
+     return query select q.id, (q.asked_at at time zone o.time_zone)::date::text, c.query_lapses_on::text,
+  (now() at time zone o.time_zone)::date::text, q.reminders_sent from claims c join claim_queries q on q.claim_id = c.id and q.answered_at is null
+  join organisations o on o.id = c.workshop_id where c.state = 'answerNeeded' and c.query_lapses_on is not null order by c.query_lapses_on, q.id;
+   end $$;
+
+ALTER FUNCTION guarded.waiting_queries() OWNER TO keeper;
 
 CREATE TABLE public.audit_log (
     organisation_id uuid NOT NULL,
@@ -664,7 +829,9 @@ CREATE TABLE public.claim_queries (
     asked_at timestamp with time zone DEFAULT now() NOT NULL,
     answered_at timestamp with time zone,
     answered_revision integer,
+    reminders_sent integer DEFAULT 0 NOT NULL,
     CONSTRAINT claim_queries_question_check CHECK ((length(question) <= 4000)),
+    CONSTRAINT claim_queries_reminders_sent_check CHECK (((reminders_sent >= 0) AND (reminders_sent <= 2))),
     CONSTRAINT claim_queries_round_check CHECK ((round > 0))
 );
 
@@ -912,8 +1079,13 @@ ALTER TABLE public.membership_roles OWNER TO partproof_owner;
 CREATE TABLE public.memberships (
     user_id uuid NOT NULL,
     organisation_id uuid NOT NULL,
+    invited_name text,
+    invited_email text,
+    accepted_at timestamp with time zone,
     disabled_at timestamp with time zone,
-    created_at timestamp with time zone DEFAULT now() NOT NULL
+    created_at timestamp with time zone DEFAULT now() NOT NULL,
+    CONSTRAINT memberships_check CHECK (((accepted_at IS NOT NULL) OR ((invited_name IS NOT NULL) AND (invited_email IS NOT NULL)))),
+    CONSTRAINT memberships_invited_name_check CHECK (((length(invited_name) >= 1) AND (length(invited_name) <= 120)))
 );
 
 ALTER TABLE ONLY public.memberships FORCE ROW LEVEL SECURITY;
@@ -1052,10 +1224,12 @@ CREATE TABLE public.single_use_links (
     id uuid DEFAULT gen_random_uuid() NOT NULL,
     user_id uuid NOT NULL,
     purpose text NOT NULL,
+    organisation_id uuid,
     token_hash text NOT NULL,
     expires_at timestamp with time zone NOT NULL,
     used_at timestamp with time zone,
     created_at timestamp with time zone DEFAULT now() NOT NULL,
+    CONSTRAINT single_use_links_check CHECK (((purpose = 'invitation'::text) = (organisation_id IS NOT NULL))),
     CONSTRAINT single_use_links_purpose_check CHECK ((purpose = ANY (ARRAY['invitation'::text, 'reset'::text]))),
     CONSTRAINT single_use_links_token_hash_check CHECK ((length(token_hash) = 64))
 );
@@ -1461,6 +1635,8 @@ CREATE UNIQUE INDEX claim_lines_one_holder ON public.claim_lines USING btree (se
 
 CREATE INDEX claim_messages_by_claim ON public.claim_messages USING btree (claim_id, at);
 
+CREATE INDEX claims_answer_needed ON public.claims USING btree (query_lapses_on) WHERE (state = 'answerNeeded'::text);
+
 CREATE INDEX claims_by_vehicle ON public.claims USING btree (workshop_id, vehicle_id);
 
 CREATE INDEX claims_by_workshop_state ON public.claims USING btree (workshop_id, state, updated_at);
@@ -1509,7 +1685,7 @@ CREATE INDEX readings_by_claim ON public.readings USING btree (claim_id, revisio
 
 CREATE INDEX rule_book_by_kind ON public.rule_book_versions USING btree (seller_id, kind, family, valid_from);
 
-CREATE INDEX sessions_by_user ON public.sessions USING btree (user_id) WHERE (ended_at IS NULL);
+CREATE INDEX sessions_by_user ON public.sessions USING btree (user_id, organisation_id, last_seen_at);
 
 CREATE INDEX trading_accounts_by_buyer ON public.trading_accounts USING btree (buyer_id, seller_id);
 
@@ -1815,6 +1991,9 @@ ALTER TABLE ONLY public.sessions
     ADD CONSTRAINT sessions_user_id_fkey FOREIGN KEY (user_id) REFERENCES public.users(id);
 
 ALTER TABLE ONLY public.single_use_links
+    ADD CONSTRAINT single_use_links_organisation_id_user_id_fkey FOREIGN KEY (organisation_id, user_id) REFERENCES public.memberships(organisation_id, user_id);
+
+ALTER TABLE ONLY public.single_use_links
     ADD CONSTRAINT single_use_links_user_id_fkey FOREIGN KEY (user_id) REFERENCES public.users(id);
 
 ALTER TABLE ONLY public.sites
@@ -1930,6 +2109,12 @@ CREATE POLICY keeper_all ON public.users TO keeper USING (true) WITH CHECK (true
 
 CREATE POLICY keeper_claims ON public.claims FOR SELECT TO keeper USING (true);
 
+CREATE POLICY keeper_clock ON public.claim_queries FOR UPDATE TO keeper USING ((answered_at IS NULL)) WITH CHECK ((answered_at IS NULL));
+
+CREATE POLICY keeper_clock ON public.claims FOR UPDATE TO keeper USING ((state = 'answerNeeded'::text)) WITH CHECK ((state = ANY (ARRAY['answerNeeded'::text, 'lapsed'::text])));
+
+CREATE POLICY keeper_clock ON public.timeline_entries FOR INSERT TO keeper WITH CHECK (((kind = ANY (ARRAY['reminded'::text, 'lapse'::text])) AND (actor_id IS NULL) AND (actor_organisation_id IS NULL)));
+
 CREATE POLICY keeper_flags ON public.claim_flags TO keeper USING (true) WITH CHECK (true);
 
 CREATE POLICY keeper_insert ON public.audit_log FOR INSERT TO keeper WITH CHECK (true);
@@ -1943,6 +2128,8 @@ CREATE POLICY keeper_insert ON public.sites FOR INSERT TO keeper WITH CHECK (tru
 CREATE POLICY keeper_lines ON public.claim_lines TO keeper USING (true) WITH CHECK (true);
 
 CREATE POLICY keeper_read ON public.audit_log FOR SELECT TO keeper USING (true);
+
+CREATE POLICY keeper_read ON public.claim_queries FOR SELECT TO keeper USING (true);
 
 CREATE POLICY keeper_read ON public.evidence_files FOR SELECT TO keeper USING (true);
 
@@ -2146,7 +2333,7 @@ CREATE POLICY web_select ON public.units FOR SELECT TO web USING (((( SELECT pub
 
 CREATE POLICY web_select ON public.users FOR SELECT TO web USING (((id = ( SELECT public.ctx_actor() AS ctx_actor)) OR (EXISTS ( SELECT 1
    FROM public.memberships m
-  WHERE ((m.user_id = users.id) AND (m.organisation_id = ( SELECT public.ctx_org() AS ctx_org)))))));
+  WHERE ((m.user_id = users.id) AND (m.organisation_id = ( SELECT public.ctx_org() AS ctx_org)) AND (m.accepted_at IS NOT NULL))))));
 
 CREATE POLICY web_select ON public.vehicles FOR SELECT TO web USING (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) OR (EXISTS ( SELECT 1
    FROM public.fittings f
@@ -2210,6 +2397,7 @@ CREATE POLICY worker_update ON public.outbox FOR UPDATE TO worker USING (true) W
 
 GRANT USAGE ON SCHEMA guarded TO web;
 GRANT USAGE ON SCHEMA guarded TO partproof_owner;
+GRANT USAGE ON SCHEMA guarded TO worker;
 
 REVOKE USAGE ON SCHEMA public FROM PUBLIC;
 GRANT ALL ON SCHEMA public TO partproof_owner;
@@ -2220,6 +2408,9 @@ GRANT USAGE ON SCHEMA public TO reporter;
 GRANT USAGE ON SCHEMA public TO auditor;
 GRANT USAGE ON SCHEMA public TO backup;
 
+REVOKE ALL ON FUNCTION guarded.accept_invitation(p_token_hash text, p_user uuid) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.accept_invitation(p_token_hash text, p_user uuid) TO web;
+
 REVOKE ALL ON FUNCTION guarded.append_audit(p_action text, p_detail jsonb) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.append_audit(p_action text, p_detail jsonb) TO web;
 
@@ -2229,8 +2420,8 @@ GRANT ALL ON FUNCTION guarded.begin_attempt(p_account text, p_address text) TO w
 REVOKE ALL ON FUNCTION guarded.chain_timeline() FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.chain_timeline() TO partproof_owner;
 
-REVOKE ALL ON FUNCTION guarded.clear_attempts(p_account text) FROM PUBLIC;
-GRANT ALL ON FUNCTION guarded.clear_attempts(p_account text) TO web;
+REVOKE ALL ON FUNCTION guarded.clear_attempts(p_account text, p_address text) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.clear_attempts(p_account text, p_address text) TO web;
 
 REVOKE ALL ON FUNCTION guarded.end_session(p_session uuid) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.end_session(p_session uuid) TO web;
@@ -2247,14 +2438,20 @@ GRANT ALL ON FUNCTION guarded.flag_seen_before(p_evidence uuid) TO web;
 REVOKE ALL ON FUNCTION guarded.flag_serial(p_claim uuid, p_line integer, p_serial_normal text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.flag_serial(p_claim uuid, p_line integer, p_serial_normal text) TO web;
 
+REVOKE ALL ON FUNCTION guarded.hold_query(p_query uuid) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.hold_query(p_query uuid) TO worker;
+
 REVOKE ALL ON FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text) TO web;
+
+REVOKE ALL ON FUNCTION guarded.invitation_candidate(p_token_hash text) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.invitation_candidate(p_token_hash text) TO web;
 
 REVOKE ALL ON FUNCTION guarded.invite_person(p_email text, p_name text, p_locale text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.invite_person(p_email text, p_name text, p_locale text) TO web;
 
-REVOKE ALL ON FUNCTION guarded.link_organisation(p_token_hash text) FROM PUBLIC;
-GRANT ALL ON FUNCTION guarded.link_organisation(p_token_hash text) TO web;
+REVOKE ALL ON FUNCTION guarded.lapse_query(p_query uuid, p_params jsonb) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.lapse_query(p_query uuid, p_params jsonb) TO worker;
 
 REVOKE ALL ON FUNCTION guarded.link_owner(p_token_hash text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.link_owner(p_token_hash text) TO web;
@@ -2264,6 +2461,8 @@ GRANT ALL ON FUNCTION guarded.mail_claim_people(p_claim uuid, p_to text, p_kind 
 
 REVOKE ALL ON FUNCTION guarded.mail_link_owner(p_token_hash text, p_kind text, p_params jsonb, p_request text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.mail_link_owner(p_token_hash text, p_kind text, p_params jsonb, p_request text) TO web;
+
+REVOKE ALL ON FUNCTION guarded.mail_of_query(p_query uuid, p_kind text, p_dedupe text, p_params jsonb, p_asker_too boolean) FROM PUBLIC;
 
 REVOKE ALL ON FUNCTION guarded.make_link(p_email text, p_purpose text, p_token_hash text, p_minutes integer) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.make_link(p_email text, p_purpose text, p_token_hash text, p_minutes integer) TO web;
@@ -2280,6 +2479,9 @@ GRANT ALL ON FUNCTION guarded.own_password_hash() TO web;
 REVOKE ALL ON FUNCTION guarded.people_seen() FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.people_seen() TO web;
 
+REVOKE ALL ON FUNCTION guarded.remind_query(p_query uuid, p_reminder integer, p_lapses_on date, p_params jsonb) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.remind_query(p_query uuid, p_reminder integer, p_lapses_on date, p_params jsonb) TO worker;
+
 REVOKE ALL ON FUNCTION guarded.session_context(p_session uuid) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.session_context(p_session uuid) TO web;
 
@@ -2292,14 +2494,21 @@ GRANT ALL ON FUNCTION guarded.sign_in_candidate(p_email text) TO web;
 REVOKE ALL ON FUNCTION guarded.start_session(p_user uuid, p_organisation uuid, p_hours integer, p_idle_hours integer, p_device text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.start_session(p_user uuid, p_organisation uuid, p_hours integer, p_idle_hours integer, p_device text) TO web;
 
+REVOKE ALL ON FUNCTION guarded.switch_session(p_session uuid, p_organisation uuid, p_hours integer, p_idle_hours integer) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.switch_session(p_session uuid, p_organisation uuid, p_hours integer, p_idle_hours integer) TO web;
+
 REVOKE ALL ON FUNCTION guarded.use_link(p_token_hash text, p_password_hash text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.use_link(p_token_hash text, p_password_hash text) TO web;
+
+REVOKE ALL ON FUNCTION guarded.waiting_queries() FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.waiting_queries() TO worker;
 
 GRANT SELECT ON TABLE public.audit_log TO web;
 GRANT SELECT ON TABLE public.audit_log TO auditor;
 GRANT SELECT,INSERT ON TABLE public.audit_log TO keeper;
 
 GRANT SELECT,INSERT ON TABLE public.timeline_entries TO web;
+GRANT INSERT ON TABLE public.timeline_entries TO keeper;
 
 GRANT SELECT,INSERT,UPDATE ON TABLE public.audit_heads TO keeper;
 
@@ -2317,17 +2526,33 @@ GRANT SELECT,INSERT ON TABLE public.claim_messages TO web;
 
 GRANT SELECT ON TABLE public.claim_moves TO web;
 GRANT SELECT ON TABLE public.claim_moves TO worker;
+GRANT SELECT ON TABLE public.claim_moves TO keeper;
 
 GRANT SELECT,INSERT ON TABLE public.claim_queries TO web;
+GRANT SELECT ON TABLE public.claim_queries TO keeper;
 
 GRANT UPDATE(answered_at) ON TABLE public.claim_queries TO web;
 
 GRANT UPDATE(answered_revision) ON TABLE public.claim_queries TO web;
 
+GRANT UPDATE(reminders_sent) ON TABLE public.claim_queries TO keeper;
+
 GRANT SELECT,INSERT ON TABLE public.claim_revisions TO web;
 
 GRANT SELECT,INSERT,UPDATE ON TABLE public.claims TO web;
 GRANT SELECT ON TABLE public.claims TO keeper;
+
+GRANT UPDATE(state) ON TABLE public.claims TO keeper;
+
+GRANT UPDATE(holder_id) ON TABLE public.claims TO keeper;
+
+GRANT UPDATE(held_until) ON TABLE public.claims TO keeper;
+
+GRANT UPDATE(parked_with_id) ON TABLE public.claims TO keeper;
+
+GRANT UPDATE(parked_question) ON TABLE public.claims TO keeper;
+
+GRANT UPDATE(query_lapses_on) ON TABLE public.claims TO keeper;
 
 GRANT SELECT,INSERT,UPDATE ON TABLE public.evidence_files TO web;
 GRANT SELECT,UPDATE ON TABLE public.evidence_files TO worker;
@@ -2350,8 +2575,10 @@ GRANT SELECT,INSERT,UPDATE ON TABLE public.makers TO web;
 GRANT SELECT,INSERT,DELETE,UPDATE ON TABLE public.membership_roles TO web;
 GRANT SELECT ON TABLE public.membership_roles TO keeper;
 
-GRANT SELECT,INSERT,UPDATE ON TABLE public.memberships TO web;
+GRANT SELECT ON TABLE public.memberships TO web;
 GRANT SELECT,INSERT,UPDATE ON TABLE public.memberships TO keeper;
+
+GRANT UPDATE(disabled_at) ON TABLE public.memberships TO web;
 
 GRANT SELECT,INSERT,DELETE,UPDATE ON TABLE public.organisations TO web;
 GRANT SELECT,INSERT ON TABLE public.organisations TO keeper;

@@ -15,7 +15,7 @@ import {
 } from "./cell-values";
 import type { Catalogue, GoodLine, KnownAccount, KnownPart, LineFacts } from "./known";
 import { deskFor, type Answer, type Desk, type LineProblem } from "./line-desk";
-import type { CsvRow } from "./read-csv";
+import type { CsvRow } from "./csv-file";
 import type { Heading } from "./heading";
 
 export type Reading = {

@@ -1,8 +1,9 @@
 import { readLine, type Reading } from "./check-line";
 import type { ColumnKey } from "./columns";
+import { cellOf, type CsvFile } from "./csv-file";
 import { lineKey, unitKey, type GoodLine, type KnownLine, type LineFacts, type Recorded } from "./known";
 import type { LineProblem, ProblemCode } from "./line-desk";
-import { cellOf, type CsvFile } from "./read-csv";
+import type { InPieces } from "./pieces";
 import { totalsOf, type InvoiceLine, type Totals } from "./totals";
 
 /** Lines with problems that are shown; the others are counted. */
@@ -87,11 +88,12 @@ function place(good: GoodLine, { byLine, bySerial }: Places): Wrong | null {
   return null;
 }
 
-/** Every line of the file by itself and against the others of the file. */
-export function readLines(file: CsvFile, reading: Omit<Reading, "heading">): ReadLines {
+/** Every line of the file by itself and against the others of the file. May pause after each. */
+export function* readLines(file: CsvFile, reading: Omit<Reading, "heading">): InPieces<ReadLines> {
   const found: Found = { problems: [], lineCount: 0 };
   const places: Places = { byLine: new Map(), bySerial: new Map() };
   for (const row of file.rows) {
+    yield;
     const read = readLine(row, { ...reading, heading: file.heading });
     if (Array.isArray(read)) {
       note(found, read);
@@ -136,8 +138,8 @@ function againstUnits(good: GoodLine, { units }: Recorded): Wrong | null {
 const givenAt = (good: GoodLine, column: ColumnKey | null): string =>
   column === "serial" ? (good.serial?.raw ?? "") : String(good.lineNumber);
 
-/** The whole file against what is on record: what is new, what is there unchanged, and what stands in the way. */
-export function checked(read: ReadLines, recorded: Recorded): Check {
+/** The whole file against what is on record: what is new, what is there unchanged, and what stands in the way. May pause. */
+export function* checked(read: ReadLines, recorded: Recorded): InPieces<Check> {
   const found: Found = { problems: [], lineCount: 0 };
   const fresh: InvoiceLine[] = [];
   let unchangedCount = 0;
@@ -146,6 +148,7 @@ export function checked(read: ReadLines, recorded: Recorded): Check {
     const existing = recorded.lines.get(lineKey(first.invoice, first.lineNumber));
     if (!existing) fresh.push(invoiceLine);
     for (const good of lines) {
+      yield;
       const against = existing ? againstLine(good, existing, recorded) : againstUnits(good, recorded);
       if (against) note(found, [{ ...against, line: good.line, given: givenAt(good, against.column) }]);
       else if (existing) unchangedCount += 1;
@@ -155,7 +158,7 @@ export function checked(read: ReadLines, recorded: Recorded): Check {
     lineCount: read.lineCount,
     unchangedCount,
     fresh,
-    totals: totalsOf(fresh, recorded),
+    totals: yield* totalsOf(fresh, recorded),
     problems: firstOf([...read.problems, ...found.problems]),
     problemLineCount: read.problemLineCount + found.lineCount,
   };

@@ -2,7 +2,7 @@ import type { Outcome } from "@/lib/kernel/outcome";
 import type { CellProblem } from "./cell-values";
 import type { ColumnKey } from "./columns";
 import type { Heading } from "./heading";
-import { cellOf, cellsOutside, type CsvRow } from "./read-csv";
+import { cellOf, cellsOutside, type CsvRow } from "./csv-file";
 
 export type ProblemCode =
   | CellProblem

@@ -7,9 +7,12 @@ import { LIMITS, mostBytes } from "@/lib/kernel/limits";
 import { readAll } from "@/lib/storage/objects";
 import { checked, readLines, type Check } from "./check";
 import { presentImport, presentPreview } from "./present";
-import { readCsv, type CsvFile } from "./read-csv";
+import type { CsvFile } from "./csv-file";
+import { readCsv } from "./csv-service";
 import { findCatalogue, findRecorded } from "./recorded-queries";
 import { importInput } from "./schema";
+import { inSlices } from "./slices-service";
+import { inTurn } from "./turns-service";
 import type { ImportView, PreviewView } from "./view";
 
 /** A file that was sent, with how it was read and what came of it. */
@@ -62,17 +65,48 @@ export const findImport = (actor: Actor, importId: string): Promise<ImportRow | 
 
 /** The stored file, read again. Throws where it is gone or cannot be read any more: it could when it was sent. */
 export async function storedFile({ objectKey }: Pick<ImportRow, "objectKey">): Promise<CsvFile> {
-  const read = readCsv(await readAll(objectKey, mostBytes("runLog")), LIMITS.importLines);
+  const read = await readCsv(await readAll(objectKey, mostBytes("runLog")), LIMITS.importLines);
   if (!read.ok) throw new Error(`the stored file ${objectKey} cannot be read: ${read.code}`);
   return read.value;
+}
+
+const AWAKE_EVERY_MS = 2_000;
+
+/** The database ends a transaction in which nothing has happened for ten seconds; reading a large file may take longer. */
+function keepingAwake(work: Work): () => Promise<void> {
+  let askedAt = performance.now();
+  return async () => {
+    if (performance.now() - askedAt < AWAKE_EVERY_MS) return;
+    await rows(work, "select 1 as awake");
+    askedAt = performance.now();
+  };
 }
 
 /** Every line of a file against the accounts, parts, invoice lines and units of this organisation, as of now. */
 export async function checkFile(work: Work, file: CsvFile): Promise<Check> {
   const today = dayInZone(new Date(), work.actor.timeZone);
   const catalogue = await findCatalogue(work, file);
-  const read = readLines(file, { catalogue, today });
-  return checked(read, await findRecorded(work, read));
+  const awake = keepingAwake(work);
+  const read = await inSlices(readLines(file, { catalogue, today }), awake);
+  return inSlices(checked(read, await findRecorded(work, read)), awake);
+}
+
+const waiting = new Map<string, Promise<Check>>();
+
+/** The check of a stored file. Whoever asks again while the same question still waits for its turn gets that answer. */
+function checkStored(actor: Actor, found: ImportRow): Promise<Check> {
+  const question = `${actor.userId} ${found.id}`;
+  const asked = waiting.get(question);
+  if (asked) return asked;
+  let hasBegun = false;
+  const answer = inTurn(found, async () => {
+    hasBegun = true;
+    waiting.delete(question);
+    const file = await storedFile(found);
+    return unitOfWork(actor, (work) => checkFile(work, file));
+  });
+  if (!hasBegun) waiting.set(question, answer);
+  return answer;
 }
 
 export type ImportSheet = { readonly sent: ImportView; readonly preview: PreviewView | null };
@@ -83,7 +117,6 @@ export async function findImportSheet(actor: Actor, importId: string): Promise<I
   if (!found) return null;
   const sent = presentImport(found);
   if (sent.isImported) return { sent, preview: null };
-  const file = await storedFile(found);
-  const check = await unitOfWork(actor, (work) => checkFile(work, file));
+  const check = await checkStored(actor, found);
   return { sent, preview: presentPreview(check, importId, actor.locale) };
 }

@@ -14,10 +14,15 @@ import {
   type Recorded,
 } from "./known";
 import type { ReadLines } from "./check";
-import { cellOf, type CsvFile } from "./read-csv";
+import { cellOf, type CsvFile } from "./csv-file";
 import type { ColumnKey } from "./columns";
+import type { InPieces } from "./pieces";
+import { inSlices } from "./slices-service";
 
-const KEYS_AT_ONCE = 5_000;
+/** Few enough that neither asking nor reading the answer holds the process noticeably. */
+const KEYS_AT_ONCE = 1_000;
+/** A number as long as any account or part may have; a longer text names neither. */
+const LONGEST_NUMBER = 40;
 
 /** A list in pieces that one statement takes. */
 export const inPieces = <T>(list: readonly T[], size: number): T[][] =>
@@ -25,11 +30,17 @@ export const inPieces = <T>(list: readonly T[], size: number): T[][] =>
     list.slice(at * size, (at + 1) * size),
   );
 
-const distinct = ({ heading, rows: lines }: CsvFile, column: ColumnKey): string[] => [
-  ...new Set(lines.map((row) => cellOf(heading, row, column))),
-];
+function* distinct({ heading, rows: lines }: CsvFile, column: ColumnKey): InPieces<string[]> {
+  const found = new Set<string>();
+  for (const row of lines) {
+    const number = cellOf(heading, row, column);
+    if (number !== "" && number.length <= LONGEST_NUMBER) found.add(number);
+    yield;
+  }
+  return [...found];
+}
 
-async function findAccounts(work: Work, numbers: string[]): Promise<Map<string, KnownAccount>> {
+async function addAccounts(work: Work, numbers: string[], accounts: Map<string, KnownAccount>) {
   const found = await rows<KnownAccount & { number: string }>(
     work,
     `select t.account_number as number, t.id, t.buyer_id as "buyerId", o.name as "buyerName", t.currency,
@@ -39,23 +50,27 @@ async function findAccounts(work: Work, numbers: string[]): Promise<Map<string, 
      where t.seller_id = $1 and t.account_number = any($2::text[])`,
     [work.actor.organisationId, numbers],
   );
-  return new Map(found.map((account) => [account.number, account]));
+  for (const account of found) accounts.set(account.number, account);
 }
 
-async function findParts(work: Work, numbers: string[]): Promise<Map<string, KnownPart>> {
+async function addParts(work: Work, numbers: string[], parts: Map<string, KnownPart>) {
   const found = await rows<KnownPart & { number: string }>(
     work,
     `select part_number as number, id, serial_tracked as "isSerialTracked" from parts
      where seller_id = $1 and part_number = any($2::text[])`,
     [work.actor.organisationId, numbers],
   );
-  return new Map(found.map((part) => [part.number, part]));
+  for (const part of found) parts.set(part.number, part);
 }
 
 /** The accounts and parts that a file names and this organisation has. */
 export async function findCatalogue(work: Work, file: CsvFile): Promise<Catalogue> {
-  const accounts = await findAccounts(work, distinct(file, "account"));
-  const parts = await findParts(work, distinct(file, "part"));
+  const accounts = new Map<string, KnownAccount>();
+  const parts = new Map<string, KnownPart>();
+  for (const some of inPieces(await inSlices(distinct(file, "account")), KEYS_AT_ONCE))
+    await addAccounts(work, some, accounts);
+  for (const some of inPieces(await inSlices(distinct(file, "part")), KEYS_AT_ONCE))
+    await addParts(work, some, parts);
   return { accounts, parts };
 }
 

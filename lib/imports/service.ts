@@ -11,8 +11,10 @@ import { receiveFile, type Received, type ReceiveRefusal } from "@/lib/storage/r
 import type { Check } from "./check";
 import { headingsIn } from "./heading";
 import { checkFile, findImport, mayImport, storedFile } from "./queries";
-import { readCsv, type CsvFile } from "./read-csv";
+import type { CsvFile } from "./csv-file";
+import { readCsv } from "./csv-service";
 import type { ImportRefusal, ImportResult, StoredMapping } from "./schema";
+import { inTurn } from "./turns-service";
 import { writeLines } from "./write-service";
 
 export type ImportSent = { readonly importId: string; readonly wasSentBefore: boolean };
@@ -34,8 +36,8 @@ const isReceiving = (code: ReceiveRefusal | "notAllowed"): code is ReceiveRefusa
   Object.hasOwn(OURS, code);
 
 /** The file as rows, or why it cannot be read, its missing columns named as the person would write them. */
-function fileFrom(bytes: Uint8Array, actor: Actor): Outcome<CsvFile, ImportRefusal> {
-  const read = readCsv(bytes, LIMITS.importLines);
+async function fileFrom(bytes: Uint8Array, actor: Actor): Promise<Outcome<CsvFile, ImportRefusal>> {
+  const read = await readCsv(bytes, LIMITS.importLines);
   if (read.ok || read.code !== "importColumnsMissing") return read;
   return refuse(read.code, { columns: headingsIn(String(read.detail.columns), actor.locale) });
 }
@@ -76,7 +78,7 @@ async function noteFile(work: Work, received: Received, file: CsvFile): Promise<
 
 async function keep(actor: Actor, received: Received): Promise<Outcome<ImportSent, ImportRefusal>> {
   const bytes = await readAll(received.quarantine, mostBytes("runLog"));
-  const file = fileFrom(bytes, actor);
+  const file = await fileFrom(bytes, actor);
   if (!file.ok) return file;
   await copyOnce(received.quarantine, keyOf(actor, received.sha256));
   const sent = await unitOfWork(actor, (work) => noteFile(work, received, file.value));
@@ -98,7 +100,7 @@ export async function receiveInvoiceFile(
   if (!received.ok)
     return isReceiving(received.code) ? refuse(OURS[received.code], received.detail) : refuse("notAllowed");
   try {
-    return await keep(actor, received.value);
+    return await inTurn(received.value, () => keep(actor, received.value));
   } finally {
     await remove(received.value.quarantine).catch(() => undefined);
   }
@@ -163,9 +165,11 @@ export async function importLines(
   const found = await findImport(actor, importId);
   if (!found) return refuse("notFound");
   if (found.state === "imported") return ok({ importId });
-  const file = await storedFile(found);
   try {
-    return await undoing<Imported, ImportLinesRefusal>(actor, (work) => importFile(work, importId, file));
+    return await inTurn(found, async () => {
+      const file = await storedFile(found);
+      return undoing<Imported, ImportLinesRefusal>(actor, (work) => importFile(work, importId, file));
+    });
   } catch (fault) {
     if (fault instanceof UniqueConstraintError) return refuse("importClashed");
     throw fault;

@@ -1,6 +1,7 @@
 import { isCurrency, type Currency } from "@/lib/kernel/currency";
 import { addMoney, money, noMoney, type Money } from "@/lib/kernel/money";
 import { batchKey, type GoodLine, type Recorded } from "./known";
+import type { InPieces } from "./pieces";
 
 /** One invoice line as the file has it: a line of the file for each unit, or one with a quantity. */
 export type InvoiceLine = { readonly first: GoodLine; readonly lines: readonly GoodLine[] };
@@ -16,14 +17,15 @@ export type Totals = {
 export const quantityOf = ({ first, lines }: InvoiceLine): number =>
   first.serial === null ? first.quantity : lines.length;
 
-/** What an import would write, counted and summed by currency. */
-export function totalsOf(fresh: readonly InvoiceLine[], { batches }: Recorded): Totals {
+/** What an import would write, counted and summed by currency. May pause. */
+export function* totalsOf(fresh: readonly InvoiceLine[], { batches }: Recorded): InPieces<Totals> {
   const sums = new Map<Currency, Money>();
   const newBatches = new Set<string>();
   let units = 0;
   for (const invoiceLine of fresh) {
     const { currency, unitPriceMinor, partId } = invoiceLine.first.facts;
     for (const { serial, batch } of invoiceLine.lines) {
+      yield;
       if (serial !== null) units += 1;
       if (batch !== null && !batches.has(batchKey(partId, batch))) newBatches.add(batchKey(partId, batch));
     }

@@ -1,6 +1,9 @@
 import "server-only";
 import { randomUUID } from "node:crypto";
 import { rows, type Work } from "@/lib/db/unit-of-work";
+import { batchKey } from "./known";
+import type { InPieces } from "./pieces";
+import { inSlices } from "./slices-service";
 import { quantityOf, type InvoiceLine } from "./totals";
 import { inPieces } from "./recorded-queries";
 
@@ -38,33 +41,50 @@ const lineRow = (line: Numbered) => ({
   ...line.first.facts,
 });
 
-const unitRows = ({ id, lines }: Numbered) =>
-  lines.flatMap(({ buyerId, facts, serial, batch }) =>
-    serial
-      ? [
-          {
-            buyerId,
-            partId: facts.partId,
-            invoiceLineId: id,
-            serial: serial.raw,
-            normal: serial.normal,
-            batch,
-          },
-        ]
-      : [],
-  );
+type UnitRow = {
+  readonly buyerId: string;
+  readonly partId: string;
+  readonly invoiceLineId: string;
+  readonly serial: string;
+  readonly normal: string;
+  readonly batch: string | null;
+};
 
-const batchRows = ({ lines }: Numbered) =>
-  lines.flatMap(({ facts, batch }) => (batch === null ? [] : [{ part_id: facts.partId, code: batch }]));
+/** The units of some invoice lines in pieces; all of them may be on one line. */
+function* unitRows(lines: readonly Numbered[]): Generator<UnitRow[], void, undefined> {
+  let piece: UnitRow[] = [];
+  for (const { id, lines: goods } of lines)
+    for (const { buyerId, facts, serial, batch } of goods) {
+      if (serial === null) continue;
+      const { raw, normal } = serial;
+      piece.push({ buyerId, partId: facts.partId, invoiceLineId: id, serial: raw, normal, batch });
+      if (piece.length < LINES_AT_ONCE) continue;
+      yield piece;
+      piece = [];
+    }
+  if (piece.length > 0) yield piece;
+}
+
+type BatchRow = { readonly part_id: string; readonly code: string };
+
+function* batchRows(fresh: readonly InvoiceLine[]): InPieces<BatchRow[]> {
+  const found = new Map<string, BatchRow>();
+  for (const { lines } of fresh)
+    for (const { facts, batch } of lines) {
+      if (batch !== null) found.set(batchKey(facts.partId, batch), { part_id: facts.partId, code: batch });
+      yield;
+    }
+  return [...found.values()];
+}
 
 /** Writes invoice lines with their units and the batches that are new, many rows a statement. */
 export async function writeLines(work: Work, fresh: readonly InvoiceLine[]): Promise<void> {
   const seller = work.actor.organisationId;
+  for (const some of inPieces(await inSlices(batchRows(fresh)), LINES_AT_ONCE))
+    await rows(work, INSERT_BATCHES, [seller, JSON.stringify(some)]);
   for (const some of inPieces(fresh, LINES_AT_ONCE)) {
     const lines = some.map((line) => ({ ...line, id: randomUUID() }));
-    await rows(work, INSERT_BATCHES, [seller, JSON.stringify(lines.flatMap(batchRows))]);
     await rows(work, INSERT_LINES, [seller, JSON.stringify(lines.map(lineRow))]);
-    for (const units of inPieces(lines.flatMap(unitRows), LINES_AT_ONCE))
-      await rows(work, INSERT_UNITS, [seller, JSON.stringify(units)]);
+    for (const units of unitRows(lines)) await rows(work, INSERT_UNITS, [seller, JSON.stringify(units)]);
   }
 }

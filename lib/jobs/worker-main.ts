@@ -1,6 +1,7 @@
 import { run, Logger, parseCronItems } from "graphile-worker";
 import { log } from "@/lib/web/log";
 import { beat } from "./tasks/beat";
+import { remindAndLapse } from "./tasks/remind-and-lapse";
 import { sendMails } from "./tasks/send-mails";
 import { sweepUploads } from "./tasks/sweep-uploads";
 import { viewCopy } from "./tasks/view-copy";
@@ -20,9 +21,16 @@ const runner = await run({
   concurrency: 2,
   noHandleSignals: false,
   pollInterval: 1000,
-  taskList: { beat, sendMails, viewCopy, readRunLog, sweepUploads },
+  taskList: { beat, sendMails, viewCopy, readRunLog, sweepUploads, remindAndLapse },
   parsedCronItems: parseCronItems([
     { task: "sweepUploads", match: "17 * * * *", identifier: "sweepUploads" },
+    {
+      task: "remindAndLapse",
+      match: "23 * * * *",
+      identifier: "remindAndLapse",
+      // Days pass while nothing runs: a round missed in the last hour is made up for at the start.
+      options: { backfillPeriod: 3_600_000 },
+    },
   ]),
 });
 

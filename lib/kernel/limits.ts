@@ -7,8 +7,8 @@ export const LIMITS = {
   filesPerClaim: 40,
   bytesPerClaim: 200_000_000,
   noteCharacters: 4000,
-  importLines: 1_000_000,
-  importBytes: 300_000_000,
+  importLines: 250_000,
+  importBytes: 25_000_000,
 } as const;
 
 export const FILE_KINDS = ["photo", "runLog", "document"] as const;

@@ -18,6 +18,8 @@ export type MailParams = {
     rowIds: string[];
     answerBy: string;
   };
+  queryReminder: MailParams["queryAsked"];
+  claimLapsed: { link: string; number: string; distributor: string; answerBy: string };
   queryAnswered: { link: string; number: string; workshop: string; revision: number };
   claimDecided: {
     link: string;

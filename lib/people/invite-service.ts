@@ -16,6 +16,8 @@ import { allows } from "./rights-queries";
 /** How long an invitation can be taken up. */
 export const INVITATION_DAYS = 7;
 const MINUTES_A_DAY = 1440;
+/** How many letters one person may be sent in a day, the first included: more of them is no reminder. */
+const LETTERS_A_DAY = 5;
 
 export type Member = { readonly personId: string };
 type House = Organisation & { readonly name: string };
@@ -33,7 +35,7 @@ const sha256 = (text: string) => createHash("sha256").update(text).digest("hex")
 /** A fresh link for this address, mailed to it in its owner's language; who invites never sees it. */
 async function mailInvitation(work: Work, email: string, organisation: string): Promise<void> {
   const token = randomBytes(32).toString("base64url");
-  await rows(work, "select * from guarded.make_link($1, 'invitation', $2, $3)", [
+  await rows(work, "select guarded.make_link($1, 'invitation', $2, $3)", [
     email,
     sha256(token),
     INVITATION_DAYS * MINUTES_A_DAY,
@@ -64,8 +66,8 @@ type InviteRefusal =
   "notAllowed" | "addressUnreadable" | "memberAlready" | "rolesMissing" | "roleOfOtherSide";
 
 /**
- * Makes a person a member, with roles, and mails them a link to set their password. Whoever already has a password
- * elsewhere is told of the new organisation the same way: the page says the same either way.
+ * Invites a person, with roles, and mails them a link to accept. Whoever has an account elsewhere is invited the same
+ * way, and nothing they have there is shown here before they accept: who invites cannot tell the two apart.
  */
 export const invitePerson = (actor: Actor, input: Invitation): Promise<Outcome<Member, InviteRefusal>> =>
   unitOfWork(actor, async (work): Promise<Outcome<Member, InviteRefusal>> => {
@@ -91,9 +93,25 @@ export const invitePerson = (actor: Actor, input: Invitation): Promise<Outcome<M
     return ok({ personId: made.id });
   });
 
-type AgainRefusal = "notAllowed" | "notFound" | "invitationUsed";
+/** Letters to one person in the last day; the person's row is held, so that two requests at once count each other. */
+async function lettersToday(work: Work, personId: string): Promise<number> {
+  const { organisationId } = work.actor;
+  await rows(work, "select 1 from memberships where organisation_id = $1 and user_id = $2 for update", [
+    organisationId,
+    personId,
+  ]);
+  const [sent] = await rows<{ count: number }>(
+    work,
+    `select count(*)::integer as count from audit_log where organisation_id = $1 and detail ->> 'personId' = $2
+       and action in ('person.invited', 'person.invitedAgain') and at > now() - interval '1 day'`,
+    [organisationId, personId],
+  );
+  return sent?.count ?? 0;
+}
 
-/** Mails a fresh invitation to a member who has set no password yet; the older link ends. */
+type AgainRefusal = "notAllowed" | "notFound" | "invitationUsed" | "invitedOften";
+
+/** Mails a fresh invitation to a member who has not accepted yet; the older link ends. */
 export const inviteAgain = (
   actor: Actor,
   { personId }: MemberChange,
@@ -101,9 +119,11 @@ export const inviteAgain = (
   unitOfWork(actor, async (work): Promise<Outcome<Member, AgainRefusal>> => {
     const house = await houseOf(work);
     if (!house || !(await allows(work, "keepPeople"))) return refuse("notAllowed");
+    const letters = await lettersToday(work, personId);
     const person = (await peopleIn(work)).find(({ id }) => id === personId);
     if (!person || person.disabledAt) return refuse("notFound");
-    if (person.hasPassword) return refuse("invitationUsed");
+    if (person.acceptedAt) return refuse("invitationUsed");
+    if (letters >= LETTERS_A_DAY) return refuse("invitedOften", { most: LETTERS_A_DAY });
     await mailInvitation(work, person.email, house.name);
     await writeToAudit(work, "person.invitedAgain", { personId });
     return ok({ personId });

@@ -2,7 +2,7 @@
 export type Keeper = {
   readonly id: string;
   readonly isAdministrator: boolean;
-  /** Can sign in today: not switched off, and a password was set once. */
+  /** Can sign in today: not switched off, and the invitation was accepted. */
   readonly isAtWork: boolean;
 };
 

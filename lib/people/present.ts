@@ -7,7 +7,7 @@ export type PersonRow = {
   roles: string[];
   disabledAt: Date | null;
   lastSeenAt: Date | null;
-  hasPassword: boolean;
+  acceptedAt: Date | null;
 };
 
 export const PERSON_STATES = ["active", "invited", "disabled"] as const;
@@ -23,9 +23,9 @@ export type PersonView = {
   readonly lastSeenAt: Date | null;
 };
 
-const stateOf = ({ disabledAt, hasPassword }: PersonRow): PersonState => {
+const stateOf = ({ disabledAt, acceptedAt }: PersonRow): PersonState => {
   if (disabledAt) return "disabled";
-  return hasPassword ? "active" : "invited";
+  return acceptedAt ? "active" : "invited";
 };
 
 /** The row without what a page need not know. */
@@ -35,5 +35,5 @@ export const presentPerson = (row: PersonRow): PersonView => ({
   email: row.email,
   roles: ROLES.filter((role) => row.roles.includes(role)),
   state: stateOf(row),
-  lastSeenAt: row.lastSeenAt,
+  lastSeenAt: row.acceptedAt && row.lastSeenAt,
 });

@@ -15,7 +15,8 @@ export async function allows(work: Work, right: Right): Promise<boolean> {
     work,
     `select o.sells, o.buys, array(select r.role from membership_roles r
        join memberships m on m.organisation_id = r.organisation_id and m.user_id = r.user_id
-       where r.organisation_id = o.id and r.user_id = $2 and m.disabled_at is null) as roles
+       where r.organisation_id = o.id and r.user_id = $2 and m.accepted_at is not null
+         and m.disabled_at is null) as roles
      from organisations o where o.id = $1`,
     [organisationId, userId],
   );

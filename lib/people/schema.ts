@@ -33,5 +33,8 @@ export type PasswordChangeInput = z.infer<typeof passwordChangeInput>;
 /** One of a person's own sessions. */
 export const ownSessionInput = z.object({ session: z.uuid() });
 
+/** One of the organisations a person works for. */
+export const workplaceInput = z.object({ organisation: z.uuid() });
+
 /** An act that needs nothing but the person who does it. */
 export const nothingInput = z.object({});

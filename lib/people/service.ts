@@ -7,22 +7,16 @@ import { log } from "@/lib/web/log";
 import { hashPassword, passwordFits } from "@/lib/web/password";
 import { publicUrl } from "@/lib/web/settings";
 import { readAddress } from "./address";
+import { beginAttempt, clearAttempts, forgetAttempts, signInKeys } from "./attempt-service";
+import { lifeOf } from "./session-life";
 
 const sha256 = (text: string) => createHash("sha256").update(text).digest("hex");
 
-const accountKey = (email: string) => sha256(`account:${email}`);
-
 type Candidate = { user_id: string; password_hash: string | null; organisation_id: string; roles: string[] };
-
-/** How long a session lasts at most, and unused: a week at the bench, a working day where money is decided. */
-const lifeOf = (roles: readonly string[]) =>
-  roles.length > 0 && roles.every((role) => role === "technician")
-    ? { hours: 168, idleHours: 168 }
-    : { hours: 12, idleHours: 8 };
 
 /**
  * Checks a password and starts a session. Returns its id, or null for every reason alike: unknown, wrong, disabled or
- * too many tries (10 an account and 50 an address in 15 minutes, counted in the database).
+ * too many failed tries (10 an account and 50 an address in 15 minutes, counted in the database).
  */
 export async function signIn(given: {
   email: string;
@@ -31,23 +25,20 @@ export async function signIn(given: {
   device: string;
 }): Promise<string | null> {
   const email = readAddress(given.email);
-  const account = accountKey(email ?? given.email.slice(0, 300));
-  const [attempt] = await beforeSignIn<{ allowed: boolean }>(
-    "select guarded.begin_attempt($1, $2) as allowed",
-    [account, sha256(`address:${given.address}`)],
-  );
+  const keys = signInKeys(email ?? given.email.slice(0, 300), given.address);
+  const isAllowed = await beginAttempt(keys);
   const [candidate] = email
     ? await beforeSignIn<Candidate>("select * from guarded.sign_in_candidate($1)", [email])
     : [];
   // Behind the limit no password is looked at: hashing costs, and a flood must not get it for nothing.
   const fits =
-    attempt?.allowed && (await passwordFits(candidate?.password_hash ?? null, given.password.slice(0, 1000)));
-  if (!attempt?.allowed || !fits || !candidate) {
-    log.warn({ event: "signInRefused", account: account.slice(0, 12), throttled: !attempt?.allowed });
+    isAllowed && (await passwordFits(candidate?.password_hash ?? null, given.password.slice(0, 1000)));
+  if (!fits || !candidate) {
+    log.warn({ event: "signInRefused", account: keys.account.slice(0, 12), throttled: !isAllowed });
     return null;
   }
   const { hours, idleHours } = lifeOf(candidate.roles);
-  await beforeSignIn("select guarded.clear_attempts($1)", [account]);
+  await clearAttempts(keys);
   const [session] = await beforeSignIn<{ id: string | null }>(
     "select guarded.start_session($1, $2, $3, $4, $5) as id",
     [candidate.user_id, candidate.organisation_id, hours, idleHours, given.device.slice(0, 200)],
@@ -67,11 +58,7 @@ export async function requestReset(typedAddress: string, requestId: string): Pro
   await sequelize.transaction(async (transaction) => {
     const run = (sql: string, bind: unknown[]) =>
       sequelize.query(sql, { bind, transaction, type: QueryTypes.SELECT });
-    await run("select * from guarded.make_link($1, 'reset', $2, $3)", [
-      email ?? "",
-      sha256(token),
-      RESET_MINUTES,
-    ]);
+    await run("select guarded.make_link($1, 'reset', $2, $3)", [email ?? "", sha256(token), RESET_MINUTES]);
     await run("select guarded.mail_link_owner($1, 'passwordReset', $2, $3)", [
       sha256(token),
       JSON.stringify({ link: publicUrl(`/reset/${token}`), minutes: RESET_MINUTES }),
@@ -80,7 +67,14 @@ export async function requestReset(typedAddress: string, requestId: string): Pro
   });
 }
 
-export type LinkOwner = { email: string; name: string; purpose: string };
+/** Whose link it is; an invitation names the organisation that invites, and whether its reader has an account already. */
+export type LinkOwner = {
+  email: string;
+  name: string;
+  purpose: string;
+  organisation: string;
+  has_password: boolean;
+};
 
 /** Whose single-use link this is, while it can still be used. */
 export async function findLinkOwner(token: string): Promise<LinkOwner | null> {
@@ -88,14 +82,13 @@ export async function findLinkOwner(token: string): Promise<LinkOwner | null> {
   return owner ?? null;
 }
 
-/** Sets the password once; every session of the account ends. Returns the address, or null for a spent link. */
+/** Sets the password once, and accepts the invitation if it was one; every session of the account ends. Returns the address, or null for a spent link. */
 export async function setPasswordByLink(token: string, password: string): Promise<string | null> {
   const hashed = await hashPassword(password);
   const [used] = await beforeSignIn<{ email: string | null }>("select guarded.use_link($1, $2) as email", [
     sha256(token),
     hashed,
   ]);
-  // Whoever can read the account's mail is its owner: tries of somebody else no longer keep them out.
-  if (used?.email) await beforeSignIn("select guarded.clear_attempts($1)", [accountKey(used.email)]);
+  if (used?.email) await forgetAttempts(used.email);
   return used?.email ?? null;
 }

@@ -12,6 +12,8 @@ const settings = z.object({
   SMTP_HOST: z.string().min(1),
   SMTP_PORT: z.coerce.number().int(),
   MAIL_FROM: z.string().min(3),
+  /** How many proxies of ours a request passes before it reaches us. */
+  TRUSTED_PROXY: z.coerce.number().int().min(1).max(5),
 });
 
 const given = settings.partial();
@@ -24,6 +26,10 @@ export function setting<Name extends keyof Given>(name: Name): NonNullable<Given
     throw new Error(`The setting ${name} is missing or wrong: start the product with npm start`);
   return read;
 }
+
+/** A setting an installation may leave out. Throws where it is given and wrong. */
+export const settingIfGiven = <Name extends keyof Given>(name: Name): NonNullable<Given[Name]> | undefined =>
+  process.env[name] === undefined || process.env[name] === "" ? undefined : setting(name);
 
 /** Where this installation is reached. Links in mails are made from it and never from a request's headers. */
 export const publicUrl = (path = "/"): string => new URL(path, setting("PUBLIC_URL")).href;

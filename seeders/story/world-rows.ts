@@ -11,7 +11,7 @@ import { INSTALLERS } from "./workshops";
 /** The rows of everything beside the claims. The password is hashed once, for everybody. */
 export const worldRows = (world: World, passwordHash: string): Tables => ({
   ...houseRows(world.today),
-  ...peopleRows(passwordHash),
+  ...peopleRows(world.today, passwordHash),
   ...catalogueRows(world),
   ...salesRows(world),
   ...serviceRows(world),
@@ -39,7 +39,7 @@ function houseRows(today: CalendarDay): Tables {
   };
 }
 
-function peopleRows(passwordHash: string): Tables {
+function peopleRows(today: CalendarDay, passwordHash: string): Tables {
   const people = Object.values(PEOPLE).map(({ id, name, email, organisation, roles }) => {
     const { id: organisationId, language } = ORGANISATIONS[organisation];
     return { id, name, email, organisationId, language, roles };
@@ -54,7 +54,11 @@ function peopleRows(passwordHash: string): Tables {
       passwordHash,
       sessionVersion: 1,
     })),
-    memberships: people.map(({ id, organisationId }) => ({ userId: id, organisationId })),
+    memberships: people.map(({ id, organisationId }) => ({
+      userId: id,
+      organisationId,
+      acceptedAt: addDays(today, -YEARS_OPEN_DAYS),
+    })),
     membershipRoles: people.flatMap(({ id, organisationId, roles }) =>
       roles.map((role) => ({ userId: id, organisationId, role })),
     ),

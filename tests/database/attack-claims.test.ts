@@ -210,10 +210,17 @@ describe("the same step sent twenty times at once", () => {
         letter: "We cannot credit this claim.",
         returnWaivedReason: "Nothing to examine.",
       });
+    await adminQuery(
+      `insert into claim_revisions (claim_id, seller_id, workshop_id, revision, facts, sha256, sent_by_id)
+         select claim_id, seller_id, workshop_id, 2, facts, sha256, sent_by_id from claim_revisions where claim_id = $1`,
+      [claim.id],
+    );
+    await adminQuery("update claims set revision = 2 where id = $1", [claim.id]);
+    expect(await verdict(1)).toMatchObject({ code: "staleVersion" });
     expect(await verdict(0)).toMatchObject({ code: "staleVersion" });
-    expect(await verdict(2)).toMatchObject({ code: "staleVersion" });
-    expect(await verdict(1, colleague)).toMatchObject({ code: "moveNotOpen" });
-    expect(oks(await Promise.all(Array.from({ length: TIMES }, () => verdict(1))))).toBe(1);
+    expect(await verdict(3)).toMatchObject({ code: "staleVersion" });
+    expect(await verdict(2, colleague)).toMatchObject({ code: "moveNotOpen" });
+    expect(oks(await Promise.all(Array.from({ length: TIMES }, () => verdict(2))))).toBe(1);
     const verdicts = await adminQuery("select 1 from verdicts where claim_id = $1", [claim.id]);
     expect(verdicts).toHaveLength(1);
   });

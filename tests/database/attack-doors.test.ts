@@ -74,7 +74,7 @@ describe("the fields of a form", () => {
     for (let at = 0; at < 20_000; at += 1) form.append(`a${at}`, "");
     const started = performance.now();
     expect(Object.keys(formValues(form))).toHaveLength(20_000);
-    expect(performance.now() - started).toBeLessThan(1000);
+    expect(performance.now() - started).toBeLessThan(2000);
   });
 
   it("are read as before: the last text wins, a list keeps all, files and the framework's own are left out", () => {

@@ -4,7 +4,8 @@ import { putBackClaim, takeClaim } from "@/lib/claims/judging/service";
 import { CLAIM_STATES, MOVES, type ClaimMove, type ClaimState } from "@/lib/claims/lifecycle";
 import { moveClaim } from "@/lib/claims/moves/service";
 import { calendarDay } from "@/lib/kernel/calendar-day";
-import { ok } from "@/lib/kernel/outcome";
+import { appendToTimeline } from "@/lib/claims/timeline/service";
+import { ok, refuse } from "@/lib/kernel/outcome";
 import { actorAt } from "../support/actor";
 import {
   buildAccount,
@@ -133,6 +134,20 @@ describe("a move", () => {
       () => ok({ changes: { accountId: claim.id } }),
     );
     await expect(fault).rejects.toThrow(/foreign key/u);
+    expect(await stateOf(claim.id)).toEqual(["filed", 0]);
+  });
+
+  it("whose decision writes and then says no leaves nothing of it either", async () => {
+    const claim = await buildClaim(between, rowIn("filed"));
+    const answer = await moveClaim(
+      actorAt(between.seller, assessor, ["assessor"]),
+      { number: claim.number, move: "take" },
+      async (found, work) => {
+        await appendToTimeline(work, found, { kind: "take" });
+        return refuse("staleVersion");
+      },
+    );
+    expect(answer).toMatchObject({ ok: false, code: "staleVersion" });
     expect(await stateOf(claim.id)).toEqual(["filed", 0]);
   });
 });

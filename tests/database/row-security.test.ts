@@ -1,5 +1,5 @@
 import { beforeAll, describe, expect, it } from "vitest";
-import { answerOf, asRole, NOT_ALLOWED, type Row } from "../support/database";
+import { adminQuery, answerOf, asRole, NOT_ALLOWED, type Row } from "../support/database";
 import { allOf, contextOf, listTables, partiesOf, type Table } from "./organisation-tables";
 import { twoDistributors, type Member, type World } from "./two-distributors";
 
@@ -99,6 +99,20 @@ describe("row security, asked as web by SQL", () => {
       expect(await count(world.north, name, sql)).toEqual([name, 0]);
       expect(await count(world.workshops[0], name, sql)).toEqual([name, 1]);
     }
+  });
+
+  it("shows what one side says among its own people to that side alone", async () => {
+    const [shop] = world.workshops;
+    const body = "Among ourselves.";
+    await adminQuery(
+      `insert into claim_messages (claim_id, seller_id, workshop_id, author_id, author_name, author_organisation_id, audience, body)
+         select claim_id, seller_id, workshop_id, author_id, author_name, workshop_id, 'own', $3 from claim_messages
+         where seller_id = $1 and workshop_id = $2 limit 1`,
+      [world.north.id, shop.id, body],
+    );
+    const sql = "select author_organisation_id as by from claim_messages where body = $1";
+    expect(await asRole("web", contextOf(shop), sql, [body])).toEqual([{ by: shop.id }]);
+    expect(await asRole("web", contextOf(world.north), sql, [body])).toEqual([]);
   });
 
   it("shows nothing at all without a context, and after a context that has ended", async () => {

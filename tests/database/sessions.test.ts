@@ -3,7 +3,7 @@ import { beforeSignIn, newRequestId } from "@/lib/db/unit-of-work";
 import { findLinkOwner, requestReset, setPasswordByLink } from "@/lib/people/service";
 import { buildOrganisation, buildPerson, insertMembership } from "../support/build";
 import { adminQuery, asRole } from "../support/database";
-import { contextOf, hash, linkFor, startSession } from "./signed-in";
+import { contextOf, hash, invitationFor, linkFor, startSession } from "./signed-in";
 
 const PASSWORD = "harbour-flint-opal-42";
 
@@ -112,7 +112,7 @@ describe("a single-use link", () => {
   });
 
   it("closes the older ones: when a new one is asked for, and when one is used", async () => {
-    const [older, other] = [await linkFor(person), await linkFor(person, { purpose: "invitation" })];
+    const [older, other] = [await linkFor(person), await invitationFor(person, await buildOrganisation())];
     await requestReset(person.email, newRequestId());
     expect(await findLinkOwner(older)).toBeNull();
     expect(await findLinkOwner(other)).not.toBeNull();

@@ -1,6 +1,7 @@
 import { createHash, randomBytes } from "node:crypto";
 import { beforeSignIn } from "@/lib/db/unit-of-work";
 import { insertRow } from "../support/build";
+import { adminQuery } from "../support/database";
 
 type Id = { readonly id: string };
 
@@ -34,4 +35,14 @@ export async function linkFor(person: Id, over: Record<string, unknown> = {}): P
     ...over,
   });
   return secret;
+}
+
+/** An open invitation to an organisation the person has not accepted yet. */
+export async function invitationFor(person: Id, organisation: Id): Promise<string> {
+  await adminQuery(
+    `insert into memberships (user_id, organisation_id, invited_name, invited_email)
+     values ($1, $2, 'As invited', 'invited@example.test')`,
+    [person.id, organisation.id],
+  );
+  return linkFor(person, { purpose: "invitation", organisation_id: organisation.id });
 }

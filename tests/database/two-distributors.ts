@@ -50,6 +50,13 @@ async function fillOrganisation({ id, person }: Member) {
     key: randomUUID(),
     fingerprint: sha256(),
   });
+  await insertRow("single_use_links", {
+    user_id: person.id,
+    purpose: "invitation",
+    organisation_id: id,
+    token_hash: sha256(),
+    expires_at: "2036-01-01T00:00:00Z",
+  });
   await buildSite({ id });
   await asRole("web", { actor: person.id, org: id }, "select guarded.append_audit('signedIn', '{}')");
 }

@@ -62,7 +62,7 @@ export async function buildPerson(organisation: Id, roles: readonly Role[], over
 
 export async function insertMembership(person: Id, organisation: Id, roles: readonly Role[]) {
   const names = { user_id: person.id, organisation_id: organisation.id };
-  await insertRow("memberships", names);
+  await insertRow("memberships", { ...names, accepted_at: new Date() });
   for (const role of roles) await insertRow("membership_roles", { ...names, role });
 }
 

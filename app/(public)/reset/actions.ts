@@ -21,8 +21,10 @@ export async function setPasswordAction(_previous: unknown, form: FormData): Pro
   const fault = passwordFault(password);
   if (fault) return { ok: false, fields: { password: t(`faults.${fault}`, PASSWORD_CHARACTERS) }, typed: {} };
 
-  // Looked at first: hashing costs, and somebody who guesses links must not get it for nothing.
+  // Looked at first: hashing costs, and somebody who guesses links must not get it for nothing. An invitation never
+  // touches the password of an account that has one.
   const owner = await findOpenLink(token, purpose);
-  const email = owner ? await setPasswordByLink(token, password) : null;
+  const isOpen = owner && (purpose === "reset" || !owner.hasAccount);
+  const email = isOpen ? await setPasswordByLink(token, password) : null;
   return redirect(email ? "/sign-in?note=passwordSet" : `/${purpose}/${encodeURIComponent(token || "-")}`);
 }

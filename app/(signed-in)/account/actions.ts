@@ -11,12 +11,14 @@ import {
   endOwnSession,
   savePreferences,
 } from "@/lib/people/account/service";
+import { switchWorkplace } from "@/lib/people/account/workplace-service";
 import {
   nothingInput,
   ownSessionInput,
   PASSWORD_CHARACTERS,
   passwordChangeInput,
   preferencesInput,
+  workplaceInput,
 } from "@/lib/people/schema";
 import { endSession } from "@/lib/people/service";
 import { action, guardOrigin } from "@/lib/web/action";
@@ -29,6 +31,9 @@ const end = action(ownSessionInput, endOwnSession);
 const endOthers = action(nothingInput, async (actor) => endOtherSessions(actor, (await requireSession()).id));
 const change = action(passwordChangeInput, async (actor, typed) =>
   changePassword(actor, { ...typed, sessionId: (await requireSession()).id }),
+);
+const toWorkplace = action(workplaceInput, async (_actor, { organisation }) =>
+  switchWorkplace({ organisation, sessionId: (await requireSession()).id }),
 );
 
 /** Every act of this page ends on it again, with a line that says what came of it; script or not. */
@@ -67,6 +72,17 @@ export async function changePasswordAction(previous: unknown, form: FormData): P
   if (!result.value.sessionId) return redirect("/sign-in?note=passwordSet");
   await keepSession(result.value.sessionId);
   return backWith("passwordChanged");
+}
+
+/** Goes on at another organisation of the same person. */
+export async function switchWorkplaceAction(form: FormData): Promise<void> {
+  const result = await toWorkplace(null, form);
+  if (!result.ok) return backWith("notDone");
+  const { value } = result;
+  if (value.fault) return backWith(value.fault === "tooOld" ? "signInAnew" : "notDone");
+  await keepSession(value.sessionId);
+  revalidatePath("/", "layout");
+  return backWith("switched");
 }
 
 /** Ends the session row, takes the cookie away and says so on the sign-in page. */

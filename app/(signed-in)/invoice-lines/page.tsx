@@ -19,6 +19,12 @@ export async function generateMetadata(): Promise<Metadata> {
 
 type Props = { searchParams: Promise<Record<string, string | string[] | undefined>> };
 
+const MOST_CHARACTERS = 80;
+
+/** Words out of the page's address, as far as a file name or a heading needs them: anybody can write a link to here. */
+const plain = (words: string) => words.replace(/[^\p{L}\p{N} .,_()-]/gu, "");
+const short = (words: string) => plain(words).slice(0, MOST_CHARACTERS);
+
 /** Where an administrator sends what was sold and shipped, and sees what was sent before. */
 export default async function InvoiceLinesPage({ searchParams }: Props) {
   const [session, t, search] = await Promise.all([
@@ -28,7 +34,10 @@ export default async function InvoiceLinesPage({ searchParams }: Props) {
   ]);
   if (!may(session, "importInvoiceLines")) notFound();
   const { locale, timeZone } = session.actor;
-  const { refused, ...detail } = refusedQuery.parse(search);
+  const { refused, ...given } = refusedQuery.parse(search);
+  const { name, first, second, columns } = given;
+  const words = { name: short(name), first: short(first), second: short(second), columns: plain(columns) };
+  const detail = { ...given, ...words };
   const [imports, refusal] = await Promise.all([
     listImports(session.actor),
     refused ? wordingFor(refuse(refused, detail), locale) : undefined,

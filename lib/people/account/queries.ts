@@ -1,20 +1,15 @@
 import "server-only";
-import { createHash } from "node:crypto";
 import type { Actor } from "@/lib/access/actor";
 import { beforeSignIn, rows, unitOfWork } from "@/lib/db/unit-of-work";
 import { findLinkOwner } from "../service";
-import type { Administrator, LinkPurpose, OpenLink, OwnSession } from "./view";
+import type { Administrator, LinkPurpose, OpenLink, OwnSession, Workplace } from "./view";
 
-/** Whose link for this purpose it is, while it can be used; an invitation with the organisation that person was last added to. */
+/** Whose link for this purpose it is, while it can be used. */
 export async function findOpenLink(token: string, purpose: LinkPurpose): Promise<OpenLink | null> {
   const owner = await findLinkOwner(token);
   if (owner?.purpose !== purpose) return null;
-  if (purpose === "reset") return { ...owner, organisation: "" };
-  const [found] = await beforeSignIn<{ name: string | null }>(
-    "select guarded.link_organisation($1) as name",
-    [createHash("sha256").update(token).digest("hex")],
-  );
-  return { ...owner, organisation: found?.name ?? "" };
+  const { email, name, organisation, has_password: hasAccount } = owner;
+  return { email, name, purpose, organisation, hasAccount };
 }
 
 /** Where a person is signed in, the latest used first. */
@@ -37,9 +32,16 @@ export const listAdministrators = (actor: Actor): Promise<Administrator[]> =>
     rows<Administrator>(
       work,
       `select u.id, u.name, u.email from membership_roles r
-         join memberships m on m.organisation_id = r.organisation_id and m.user_id = r.user_id and m.disabled_at is null
+         join memberships m on m.organisation_id = r.organisation_id and m.user_id = r.user_id
+           and m.accepted_at is not null and m.disabled_at is null
          join users u on u.id = r.user_id and u.disabled_at is null
        where r.organisation_id = $1 and r.role = 'administrator' order by u.name, u.id`,
       [actor.organisationId],
     ),
   );
+
+/** Where the person of this session works: every organisation they have accepted and are not switched off in, by name. */
+export const listWorkplaces = (sessionId: string): Promise<Workplace[]> =>
+  beforeSignIn<Workplace>("select organisation_id as id, name, roles from guarded.organisations_of($1)", [
+    sessionId,
+  ]);

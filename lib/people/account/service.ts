@@ -1,24 +1,13 @@
 import "server-only";
-import { createHash } from "node:crypto";
 import { setTimeout } from "node:timers/promises";
 import type { Actor } from "@/lib/access/actor";
-import { beforeSignIn, rows, unitOfWork } from "@/lib/db/unit-of-work";
+import { rows, unitOfWork } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { hashPassword, passwordFits } from "@/lib/web/password";
 import { readAddress } from "../address";
+import { attemptKeys, beginAttempt, clearAttempts } from "../attempt-service";
 import { passwordFault, type PasswordChangeInput, type PasswordFault, type Preferences } from "../schema";
 import { requestReset } from "../service";
-
-const sha256 = (text: string) => createHash("sha256").update(text).digest("hex");
-
-/** Whether another try is allowed: ten for the first key and fifty for the second, in 15 minutes. */
-async function mayTry(account: string, address: string): Promise<boolean> {
-  const [attempt] = await beforeSignIn<{ allowed: boolean }>(
-    "select guarded.begin_attempt($1, $2) as allowed",
-    [sha256(account), sha256(address)],
-  );
-  return attempt?.allowed ?? false;
-}
 
 type LinkRequest = { readonly email: string; readonly address: string; readonly requestId: string };
 
@@ -28,7 +17,7 @@ const ANSWER_AFTER_MS = 300;
 /** Mails a link for a new password, and no more than ten to one account in 15 minutes. Never says which it was. */
 export async function askForReset({ email, address, requestId }: LinkRequest): Promise<void> {
   const answerAt = setTimeout(ANSWER_AFTER_MS);
-  if (await mayTry(`reset:${readAddress(email)}`, `resetFrom:${address}`))
+  if (await beginAttempt(attemptKeys(`reset:${readAddress(email)}`, `resetFrom:${address}`)))
     await requestReset(email, requestId);
   await answerAt;
 }
@@ -63,8 +52,8 @@ export async function changePassword(
 ): Promise<Outcome<PasswordChange, never>> {
   const fault = passwordFault(given.password);
   if (fault) return ok({ fault });
-  const account = `password:${actor.userId}`;
-  if (!(await mayTry(account, `passwordOf:${actor.userId}`))) return ok({ fault: "tooMany" });
+  const keys = attemptKeys(`password:${actor.userId}`, `passwordOf:${actor.userId}`);
+  if (!(await beginAttempt(keys))) return ok({ fault: "tooMany" });
   const [own] = await unitOfWork(actor, (work) =>
     rows<{ hash: string | null }>(work, "select guarded.own_password_hash() as hash"),
   );
@@ -83,7 +72,7 @@ export async function changePassword(
     );
     return started?.id ?? null;
   });
-  await beforeSignIn("select guarded.clear_attempts($1)", [sha256(account)]);
+  await clearAttempts(keys);
   return ok({ fault: null, sessionId });
 }
 

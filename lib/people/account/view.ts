@@ -4,8 +4,10 @@ export type LinkPurpose = "reset" | "invitation";
 export type OpenLink = {
   readonly email: string;
   readonly name: string;
-  readonly purpose: string;
+  readonly purpose: LinkPurpose;
   readonly organisation: string;
+  /** They have a password already, and an invitation leaves it as it is. */
+  readonly hasAccount: boolean;
 };
 
 /** A place where a person is signed in. */
@@ -17,3 +19,6 @@ export type OwnSession = {
 };
 
 export type Administrator = { readonly id: string; readonly name: string; readonly email: string };
+
+/** An organisation a person works for, and the roles they have there. */
+export type Workplace = { readonly id: string; readonly name: string; readonly roles: readonly string[] };

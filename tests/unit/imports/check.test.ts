@@ -1,14 +1,17 @@
 import { describe, expect, it } from "vitest";
 import { checked, PROBLEM_LINES_SHOWN } from "@/lib/imports/check";
 import { lineKey, unitKey, type KnownLine, type Recorded } from "@/lib/imports/known";
+import { atOnce } from "@/lib/imports/pieces";
 import { lineWith, looseLine, NOTHING_RECORDED, read, wrongIn } from "./invoice-file";
 
-const problemsOf = (recorded: Recorded, ...lines: readonly string[]) =>
-  checked(read(...lines), recorded).problems.map(({ line, code, detail }) => ({ line, code, detail }));
+const checkOf = async (recorded: Recorded, ...lines: readonly string[]) =>
+  atOnce(checked(await read(...lines), recorded));
+const problemsOf = async (recorded: Recorded, ...lines: readonly string[]) =>
+  (await checkOf(recorded, ...lines)).problems.map(({ line, code, detail }) => ({ line, code, detail }));
 
 describe("a line by itself", () => {
-  it("is taken as it should be, with a serial or with a quantity", () => {
-    expect(wrongIn(lineWith(), looseLine())).toEqual([]);
+  it("is taken as it should be, with a serial or with a quantity", async () => {
+    expect(await wrongIn(lineWith(), looseLine())).toEqual([]);
   });
 
   it.each([
@@ -42,19 +45,21 @@ describe("a line by itself", () => {
     ["tax rate", { taxCategory: "Z" }, "2 taxRate taxRateNotZero"],
     ["reason", { taxCategory: "E", taxRate: "0" }, "2 exemptionReason reasonMissing"],
     ["reason", { exemptionReason: "None" }, "2 exemptionReason reasonNotTaken"],
-  ])("is refused at its %s", (_name, over, problem) => {
-    expect(wrongIn(lineWith(over))).toContain(problem);
+  ])("is refused at its %s", async (_name, over, problem) => {
+    expect(await wrongIn(lineWith(over))).toContain(problem);
   });
 
   it.each([
     ["serial", { serial: "A1" }, "2 serial serialNotTaken"],
     ["batch", { batch: "L1" }, "2 batch batchNotTaken"],
-  ])("of a part without serial takes no %s", (_name, over, problem) => {
-    expect(wrongIn(looseLine(over))).toEqual([problem]);
+  ])("of a part without serial takes no %s", async (_name, over, problem) => {
+    expect(await wrongIn(looseLine(over))).toEqual([problem]);
   });
 
-  it("says everything that is wrong with it at once", () => {
-    expect(wrongIn(lineWith({ account: "K-7", part: "BR-7", netPrice: "", invoicedOn: "soon" }))).toEqual([
+  it("says everything that is wrong with it at once", async () => {
+    expect(
+      await wrongIn(lineWith({ account: "K-7", part: "BR-7", netPrice: "", invoicedOn: "soon" })),
+    ).toEqual([
       "2 account accountUnknown",
       "2 invoicedOn dayUnread",
       "2 part partUnknown",
@@ -62,8 +67,8 @@ describe("a line by itself", () => {
     ]);
   });
 
-  it("keeps what it says exactly: minor units, three decimals of the rate, days, the serial beside its normal form", () => {
-    const [line] = read(
+  it("keeps what it says exactly: minor units, three decimals of the rate, days, the serial beside its normal form", async () => {
+    const { invoiceLines } = await read(
       lineWith({
         invoicedOn: "2.3.2026",
         netPrice: '"184,5"',
@@ -71,8 +76,8 @@ describe("a line by itself", () => {
         serial: "aa-00 1",
         site: "mill lane",
       }),
-    ).invoiceLines;
-    expect(line?.first).toMatchObject({
+    );
+    expect(invoiceLines[0]?.first).toMatchObject({
       serial: { raw: "aa-00 1", normal: "AA001" },
       facts: {
         invoicedOn: "2026-03-02",
@@ -87,33 +92,39 @@ describe("a line by itself", () => {
 });
 
 describe("lines against each other", () => {
-  it("are one invoice line where they repeat its number with another serial", () => {
-    const { fresh, totals } = checked(
-      read(lineWith(), lineWith({ serial: "AA-2" }), looseLine()),
+  it("are one invoice line where they repeat its number with another serial", async () => {
+    const { fresh, totals } = await checkOf(
       NOTHING_RECORDED,
+      lineWith(),
+      lineWith({ serial: "AA-2" }),
+      looseLine(),
     );
     expect(fresh.map(({ lines }) => lines.length)).toEqual([2, 1]);
     expect(totals).toMatchObject({ invoiceLines: 2, units: 2, batches: 0 });
     expect(totals.sums).toEqual([{ minor: 18_450n * 2n + 18_450n * 6n, currency: "EUR" }]);
   });
 
-  it("may not repeat a serial, however it is spaced, nor a quantity, nor disagree", () => {
-    expect(wrongIn(lineWith(), lineWith({ line: "3", serial: "aa 1" }))).toEqual(["3 serial serialTwice"]);
-    expect(wrongIn(looseLine(), looseLine())).toEqual(["3 line lineTwice"]);
-    expect(wrongIn(lineWith(), lineWith({ serial: "AA-2", netPrice: "1" }))).toEqual(["3 line lineDiffers"]);
+  it("may not repeat a serial, however it is spaced, nor a quantity, nor disagree", async () => {
+    expect(await wrongIn(lineWith(), lineWith({ line: "3", serial: "aa 1" }))).toEqual([
+      "3 serial serialTwice",
+    ]);
+    expect(await wrongIn(looseLine(), looseLine())).toEqual(["3 line lineTwice"]);
+    expect(await wrongIn(lineWith(), lineWith({ serial: "AA-2", netPrice: "1" }))).toEqual([
+      "3 line lineDiffers",
+    ]);
   });
 
-  it("show the first hundred that cannot be taken, and count them all", () => {
+  it("show the first hundred that cannot be taken, and count them all", async () => {
     const many = Array.from({ length: 150 }, () => lineWith({ account: "", part: "" }));
-    const check = checked(read(...many), NOTHING_RECORDED);
+    const check = await checkOf(NOTHING_RECORDED, ...many);
     expect(check.problemLineCount).toBe(150);
     expect(new Set(check.problems.map(({ line }) => line)).size).toBe(PROBLEM_LINES_SHOWN);
   });
 });
 
-describe("lines against what is on record", () => {
-  const [whole] = read(looseLine()).invoiceLines;
-  const [single] = read(lineWith()).invoiceLines;
+describe("lines against what is on record", async () => {
+  const [whole] = (await read(looseLine())).invoiceLines;
+  const [single] = (await read(lineWith())).invoiceLines;
   if (!whole || !single) throw new Error("the usual lines were not taken");
   const existing = (id: string, of: typeof whole): KnownLine => ({
     id,
@@ -131,8 +142,8 @@ describe("lines against what is on record", () => {
     ]),
   };
 
-  it("are left as they are where all is equal", () => {
-    const check = checked(read(lineWith(), looseLine()), recorded);
+  it("are left as they are where all is equal", async () => {
+    const check = await checkOf(recorded, lineWith(), looseLine());
     expect(check).toMatchObject({ unchangedCount: 2, problemLineCount: 0, fresh: [] });
   });
 
@@ -141,14 +152,14 @@ describe("lines against what is on record", () => {
     ["quantity", looseLine({ quantity: "7" }), "quantity"],
     ["serial", lineWith({ serial: "AA-9" }), "serial"],
     ["batch", lineWith({ batch: "L1" }), "batch"],
-  ])("are refused where the %s differs, and the columns are named", (_name, line, columns) => {
-    expect(problemsOf(recorded, line)).toEqual([
+  ])("are refused where the %s differs, and the columns are named", async (_name, line, columns) => {
+    expect(await problemsOf(recorded, line)).toEqual([
       { line: 2, code: "lineExists", detail: expect.objectContaining({ columns }) },
     ]);
   });
 
-  it("are refused where the serial is on record with another invoice line", () => {
-    expect(problemsOf(recorded, lineWith({ invoice: "R-2" }))).toEqual([
+  it("are refused where the serial is on record with another invoice line", async () => {
+    expect(await problemsOf(recorded, lineWith({ invoice: "R-2" }))).toEqual([
       { line: 2, code: "serialKnown", detail: { invoice: "R-1", number: 1 } },
     ]);
   });

@@ -1,6 +1,8 @@
 import type { Catalogue, Recorded } from "@/lib/imports/known";
 import { readLines } from "@/lib/imports/check";
-import { readCsv, type CsvFile } from "@/lib/imports/read-csv";
+import type { CsvFile } from "@/lib/imports/csv-file";
+import { readCsv } from "@/lib/imports/csv-service";
+import { atOnce } from "@/lib/imports/pieces";
 import { calendarDay } from "@/lib/kernel/calendar-day";
 
 const TODAY = calendarDay("2026-05-11");
@@ -32,8 +34,8 @@ const USUAL = {
 export const looseLine = (over: Partial<Record<keyof typeof USUAL, string>> = {}): string =>
   lineWith({ part: "CH-1", serial: "", quantity: "6", line: "2", ...over });
 
-const fileOf = (...lines: readonly string[]): CsvFile => {
-  const read = readCsv(new TextEncoder().encode([HEAD, ...lines].join("\n")), 1000);
+const fileOf = async (...lines: readonly string[]): Promise<CsvFile> => {
+  const read = await readCsv(new TextEncoder().encode([HEAD, ...lines].join("\n")), 1000);
   if (!read.ok) throw new Error(read.code);
   return read.value;
 };
@@ -74,9 +76,11 @@ const CATALOGUE: Catalogue = {
 
 export const NOTHING_RECORDED: Recorded = { batches: new Map(), lines: new Map(), units: new Map() };
 
-export const read = (...lines: readonly string[]) =>
-  readLines(fileOf(...lines), { catalogue: CATALOGUE, today: TODAY });
+export const read = async (...lines: readonly string[]) =>
+  atOnce(readLines(await fileOf(...lines), { catalogue: CATALOGUE, today: TODAY }));
 
 /** What was found wrong, short: the line, the column and the code. */
-export const wrongIn = (...lines: readonly string[]): string[] =>
-  read(...lines).problems.map(({ line, column, code }) => `${line} ${column ?? "line"} ${code}`);
+export const wrongIn = async (...lines: readonly string[]): Promise<string[]> => {
+  const { problems } = await read(...lines);
+  return problems.map(({ line, column, code }) => `${line} ${column ?? "line"} ${code}`);
+};

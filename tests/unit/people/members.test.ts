@@ -39,13 +39,13 @@ describe("the state of a member", () => {
     roles: ["technician", "somethingElse"],
     disabledAt: null,
     lastSeenAt: null,
-    hasPassword: true,
+    acceptedAt: new Date(0),
   };
 
-  it("is invited until a password was set, and switched off whatever else", () => {
+  it("is invited until they accept, and switched off whatever else", () => {
     expect(presentPerson(row).state).toBe("active");
-    expect(presentPerson({ ...row, hasPassword: false }).state).toBe("invited");
-    expect(presentPerson({ ...row, hasPassword: false, disabledAt: new Date(0) }).state).toBe("disabled");
+    expect(presentPerson({ ...row, acceptedAt: null }).state).toBe("invited");
+    expect(presentPerson({ ...row, acceptedAt: null, disabledAt: new Date(0) }).state).toBe("disabled");
   });
 
   it("leaves out a role nobody knows", () => {

@@ -78,6 +78,8 @@ const MAILS = membersOf<MailKind>({
   invitation: true,
   claimFiled: true,
   queryAsked: true,
+  queryReminder: true,
+  claimLapsed: true,
   queryAnswered: true,
   claimDecided: true,
 });
@@ -96,7 +98,7 @@ export const FLAG_KINDS = [
 ] as const;
 
 /** Entries of the timeline that are no move. */
-const OTHER_ENTRIES = ["takenOver", "parked"];
+const OTHER_ENTRIES = ["takenOver", "parked", "reminded"];
 
 /** Each state of a claim as its mark says it: a decided one by its outcome. */
 const MARKED_STATES = [...CLAIM_STATES.filter((state) => state !== "decided"), ...VERDICT_OUTCOMES];
