@@ -20,10 +20,10 @@ const folder = mkdtempSync(join(tmpdir(), "partproof-mutations-"));
 const services = testServices();
 const running = new Set();
 
-let isCleaned = false;
-async function clean() {
-  if (isCleaned) return;
-  isCleaned = true;
+let cleaned;
+// Whoever comes second waits for the first: a command must not end in the middle of it.
+const clean = () => (cleaned ??= cleanOnce());
+async function cleanOnce() {
   for (const { pid } of running) {
     try {
       process.kill(-pid, "SIGKILL");
@@ -142,6 +142,7 @@ async function runLane(project, mutations, env) {
     red = await findRed(copy, project, { mutations, env });
   });
   for (const mutation of mutations) {
+    if (cleaned) return;
     const started = performance.now();
     const isRed = mutation.tests.some((filter) => red.includes(filter));
     const { isFound, why } = isRed

@@ -20,16 +20,17 @@ export function testServices() {
   const folder = mkdtempSync(join(tmpdir(), "partproof-test-"));
   const cluster = `/var/tmp/partproof-test-${process.pid}`;
   const processes = new Processes(join(folder, "log"), showDeath);
-  let isCleaned = false;
+  let cleaned;
 
-  const clean = async () => {
-    if (isCleaned) return;
-    isCleaned = true;
+  const cleanOnce = async () => {
     await processes.stop();
     stopCluster(cluster);
     removeCluster(cluster);
     rmSync(folder, { recursive: true, force: true });
   };
+
+  // Whoever comes second waits for the first: a command must not end in the middle of it.
+  const clean = () => (cleaned ??= cleanOnce());
 
   const start = async () => {
     const ports = {
