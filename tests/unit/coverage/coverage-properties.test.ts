@@ -8,6 +8,7 @@ import { day, factsWith, failed, termsWith } from "./facts";
 describe("whatever the terms and days", () => {
   const anyDays = (max: number) => fc.integer({ min: 0, max });
   const start = day("2020-01-31");
+  const ROOT_FITTED_AFTER = 20;
   const anyTerms = fc
     .record({
       coverMonths: fc.integer({ min: 1, max: 60 }),
@@ -26,11 +27,12 @@ describe("whatever the terms and days", () => {
       chained: fc.boolean(),
     })
     .map(({ terms, rootTerms, shippedAfter, fittedAfter, failedAfter, chained }) => {
-      const shippedOn = addDays(start, shippedAfter);
+      // A replacement is shipped after the unit it replaces was fitted, never before.
+      const shippedOn = addDays(start, shippedAfter + (chained ? ROOT_FITTED_AFTER : 0));
       return factsWith({
         terms,
         rootTerms,
-        chain: chained ? [{ shippedOn: start, fittedOn: addDays(start, 20) }] : [],
+        chain: chained ? [{ shippedOn: start, fittedOn: addDays(start, ROOT_FITTED_AFTER) }] : [],
         shipment: { shippedOn, to: "claimant" },
         fittedOn: fittedAfter === null ? null : addDays(shippedOn, fittedAfter),
         ...failed(addDays(shippedOn, failedAfter)),
