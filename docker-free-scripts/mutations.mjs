@@ -163,7 +163,7 @@ async function main() {
   if (chosen.length === 0) throw new Stop(`No mutation is called ${wanted.join(", ")}.`);
   const lanes = PROJECTS.map((project) => chosen.filter((mutation) => mutation.project === project));
   const [unit, database] = lanes;
-  const environment = database.length > 0 ? await services.start() : {};
+  const environment = database.length > 0 ? (await services.start()).environment : {};
   const ended = await Promise.allSettled([
     runLane("unit", unit, {}),
     runLane("database", database, environment),

@@ -2,17 +2,16 @@ import { spawnSync } from "node:child_process";
 import { join } from "node:path";
 import { root } from "./machine.mjs";
 import { Stop } from "./report.mjs";
-import { testServices } from "./test-services.mjs";
+import { cleanOnSignal, testServices } from "./test-services.mjs";
 
 // The database and route tests alone, on a cluster of their own: `node docker-free-scripts/test-database.mjs [filters]`.
 // What follows is handed to the test runner: file filters, `-t` and a name, or `-u` to write the committed dump anew.
 
 const services = testServices();
-for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"])
-  process.on(signal, () => services.clean().then(() => process.exit(130)));
+cleanOnSignal(services.clean);
 
 async function main() {
-  const environment = await services.start();
+  const { environment } = await services.start();
   const vitest = join(root, "node_modules/vitest/vitest.mjs");
   const run = spawnSync(
     process.execPath,

@@ -3,12 +3,10 @@ import { spawnSync } from "node:child_process";
 import { existsSync, mkdtempSync, readFileSync, rmSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { environmentFor, freshForTest, only } from "./environment.mjs";
+import { only } from "./environment.mjs";
 import { checkNode, needModules, needPackages, root } from "./machine.mjs";
-import { anyFreePort, step, Stop } from "./report.mjs";
+import { step, Stop } from "./report.mjs";
 
-/** The day the demo is reckoned back from in tests, so that every run sees the same claims. */
-const TODAY = "2026-11-30";
 const PARTS = ["static", "unit", "database", "browser"];
 
 const wanted =
@@ -82,20 +80,7 @@ function printFaults(log) {
   if (faults.length > 0) process.stdout.write(`Faults of the web:\n${faults.slice(-20).join("\n")}\n`);
 }
 
-/** What the product is told in a test, on ports nobody uses. */
-async function testEnvironment() {
-  const ports = {};
-  for (const name of ["web", "postgres", "store", "smtp", "mailbox"]) ports[name] = await anyFreePort();
-  const secrets = freshForTest();
-  const environment = {
-    ...environmentFor({ secrets, ports, folder }),
-    TEST_LOCALES: "1",
-    TZ: "Asia/Kathmandu",
-  };
-  return { ports, secrets, environment };
-}
-
-async function runInBrowser({ processes, ports, environment }) {
+async function runInBrowser({ processes, ports, environment, log }) {
   const { nextArgs, workerArgs } = await import("./services.mjs");
   const { waitFor } = await import("./processes.mjs");
   const { needBuild } = await import("./build.mjs");
@@ -110,46 +95,24 @@ async function runInBrowser({ processes, ports, environment }) {
     ...process.env,
     ...environment,
     BROWSER_REPORT: reportOf("browser"),
-    WEB_LOG: join(folder, "log", "web.log"),
   };
   const args = [join(root, "node_modules/@playwright/test/cli.js"), "test", ...filters];
   await step("Browser tests", () => runTests({ name: "browser", args, env, count: ofPlaywright }));
-  if (total.failed > 0) printFaults(env.WEB_LOG);
+  if (total.failed > 0) printFaults(log);
 }
 
 /** The tests that need a database, the store and the mail catcher: their own, on free ports, gone afterwards. */
 async function runWithServices() {
-  const { makeCluster, startCluster, stopCluster, removeCluster } = await import("./postgres.mjs");
-  const { Processes } = await import("./processes.mjs");
-  const { fillDatabase, startFakes } = await import("./services.mjs");
-  const { ports, secrets, environment } = await testEnvironment();
-  const cluster = `/var/tmp/partproof-test-${process.pid}`;
-  const processes = new Processes(join(folder, "log"), (name, code, log) =>
-    process.stderr.write(
-      `${name} stopped by itself (code ${code}):\n${readFileSync(log, "utf8").slice(-2000)}\n`,
-    ),
-  );
-  let isClean = false;
-  const clean = async () => {
-    if (isClean) return;
-    isClean = true;
-    await processes.stop();
-    stopCluster(cluster);
-    removeCluster(cluster);
-  };
-  for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"])
-    process.on(signal, () => clean().then(() => process.exit(130)));
+  const { cleanOnSignal, testServices } = await import("./test-services.mjs");
+  const changes = { TEST_LOCALES: "1", TZ: "Asia/Kathmandu" };
+  const { start, clean, processes, folder: log } = testServices({ withDemo: true, changes });
+  cleanOnSignal(clean);
   try {
-    await step("PostgreSQL", () => {
-      makeCluster(cluster, secrets.admin);
-      startCluster(cluster, ports.postgres, { durable: false });
-      return cluster;
-    });
-    await step("Store and mail catcher", () => startFakes(processes, environment));
-    await fillDatabase(environment, secrets, { today: TODAY });
+    const { environment, ports } = await start();
     if (wants("database"))
       await step("Database and route tests", () => runVitest("database", { ...process.env, ...environment }));
-    if (wants("browser")) await runInBrowser({ processes, ports, environment });
+    if (wants("browser"))
+      await runInBrowser({ processes, ports, environment, log: join(log, "log", "web.log") });
   } finally {
     await clean();
   }

@@ -222,6 +222,6 @@ export const down = async (run: Run) => {
     readings, claim_revisions, claim_moves, claim_lines, claim_drafts, claims cascade;
     drop function check_claim_move(), keep_claim_line(); drop policy keeper_units on units;`);
   await run(`set local role keeper;
-    drop function guarded.chain_timeline(), guarded.hold_unit(uuid, text), guarded.flag_claim(uuid, integer, text, jsonb), guarded.flag_serial(uuid, integer, text);
+    drop function guarded.chain_timeline(), guarded.hold_unit(uuid), guarded.flag_claim(uuid, integer, text, jsonb), guarded.flag_serial(uuid, integer, text);
     set local role partproof_owner;`);
 };

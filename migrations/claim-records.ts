@@ -192,30 +192,22 @@ export const holdUnit = `
   grant execute on function guarded.flag_serial(uuid, integer, text) to web;
 
   -- Looks across workshops and answers nothing. A second claim on a unit is stored, flagged and told to nobody but the
-  -- seller; so is a serial that was sold to somebody else, whose unit the claim never holds, or that nobody knows.
-  create function guarded.hold_unit(p_line uuid, p_serial_normal text default null) returns void
+  -- seller. Only who bought the unit holds it: an id that somebody guessed holds nothing.
+  create function guarded.hold_unit(p_line uuid) returns void
     language plpgsql security definer set search_path = pg_catalog, public, pg_temp as $body$
-    declare line claim_lines; wanted uuid; holder text;
+    declare line claim_lines; holder text;
     begin
       select * into line from claim_lines where id = p_line and workshop_id = ctx_org();
-      if line.id is null or line.holds_unit then return; end if;
-      wanted := coalesce(line.unit_id, (select id from units where seller_id = line.seller_id
-        and part_id = line.part_id and serial_normal = p_serial_normal));
-      if line.unit_id is null and p_serial_normal is not null then
-        perform guarded.flag_claim(line.claim_id, line.line_number,
-          case when wanted is null then 'serialUnknown' else 'soldElsewhere' end, '{}');
-      end if;
-      if wanted is null then return; end if;
-      perform pg_advisory_xact_lock(hashtextextended(wanted::text, 7));
+      if line.unit_id is null or line.holds_unit then return; end if;
+      perform pg_advisory_xact_lock(hashtextextended(line.unit_id::text, 7));
       select c.number into holder from claim_lines l join claims c on c.id = l.claim_id
-        where l.seller_id = line.seller_id and l.unit_id = wanted and l.holds_unit;
+        where l.seller_id = line.seller_id and l.unit_id = line.unit_id and l.holds_unit;
       if holder is not null then
         perform guarded.flag_claim(line.claim_id, line.line_number, 'unitHeld', jsonb_build_object('otherClaim', holder));
       elsif exists (select 1 from units where id = line.unit_id and buyer_id = line.workshop_id) then
-        -- Only who bought the unit holds it: an id that somebody guessed holds nothing.
         update claim_lines set holds_unit = true where id = p_line;
       end if;
     end $body$;
-  revoke all on function guarded.hold_unit(uuid, text) from public;
-  grant execute on function guarded.hold_unit(uuid, text) to web;
+  revoke all on function guarded.hold_unit(uuid) from public;
+  grant execute on function guarded.hold_unit(uuid) to web;
 `;

@@ -175,33 +175,25 @@ CREATE FUNCTION guarded.hold_query(p_query uuid) RETURNS TABLE(query_id uuid, as
 
 ALTER FUNCTION guarded.hold_query(p_query uuid) OWNER TO keeper;
 
-CREATE FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text DEFAULT NULL::text) RETURNS void
+CREATE FUNCTION guarded.hold_unit(p_line uuid) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
     AS $$
-    declare line claim_lines; wanted uuid; holder text;
+    declare line claim_lines; holder text;
     begin
       select * into line from claim_lines where id = p_line and workshop_id = ctx_org();
-      if line.id is null or line.holds_unit then return; end if;
-      wanted := coalesce(line.unit_id, (select id from units where seller_id = line.seller_id
-        and part_id = line.part_id and serial_normal = p_serial_normal));
-      if line.unit_id is null and p_serial_normal is not null then
-        perform guarded.flag_claim(line.claim_id, line.line_number,
-          case when wanted is null then 'serialUnknown' else 'soldElsewhere' end, '{}');
-      end if;
-      if wanted is null then return; end if;
-      perform pg_advisory_xact_lock(hashtextextended(wanted::text, 7));
+      if line.unit_id is null or line.holds_unit then return; end if;
+      perform pg_advisory_xact_lock(hashtextextended(line.unit_id::text, 7));
       select c.number into holder from claim_lines l join claims c on c.id = l.claim_id
-        where l.seller_id = line.seller_id and l.unit_id = wanted and l.holds_unit;
+        where l.seller_id = line.seller_id and l.unit_id = line.unit_id and l.holds_unit;
       if holder is not null then
         perform guarded.flag_claim(line.claim_id, line.line_number, 'unitHeld', jsonb_build_object('otherClaim', holder));
       elsif exists (select 1 from units where id = line.unit_id and buyer_id = line.workshop_id) then
-        -- Only who bought the unit holds it: an id that somebody guessed holds nothing.
         update claim_lines set holds_unit = true where id = p_line;
       end if;
     end $$;
 
-ALTER FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text) OWNER TO keeper;
+ALTER FUNCTION guarded.hold_unit(p_line uuid) OWNER TO keeper;
 
 CREATE FUNCTION guarded.invitation_candidate(p_token_hash text) RETURNS TABLE(user_id uuid, email text, password_hash text, roles text[])
     LANGUAGE plpgsql SECURITY DEFINER
@@ -2441,8 +2433,8 @@ GRANT ALL ON FUNCTION guarded.flag_serial(p_claim uuid, p_line integer, p_serial
 REVOKE ALL ON FUNCTION guarded.hold_query(p_query uuid) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.hold_query(p_query uuid) TO worker;
 
-REVOKE ALL ON FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text) FROM PUBLIC;
-GRANT ALL ON FUNCTION guarded.hold_unit(p_line uuid, p_serial_normal text) TO web;
+REVOKE ALL ON FUNCTION guarded.hold_unit(p_line uuid) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.hold_unit(p_line uuid) TO web;
 
 REVOKE ALL ON FUNCTION guarded.invitation_candidate(p_token_hash text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.invitation_candidate(p_token_hash text) TO web;

@@ -1,6 +1,6 @@
 import { useTranslations } from "next-intl";
-import { Card } from "@/components/ui/card";
-import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
+import { SheetTable } from "@/components/ui/sheet-table";
+import { Row, RowHead, Td } from "@/components/ui/table";
 
 type AccountItem = {
   readonly number: string;
@@ -21,20 +21,11 @@ const COLUMNS = ["number", "buyer", "sites", "currency", "state"] as const;
 export function AccountTable({ accounts }: { accounts: readonly AccountItem[] }) {
   const t = useTranslations("accounts");
   return (
-    <Card isInCharge>
-      <Table caption={t("caption")} isHeadSticky>
-        <TableHead>
-          {COLUMNS.map((column) => (
-            <Th key={column}>{t(`columns.${column}`)}</Th>
-          ))}
-        </TableHead>
-        <TableBody>
-          {accounts.map((account) => (
-            <AccountRow key={account.number} account={account} />
-          ))}
-        </TableBody>
-      </Table>
-    </Card>
+    <SheetTable caption={t("caption")} heads={COLUMNS.map((column) => t(`columns.${column}`))}>
+      {accounts.map((account) => (
+        <AccountRow key={account.number} account={account} />
+      ))}
+    </SheetTable>
   );
 }
 

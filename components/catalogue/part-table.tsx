@@ -1,7 +1,7 @@
 import { useTranslations } from "next-intl";
 import { TextLink } from "@/components/ui/link-button";
-import { Card } from "@/components/ui/card";
-import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
+import { SheetTable } from "@/components/ui/sheet-table";
+import { Row, RowHead, Td } from "@/components/ui/table";
 
 type PartItem = {
   readonly partNumber: string;
@@ -18,20 +18,11 @@ const COLUMNS = ["number", "name", "family", "maker", "supersededBy", "tracking"
 export function PartTable({ parts }: { parts: readonly PartItem[] }) {
   const t = useTranslations("catalogue");
   return (
-    <Card isInCharge>
-      <Table caption={t("caption")} isHeadSticky>
-        <TableHead>
-          {COLUMNS.map((column) => (
-            <Th key={column}>{t(`columns.${column}`)}</Th>
-          ))}
-        </TableHead>
-        <TableBody>
-          {parts.map((part) => (
-            <PartRow key={part.partNumber} part={part} />
-          ))}
-        </TableBody>
-      </Table>
-    </Card>
+    <SheetTable caption={t("caption")} heads={COLUMNS.map((column) => t(`columns.${column}`))}>
+      {parts.map((part) => (
+        <PartRow key={part.partNumber} part={part} />
+      ))}
+    </SheetTable>
   );
 }
 

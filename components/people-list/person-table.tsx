@@ -1,8 +1,8 @@
 import { useTranslations } from "next-intl";
 import { TextLink } from "@/components/ui/link-button";
 import { Mark } from "@/components/ui/status-mark";
-import { Card } from "@/components/ui/card";
-import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
+import { SheetTable } from "@/components/ui/sheet-table";
+import { Row, RowHead, Td } from "@/components/ui/table";
 import type { Role } from "@/lib/access/roles";
 
 type PersonItem = {
@@ -28,20 +28,11 @@ const COLUMNS = ["name", "roles", "lastSeen", "state", "change"] as const;
 export function PersonTable({ people }: { people: readonly PersonItem[] }) {
   const t = useTranslations("people");
   return (
-    <Card isInCharge>
-      <Table caption={t("caption")} isHeadSticky>
-        <TableHead>
-          {COLUMNS.map((column) => (
-            <Th key={column}>{t(`columns.${column}`)}</Th>
-          ))}
-        </TableHead>
-        <TableBody>
-          {people.map((person) => (
-            <PersonRow key={person.id} person={person} />
-          ))}
-        </TableBody>
-      </Table>
-    </Card>
+    <SheetTable caption={t("caption")} heads={COLUMNS.map((column) => t(`columns.${column}`))}>
+      {people.map((person) => (
+        <PersonRow key={person.id} person={person} />
+      ))}
+    </SheetTable>
   );
 }
 

@@ -42,7 +42,7 @@ export const RECORDS = [
     name: "two claims hold a unit: no lock",
     guarantee: 24,
     file: RECORD_SQL,
-    from: "      perform pg_advisory_xact_lock(hashtextextended(wanted::text, 7));\n",
+    from: "      perform pg_advisory_xact_lock(hashtextextended(line.unit_id::text, 7));\n",
     to: "",
     tests: ["database/unit-lock"],
     project: "database",

@@ -2,6 +2,7 @@ import "server-only";
 import { randomUUID } from "node:crypto";
 import { QueryTypes, type Transaction } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
+import type { Outcome, Refusal } from "@/lib/kernel/outcome";
 import { sequelize } from "./sequelize";
 
 /** What every query needs: pass it as the options of a model's call, so that it runs inside the transaction. */
@@ -39,6 +40,32 @@ export async function unitOfWork<T>(actor: Actor, act: (work: Work) => Promise<T
       if (attempt >= TRIES || !SERIALIZATION_FAULTS.has(sqlState(fault) ?? "")) throw fault;
       await new Promise((resolve) => setTimeout(resolve, 10 * 2 ** attempt * (0.5 + Math.random())));
     }
+  }
+}
+
+/** Thrown to take back what was written before a refusal was found; `undoing` then answers with that refusal. */
+class Undone extends Error {
+  constructor(code: string) {
+    super(`refused: ${code}`);
+  }
+}
+
+/** A unit of work whose refusal undoes everything it wrote. */
+export async function undoing<T, Code extends string>(
+  actor: Actor,
+  act: (work: Work) => Promise<Outcome<T, Code>>,
+): Promise<Outcome<T, Code>> {
+  const found: { refusal?: Refusal<Code> } = {};
+  try {
+    return await unitOfWork(actor, async (work) => {
+      const outcome = await act(work);
+      if (outcome.ok) return outcome;
+      found.refusal = outcome;
+      throw new Undone(outcome.code);
+    });
+  } catch (fault) {
+    if (fault instanceof Undone && found.refusal) return found.refusal;
+    throw fault;
   }
 }
 

@@ -2,13 +2,12 @@ import "server-only";
 import { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
 import { hasRight } from "@/lib/access/rights";
-import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { rows, undoing, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { FILE_KINDS, LIMITS, type FileKind } from "@/lib/kernel/limits";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { originalKey } from "@/lib/storage/keys";
 import { copyOnce, remove } from "@/lib/storage/objects";
 import { receiveFile, type Received, type ReceiveRefusal } from "@/lib/storage/receive";
-import { undoing } from "@/lib/claims/moves/service";
 import { presentEvidence, type EvidenceRow } from "./present";
 import { EVIDENCE, isEvidenceId } from "./queries";
 

@@ -1,8 +1,7 @@
 import "server-only";
 import { UniqueConstraintError } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
-import { undoing } from "@/lib/claims/moves/service";
-import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { rows, undoing, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { LIMITS, mostBytes } from "@/lib/kernel/limits";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { importKey } from "@/lib/storage/keys";

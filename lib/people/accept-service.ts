@@ -1,8 +1,8 @@
 import "server-only";
-import { createHash } from "node:crypto";
 import { beforeSignIn } from "@/lib/db/unit-of-work";
 import { log } from "@/lib/web/log";
 import { passwordFits } from "@/lib/web/password";
+import { sha256Of } from "@/lib/web/sha256";
 import { beginAttempt, clearAttempts, signInKeys } from "./attempt-service";
 import { lifeOf } from "./session-life";
 
@@ -19,7 +19,7 @@ type Acceptance = {
  * it is, and start at the organisation that invited. Returns the session's id, or null for every reason alike.
  */
 export async function acceptInvitation(given: Acceptance): Promise<string | null> {
-  const hashed = createHash("sha256").update(given.token).digest("hex");
+  const hashed = sha256Of(given.token);
   const [candidate] = await beforeSignIn<Candidate>("select * from guarded.invitation_candidate($1)", [
     hashed,
   ]);

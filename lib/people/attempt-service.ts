@@ -1,22 +1,20 @@
 import "server-only";
-import { createHash } from "node:crypto";
 import { beforeSignIn } from "@/lib/db/unit-of-work";
-
-const sha256 = (text: string) => createHash("sha256").update(text).digest("hex");
+import { sha256Of } from "@/lib/web/sha256";
 
 /** Whose tries are counted: ten for the account and fifty for where they come from, in 15 minutes. */
 type AttemptKeys = { readonly account: string; readonly address: string };
 
 /** What tries to open the account of this address are counted under. */
 export const signInKeys = (email: string, address: string): AttemptKeys => ({
-  account: sha256(`account:${email}`),
-  address: sha256(`address:${address}`),
+  account: sha256Of(`account:${email}`),
+  address: sha256Of(`address:${address}`),
 });
 
 /** The same for anything else that must not be tried without end. */
 export const attemptKeys = (account: string, address: string): AttemptKeys => ({
-  account: sha256(account),
-  address: sha256(address),
+  account: sha256Of(account),
+  address: sha256Of(address),
 });
 
 /** Counts a try and says whether it is allowed. It counts before anything is looked at, so many at once gain nothing. */

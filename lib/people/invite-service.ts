@@ -1,11 +1,11 @@
 import "server-only";
-import { createHash, randomBytes } from "node:crypto";
 import type { Actor } from "@/lib/access/actor";
 import type { Organisation } from "@/lib/access/rights";
 import type { Role } from "@/lib/access/roles";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { publicUrl } from "@/lib/web/settings";
+import { newToken, sha256Of } from "@/lib/web/sha256";
 import { readAddress } from "./address";
 import { writeToAudit } from "./audit-service";
 import type { Invitation, MemberChange } from "./member-schema";
@@ -30,14 +30,12 @@ export async function houseOf(work: Work): Promise<House | null> {
   return house ?? null;
 }
 
-const sha256 = (text: string) => createHash("sha256").update(text).digest("hex");
-
 /** A fresh link for this address, mailed to it in its owner's language; who invites never sees it. */
 async function mailInvitation(work: Work, email: string, organisation: string): Promise<void> {
-  const token = randomBytes(32).toString("base64url");
+  const token = newToken();
   await rows(work, "select guarded.make_link($1, 'invitation', $2, $3)", [
     email,
-    sha256(token),
+    sha256Of(token),
     INVITATION_DAYS * MINUTES_A_DAY,
   ]);
   const params = {
@@ -47,7 +45,7 @@ async function mailInvitation(work: Work, email: string, organisation: string): 
     days: INVITATION_DAYS,
   };
   await rows(work, "select guarded.mail_link_owner($1, 'invitation', $2, $3)", [
-    sha256(token),
+    sha256Of(token),
     JSON.stringify(params),
     work.actor.requestId,
   ]);

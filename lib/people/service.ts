@@ -1,16 +1,14 @@
 import "server-only";
-import { createHash, randomBytes } from "node:crypto";
 import { QueryTypes } from "sequelize";
 import { sequelize } from "@/lib/db/sequelize";
 import { beforeSignIn } from "@/lib/db/unit-of-work";
 import { log } from "@/lib/web/log";
 import { hashPassword, passwordFits } from "@/lib/web/password";
 import { publicUrl } from "@/lib/web/settings";
+import { newToken, sha256Of } from "@/lib/web/sha256";
 import { readAddress } from "./address";
 import { beginAttempt, clearAttempts, forgetAttempts, signInKeys } from "./attempt-service";
 import { lifeOf } from "./session-life";
-
-const sha256 = (text: string) => createHash("sha256").update(text).digest("hex");
 
 type Candidate = { user_id: string; password_hash: string | null; organisation_id: string; roles: string[] };
 
@@ -54,13 +52,13 @@ export const RESET_MINUTES = 30;
 /** Mails a link to set a new password, if the account exists. Takes the same steps and says the same either way. */
 export async function requestReset(typedAddress: string, requestId: string): Promise<void> {
   const email = readAddress(typedAddress);
-  const token = randomBytes(32).toString("base64url");
+  const token = newToken();
   await sequelize.transaction(async (transaction) => {
     const run = (sql: string, bind: unknown[]) =>
       sequelize.query(sql, { bind, transaction, type: QueryTypes.SELECT });
-    await run("select guarded.make_link($1, 'reset', $2, $3)", [email ?? "", sha256(token), RESET_MINUTES]);
+    await run("select guarded.make_link($1, 'reset', $2, $3)", [email ?? "", sha256Of(token), RESET_MINUTES]);
     await run("select guarded.mail_link_owner($1, 'passwordReset', $2, $3)", [
-      sha256(token),
+      sha256Of(token),
       JSON.stringify({ link: publicUrl(`/reset/${token}`), minutes: RESET_MINUTES }),
       requestId,
     ]);
@@ -78,7 +76,7 @@ export type LinkOwner = {
 
 /** Whose single-use link this is, while it can still be used. */
 export async function findLinkOwner(token: string): Promise<LinkOwner | null> {
-  const [owner] = await beforeSignIn<LinkOwner>("select * from guarded.link_owner($1)", [sha256(token)]);
+  const [owner] = await beforeSignIn<LinkOwner>("select * from guarded.link_owner($1)", [sha256Of(token)]);
   return owner ?? null;
 }
 
@@ -86,7 +84,7 @@ export async function findLinkOwner(token: string): Promise<LinkOwner | null> {
 export async function setPasswordByLink(token: string, password: string): Promise<string | null> {
   const hashed = await hashPassword(password);
   const [used] = await beforeSignIn<{ email: string | null }>("select guarded.use_link($1, $2) as email", [
-    sha256(token),
+    sha256Of(token),
     hashed,
   ]);
   if (used?.email) await forgetAttempts(used.email);

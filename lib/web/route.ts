@@ -1,5 +1,4 @@
 import "server-only";
-import { createHash } from "node:crypto";
 import { getTranslations } from "next-intl/server";
 import type { z } from "zod";
 import type { Locale } from "@/lib/kernel/locale";
@@ -9,6 +8,7 @@ import { withIdempotency } from "./idempotency";
 import { log } from "./log";
 import { isFromOurPages } from "./origin";
 import { problemResponse, type FieldProblem } from "./problem";
+import { sha256Of } from "./sha256";
 import { currentSession, requestIdOf, type Session } from "./session";
 import { wordingFor, type RefusalCode } from "./wording";
 
@@ -236,7 +236,7 @@ async function serve<Params, Body>(
   }
   const act = async () => answer(await handler({ ...asked, body: body.data }), session);
   if (!options.idempotent) return act();
-  const fingerprint = createHash("sha256").update(text).digest("hex");
+  const fingerprint = sha256Of(text);
   return withIdempotency(
     { actor: session.actor, route: options.name, key: request.headers.get("idempotency-key"), fingerprint },
     act,

@@ -18,7 +18,7 @@ export function flagsOf(one: Case, plans: Plans): Flag[] {
     other.lines.some(({ unit }) => unit && normaliseSerial(unit.serial) === serial),
   );
   return [
-    { kind: "soldElsewhere", lineNumber: 1, detail: {} },
+    { kind: "soldToOther", lineNumber: 1, detail: {} },
     { kind: "unitHeld", lineNumber: 1, detail: { otherClaim: holder?.number ?? "" } },
   ];
 }

@@ -11,7 +11,7 @@ import { addressOf } from "@/lib/web/address";
 import { formValues } from "@/lib/web/form-values";
 import { isFromOurPages } from "@/lib/web/origin";
 import { currentSession } from "@/lib/web/session";
-import { keepSession } from "../../(signed-in)/account/session-cookie";
+import { keepSession } from "@/lib/web/session-cookie";
 
 /** Accepts an invitation with the password the account has. What was open in this browser ends; its place is taken. */
 export async function acceptInvitationAction(_previous: unknown, form: FormData): Promise<ActionResult> {

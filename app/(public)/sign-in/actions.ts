@@ -1,16 +1,14 @@
 "use server";
 
-import { cookies, headers } from "next/headers";
+import { headers } from "next/headers";
 import { redirect } from "next/navigation";
-import { encode } from "next-auth/jwt";
 import { getTranslations } from "next-intl/server";
 import type { ActionResult } from "@/lib/kernel/action-result";
 import { signIn } from "@/lib/people/service";
-import { SESSION_COOKIE, SESSION_SECONDS } from "@/lib/web/cookie";
 import { addressOf } from "@/lib/web/address";
 import { formValues } from "@/lib/web/form-values";
 import { isFromOurPages } from "@/lib/web/origin";
-import { isSecure, setting } from "@/lib/web/settings";
+import { keepSession } from "@/lib/web/session-cookie";
 
 const textOf = (value: string | readonly string[] | undefined): string =>
   typeof value === "string" ? value : "";
@@ -29,14 +27,6 @@ export async function signInAction(_previous: unknown, form: FormData): Promise<
   });
   if (!sid) return { ok: false, message: t("refused"), fields: {}, typed };
 
-  const token = await encode({ token: { sid }, secret: setting("NEXTAUTH_SECRET"), maxAge: SESSION_SECONDS });
-  const jar = await cookies();
-  jar.set(SESSION_COOKIE(), token, {
-    httpOnly: true,
-    sameSite: "lax",
-    path: "/",
-    secure: isSecure(),
-    maxAge: SESSION_SECONDS,
-  });
+  await keepSession(sid);
   return redirect("/");
 }

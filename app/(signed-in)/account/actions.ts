@@ -24,7 +24,7 @@ import { endSession } from "@/lib/people/service";
 import { action, guardOrigin } from "@/lib/web/action";
 import { LOCALE_COOKIE } from "@/lib/web/chosen-locale";
 import { currentSession, requireSession } from "@/lib/web/session";
-import { forgetSession, keepSession } from "./session-cookie";
+import { forgetSession, keepSession } from "@/lib/web/session-cookie";
 
 const save = action(preferencesInput, savePreferences);
 const end = action(ownSessionInput, endOwnSession);

@@ -12,7 +12,9 @@ import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { calendarDay, dayInZone, parseCalendarDay, type CalendarDay } from "@/lib/kernel/calendar-day";
 import { normaliseSerial } from "@/lib/labels/serial";
 import { findRule, type Rule } from "@/lib/rule-book/queries";
+import type { ClaimFacts, FactLine } from "../facts-shape";
 import { printClaimNumber } from "../number";
+import { zoneOf } from "../parties/queries";
 
 /** What is known of a line when its cover is asked: the ids are the database's, the days those of the claim. */
 export type LineToCover = {
@@ -29,6 +31,28 @@ export type LineToCover = {
   readonly filedOn: CalendarDay;
   readonly evidenceMissing: number;
 };
+
+type Between = { readonly id: string; readonly sellerId: string; readonly workshopId: string };
+
+/** A line as it was sent, asked for its cover. */
+export const lineToCover = (
+  claim: Between,
+  { facts, line }: { readonly facts: ClaimFacts; readonly line: FactLine },
+  evidenceMissing: number,
+): LineToCover => ({
+  claimId: claim.id,
+  sellerId: claim.sellerId,
+  workshopId: claim.workshopId,
+  family: facts.family,
+  partId: line.part.id,
+  unitId: line.unit?.id ?? null,
+  serialTyped: line.serialTyped,
+  shippedOn: line.invoiceLine?.shippedOn ?? null,
+  fittedOn: line.fittedOn,
+  failedOn: calendarDay(facts.failedOn),
+  filedOn: calendarDay(facts.filedOn),
+  evidenceMissing,
+});
 
 export type CoveredLine = { readonly coverage: Coverage; readonly terms: Rule<"terms"> | null };
 
@@ -89,15 +113,6 @@ const listOthers = (work: Work, line: LineToCover, unitId: string): Promise<Othe
      where l.seller_id = $1 and l.unit_id = $2 and l.claim_id <> $3 order by c.filed_at`,
     [line.sellerId, unitId, line.claimId],
   );
-
-async function zoneOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ zone: string }>(
-    work,
-    "select time_zone as zone from organisations where id = $1",
-    [organisationId],
-  );
-  return found?.zone ?? "UTC";
-}
 
 type Gathered = {
   unit: UnitRow | null;

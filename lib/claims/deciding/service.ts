@@ -1,14 +1,14 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { rows, type Work } from "@/lib/db/unit-of-work";
-import { addDays, calendarDay } from "@/lib/kernel/calendar-day";
+import { addDays } from "@/lib/kernel/calendar-day";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { mailClaimPeople } from "@/lib/mail/outbox";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
-import { coverageForBoth, type CoveredLine } from "../cover/queries";
+import { coverageForBoth, lineToCover, type CoveredLine } from "../cover/queries";
 import { claimFacts, type ClaimFacts } from "../facts-shape";
-import { nameOf } from "../judging/queries";
+import { nameOf } from "../parties/queries";
 import { todayOf } from "../judging/service";
 import { moveClaim } from "../moves/service";
 import { printClaimNumber } from "../number";
@@ -61,20 +61,7 @@ async function coverLine(
 ): Promise<CoveredLine> {
   const line = facts.lines.find((one) => one.lineNumber === lineNumber);
   if (!line) throw new Error(`claim ${claim.number} has no line ${lineNumber} in its facts`);
-  return coverageForBoth(work, {
-    claimId: claim.id,
-    sellerId: claim.sellerId,
-    workshopId: claim.workshopId,
-    family: facts.family,
-    partId: line.part.id,
-    unitId: line.unit?.id ?? null,
-    serialTyped: line.serialTyped,
-    shippedOn: line.invoiceLine?.shippedOn ?? null,
-    fittedOn: line.fittedOn,
-    failedOn: calendarDay(facts.failedOn),
-    filedOn: calendarDay(facts.filedOn),
-    evidenceMissing: 0,
-  });
+  return coverageForBoth(work, lineToCover(claim, { facts, line }, 0));
 }
 
 type Given = { input: DecideInput; lines: readonly LineIds[]; seen: Seen };

@@ -9,6 +9,7 @@ import { evidenceListOn } from "@/lib/rule-book/queries";
 import { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
 import { type ClaimDraft, type DraftLine } from "../draft";
+import { zoneOf } from "../parties/queries";
 import { seesClaim } from "../seeing";
 import { storedDraft } from "../draft-shape";
 import type { ClaimFacts } from "../facts-shape";
@@ -100,15 +101,6 @@ const listEvidence = (work: Work, claimId: string) =>
      where claim_id = $1 and withdrawn_at is null order by received_at, id`,
     [claimId],
   );
-
-async function zoneOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ zone: string }>(
-    work,
-    "select time_zone as zone from organisations where id = $1",
-    [organisationId],
-  );
-  return found?.zone ?? "UTC";
-}
 
 /** Everything a draft is read against, as it stands now. */
 export async function draftContext(

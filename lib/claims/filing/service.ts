@@ -3,7 +3,7 @@ import { randomInt } from "node:crypto";
 import { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
 import { hasRight } from "@/lib/access/rights";
-import { rows, type Work } from "@/lib/db/unit-of-work";
+import { rows, undoing, type Work } from "@/lib/db/unit-of-work";
 import { formatDay } from "@/lib/kernel/format";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { claimNumberFrom } from "@/lib/labels/check-digit";
@@ -12,7 +12,7 @@ import { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
 import { changedDraft, emptyDraft, emptyLine, type ClaimDraft, type DraftLine } from "../draft";
 import { storedDraft, type DraftChange } from "../draft-shape";
-import { moveClaim, undoing, type Moved } from "../moves/service";
+import { moveClaim, type Moved } from "../moves/service";
 import { claimDigits } from "../number";
 import type { DraftStart } from "../schema";
 

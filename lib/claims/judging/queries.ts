@@ -1,14 +1,6 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
-
-/** The short name of an organisation the actor belongs to or trades with. */
-export async function nameOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ name: string }>(work, "select name from organisations where id = $1", [
-    organisationId,
-  ]);
-  return found?.name ?? "";
-}
+import { rows, unitOfWork } from "@/lib/db/unit-of-work";
 
 export type Colleague = { id: string; name: string };
 

@@ -1,6 +1,6 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import { rows, type Work } from "@/lib/db/unit-of-work";
+import { rows, undoing, type Work } from "@/lib/db/unit-of-work";
 import { addDays, dayInZone, type CalendarDay } from "@/lib/kernel/calendar-day";
 import { ok, refuse } from "@/lib/kernel/outcome";
 import { mailClaimPeople } from "@/lib/mail/outbox";
@@ -8,11 +8,11 @@ import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
 import { gaveTheVerdict } from "../lifecycle";
-import { claimForChange, moveClaim, undoing } from "../moves/service";
+import { claimForChange, moveClaim } from "../moves/service";
 import { printClaimNumber } from "../number";
 import { claimPath } from "../paths";
 import { appendToTimeline } from "../timeline/service";
-import { nameOf } from "./queries";
+import { nameOf } from "../parties/queries";
 
 const HOLD_MINUTES = 10;
 const holdFromNow = () => new Date(Date.now() + HOLD_MINUTES * 60_000);

@@ -1,4 +1,4 @@
-import type { ClaimState } from "../lifecycle";
+import { CLAIM_STATES, type ClaimState } from "../lifecycle";
 import { JUDGING_VIEWS, WORKSHOP_VIEWS, type ListOrder, type ListView } from "./schema";
 
 export type Side = keyof typeof VIEWS;
@@ -15,16 +15,8 @@ export const HANDS = {
   parkedWith: "c.parked_with_id = $2",
 } as const;
 
-const SEEN = [
-  "filed",
-  "beingJudged",
-  "answerNeeded",
-  "decided",
-  "contested",
-  "settled",
-  "withdrawn",
-  "lapsed",
-] as const;
+/** What a distributor may know of, and what both sides keep. */
+const SEEN = CLAIM_STATES.filter((state) => state !== "draft" && state !== "discarded");
 
 // A view is a list of states: an index holds the claims of each in order, whatever else the table holds.
 const VIEW: Readonly<Record<ViewKey, View>> = {

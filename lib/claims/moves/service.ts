@@ -1,7 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import { unitOfWork, type Work } from "@/lib/db/unit-of-work";
-import { ok, refuse, type Outcome, type Refusal } from "@/lib/kernel/outcome";
+import { undoing, type Work } from "@/lib/db/unit-of-work";
+import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { Claim } from "@/models/claim";
 import { movesOpenTo, MOVES, type ClaimMove } from "../lifecycle";
 import { appendToTimeline } from "../timeline/service";
@@ -20,32 +20,6 @@ export type Decision = {
 
 type Decided<Code extends string> = Outcome<Decision, Code> | Promise<Outcome<Decision, Code>>;
 export type Moved = { readonly number: string };
-
-/** Thrown to take back what was written before a refusal was found; `undoing` then answers with that refusal. */
-class Undone extends Error {
-  constructor(code: string) {
-    super(`refused: ${code}`);
-  }
-}
-
-/** A unit of work whose refusal undoes everything it wrote. */
-export async function undoing<T, Code extends string>(
-  actor: Actor,
-  act: (work: Work) => Promise<Outcome<T, Code>>,
-): Promise<Outcome<T, Code>> {
-  const found: { refusal?: Refusal<Code> } = {};
-  try {
-    return await unitOfWork(actor, async (work) => {
-      const outcome = await act(work);
-      if (outcome.ok) return outcome;
-      found.refusal = outcome;
-      throw new Undone(outcome.code);
-    });
-  } catch (fault) {
-    if (fault instanceof Undone && found.refusal) return found.refusal;
-    throw fault;
-  }
-}
 
 /**
  * The one place a claim changes state: load and lock, ask the table of moves, decide, then write row and timeline

@@ -5,7 +5,7 @@ import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { calendarDay } from "@/lib/kernel/calendar-day";
 import { familyOf } from "@/lib/parts/families";
 import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
-import { coverageOfLine } from "../cover/queries";
+import { coverageOfLine, lineToCover } from "../cover/queries";
 import type { ClaimFacts } from "../facts-shape";
 import { seesClaim } from "../seeing";
 import { judgeReading, type LimitsInForce } from "../sheet/judge-reading";
@@ -49,23 +49,10 @@ async function workOutCoverage(
   sheet: SheetRows,
   { facts, missing }: { facts: ClaimFacts; missing: number },
 ): Promise<Map<number, Coverage>> {
-  const { claim } = sheet;
   const covered = new Map<number, Coverage>();
   for (const line of facts.lines) {
-    const { coverage } = await coverageOfLine(work, {
-      claimId: claim.id,
-      sellerId: claim.sellerId,
-      workshopId: claim.workshopId,
-      family: facts.family,
-      partId: line.part.id,
-      unitId: line.unit?.id ?? null,
-      serialTyped: line.serialTyped,
-      shippedOn: line.invoiceLine?.shippedOn ?? null,
-      fittedOn: line.fittedOn,
-      failedOn: calendarDay(facts.failedOn),
-      filedOn: calendarDay(facts.filedOn),
-      evidenceMissing: missing,
-    });
+    const asked = lineToCover(sheet.claim, { facts, line }, missing);
+    const { coverage } = await coverageOfLine(work, asked);
     covered.set(line.lineNumber, coverage);
   }
   return covered;

@@ -1,5 +1,4 @@
 import "server-only";
-import { createHash } from "node:crypto";
 import type { Actor } from "@/lib/access/actor";
 import { rows, type Work } from "@/lib/db/unit-of-work";
 import { calendarDay } from "@/lib/kernel/calendar-day";
@@ -9,13 +8,14 @@ import { familyOf } from "@/lib/parts/families";
 import { symptomOf } from "@/lib/parts/family";
 import { answerDueAt } from "@/lib/rule-book/queries";
 import { publicUrl } from "@/lib/web/settings";
+import { sha256Of } from "@/lib/web/sha256";
 import type { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
 import { storedDraft } from "../draft-shape";
 import { canonicalText, type ClaimFacts } from "../facts-shape";
 import { draftContext } from "../filing/queries";
 import { readDraft } from "../filing/read-draft";
-import { nameOf } from "../judging/queries";
+import { nameOf } from "../parties/queries";
 import { moveClaim } from "../moves/service";
 import { printClaimNumber } from "../number";
 import { claimPath } from "../paths";
@@ -51,7 +51,7 @@ async function writeRevision(work: Work, claim: Claim, facts: ClaimFacts) {
     work,
     `insert into claim_revisions (claim_id, seller_id, workshop_id, revision, facts, sha256, sent_by_id)
      values ($1, $2, $3, $4, $5, $6, $7) returning id`,
-    [...parties, revision, text, createHash("sha256").update(text).digest("hex"), work.actor.userId],
+    [...parties, revision, text, sha256Of(text), work.actor.userId],
   );
   await rows(
     work,

@@ -1,10 +1,9 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import { rows } from "@/lib/db/unit-of-work";
+import { rows, undoing } from "@/lib/db/unit-of-work";
 import { ok, refuse } from "@/lib/kernel/outcome";
 import { Claim } from "@/models/claim";
 import { seesClaim } from "../seeing";
-import { undoing } from "../moves/service";
 
 type Said = { number: string; body: string; audience: "both" | "own" };
 

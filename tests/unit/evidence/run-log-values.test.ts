@@ -1,19 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { parseRunLog } from "@/lib/evidence/run-log-parser";
-import { seriesOf, type RunLog } from "@/lib/evidence/run-log";
-import { given } from "./outcome-value";
-
-const read = (source: Uint8Array | string): RunLog => given(parseRunLog(source));
-const inShort = (log: RunLog) => ({
-  timeS: log.timeS,
-  celsius: seriesOf(log, "temperature")[0]?.values,
-  ampere: seriesOf(log, "current")[0]?.values,
-});
-const refusalOf = (source: Uint8Array | string) => {
-  const outcome = parseRunLog(source);
-  return outcome.ok ? "read" : outcome.code;
-};
-const noteCodes = (log: RunLog) => log.notes.map((note) => note.code);
+import { seriesOf } from "@/lib/evidence/run-log";
+import { inShort, noteCodes, read, refusalOf } from "./log-in-short";
 
 describe("values", () => {
   it("that are missing are gaps; unreadable and impossible ones are gaps with a note", () => {

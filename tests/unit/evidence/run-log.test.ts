@@ -1,7 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { parseRunLog } from "@/lib/evidence/run-log-parser";
-import { seriesOf, type RunLog } from "@/lib/evidence/run-log";
-import { given } from "./outcome-value";
+import { seriesOf } from "@/lib/evidence/run-log";
+import { inShort, noteCodes, read, refusalOf } from "./log-in-short";
 
 const ROWS = [
   ["0", "22.5", "0.417"],
@@ -14,18 +13,6 @@ const asFile = (heading: readonly string[], delimiter: string, decimal: string, 
   [heading, ...ROWS.map((row) => row.map((cell) => cell.replace(".", decimal)))]
     .map((row) => row.join(delimiter))
     .join(newline);
-
-const read = (source: Uint8Array | string): RunLog => given(parseRunLog(source));
-const inShort = (log: RunLog) => ({
-  timeS: log.timeS,
-  celsius: seriesOf(log, "temperature")[0]?.values,
-  ampere: seriesOf(log, "current")[0]?.values,
-});
-const refusalOf = (source: Uint8Array | string) => {
-  const outcome = parseRunLog(source);
-  return outcome.ok ? "read" : outcome.code;
-};
-const noteCodes = (log: RunLog) => log.notes.map((note) => note.code);
 
 describe("the same run, however it was written down", () => {
   const headings = [

@@ -87,7 +87,6 @@ const MAILS = membersOf<MailKind>({
 /** What the distributor alone is told; most of it is written by functions of the database. */
 export const FLAG_KINDS = [
   "serialUnknown",
-  "soldElsewhere",
   "soldToOther",
   "unitHeld",
   "shippedAfterFailure",

@@ -1,8 +1,8 @@
 import "server-only";
 import { cookies } from "next/headers";
 import { encode } from "next-auth/jwt";
-import { SESSION_COOKIE, SESSION_SECONDS } from "@/lib/web/cookie";
-import { isSecure, setting } from "@/lib/web/settings";
+import { SESSION_COOKIE, SESSION_SECONDS } from "./cookie";
+import { isSecure, setting } from "./settings";
 
 const put = async (value: string, maxAge: number) => {
   const jar = await cookies();
@@ -15,7 +15,7 @@ const put = async (value: string, maxAge: number) => {
   });
 };
 
-/** Lets this browser speak for another session of the same person. */
+/** Lets this browser speak for a session: after signing in, or for another one of the same person. */
 export const keepSession = async (sid: string): Promise<void> =>
   put(
     await encode({ token: { sid }, secret: setting("NEXTAUTH_SECRET"), maxAge: SESSION_SECONDS }),
