@@ -95,7 +95,7 @@ export const RECORDS = [
   {
     name: "a refusal that leaves what was written",
     guarantee: 21,
-    file: "lib/claims/moves/service.ts",
+    file: "lib/db/unit-of-work.ts",
     from: "throw new Undone(outcome.code);",
     to: "return outcome;",
     tests: ["database/moves-by-role"],

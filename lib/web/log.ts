@@ -1,8 +1,7 @@
 import "server-only";
-import pino from "pino";
+import pino, { type DestinationStream, type LoggerOptions } from "pino";
 
-/** One JSON line an event, in UTC. What a person typed is a value in it, so it can never forge a line of its own. */
-export const log = pino({
+const OPTIONS: LoggerOptions = {
   level: process.env.LOG_LEVEL ?? "info",
   base: { process: process.env.PROCESS_NAME ?? "web" },
   timestamp: pino.stdTimeFunctions.isoTime,
@@ -17,4 +16,10 @@ export const log = pino({
     "authorization",
     "*.authorization",
   ],
-});
+};
+
+/** A log into a stream; without one, into the output of the process. */
+export const logTo = (stream?: DestinationStream) => (stream ? pino(OPTIONS, stream) : pino(OPTIONS));
+
+/** One JSON line an event, in UTC. What a person typed is a value in it, so it can never forge a line of its own. */
+export const log = logTo();

@@ -1,8 +1,8 @@
 import { beforeAll, describe, expect, it } from "vitest";
 import { PassThrough } from "node:stream";
-import pino from "pino";
 import { fileClaim } from "@/lib/claims/sending/service";
 import { askWorkshop, takeClaim } from "@/lib/claims/judging/service";
+import { logTo } from "@/lib/web/log";
 import { actorAt } from "../support/actor";
 import { adminQuery } from "../support/database";
 import { draftReady, excuseMissingRows } from "./draft-ready";
@@ -35,13 +35,21 @@ describe("the id of a request", () => {
 });
 
 describe("a line of the log", () => {
-  // The same formatter as lib/web/log.ts writes through; what people type arrives as a value in it.
-  const linesFor = (typed: string): string[] => {
+  const linesOf = (event: Record<string, unknown>): string[] => {
     const out = new PassThrough();
-    pino({ timestamp: pino.stdTimeFunctions.isoTime }, out).info({ typed });
-    const text: unknown = out.read();
-    return String(text).split("\n").filter(Boolean);
+    const told = logTo(out);
+    // Tests are quiet unless somebody listens.
+    told.level = "info";
+    told.warn(event);
+    return String(out.read()).split("\n").filter(Boolean);
   };
+  const linesFor = (typed: string): string[] => linesOf({ typed });
+
+  it("is in UTC and says its level; what is secret is not in it", () => {
+    const [line = ""] = linesOf({ password: "cedar-1", session: { token: "amber-2", cookie: "flint-3" } });
+    expect(JSON.parse(line)).toMatchObject({ level: "warn", time: expect.stringMatching(/Z$/u) });
+    expect(line).not.toMatch(/cedar|amber|flint/u);
+  });
 
   it.each(['x\n{"level":"error"}', "x\r\nforged", "\u001b[31mred", "\u2028next", 'x"}\n{"a":"'])(
     "stays one line whatever was typed: %j",
