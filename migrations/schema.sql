@@ -93,6 +93,18 @@ CREATE FUNCTION guarded.clear_attempts(p_account text, p_address text) RETURNS v
 
 ALTER FUNCTION guarded.clear_attempts(p_account text, p_address text) OWNER TO keeper;
 
+CREATE FUNCTION guarded.due_to_settle() RETURNS TABLE(claim_id uuid)
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ begin
+     return query select c.id from claims c join organisations o on o.id = c.workshop_id where c.state = 'decided'
+  and (c.contest_waived_at is not null or c.contest_until < (now() at time zone o.time_zone)::date)
+  and not exists (select 1 from claim_lines l where l.claim_id = c.id
+    and l.credit_state not in ('none', 'allocated', 'paidOut', 'replaced'));
+   end $$;
+
+ALTER FUNCTION guarded.due_to_settle() OWNER TO keeper;
+
 CREATE FUNCTION guarded.end_session(p_session uuid) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -291,6 +303,27 @@ CREATE FUNCTION guarded.mail_claim_people(p_claim uuid, p_to text, p_kind text, 
 
 ALTER FUNCTION guarded.mail_claim_people(p_claim uuid, p_to text, p_kind text, p_params jsonb, p_dedupe text) OWNER TO keeper;
 
+CREATE FUNCTION guarded.mail_credit_note(p_note uuid, p_kind text, p_params jsonb, p_dedupe text) RETURNS integer
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$
+    declare note credit_notes; sent integer;
+    begin
+      select * into note from credit_notes n where n.id = p_note and n.seller_id = ctx_org();
+      if note.id is null then return 0; end if;
+      insert into outbox (organisation_id, kind, dedupe_key, recipient, locale, params, request_id)
+        select ctx_org(), p_kind, p_dedupe || ':' || u.id, u.email, u.locale, p_params || jsonb_build_object('name', u.name),
+          nullif(current_setting('app.request_id', true), '')
+        from users u where u.disabled_at is null and exists (select 1 from memberships m
+          join membership_roles r on r.user_id = m.user_id and r.organisation_id = m.organisation_id
+            and r.role in ('accounts', 'workshopManager')
+          where m.user_id = u.id and m.organisation_id = note.workshop_id and m.disabled_at is null and m.accepted_at is not null);
+      get diagnostics sent = row_count;
+      return sent;
+    end $$;
+
+ALTER FUNCTION guarded.mail_credit_note(p_note uuid, p_kind text, p_params jsonb, p_dedupe text) OWNER TO keeper;
+
 CREATE FUNCTION guarded.mail_link_owner(p_token_hash text, p_kind text, p_params jsonb, p_request text) RETURNS void
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -464,6 +497,27 @@ CREATE FUNCTION guarded.set_password(p_user uuid, p_password_hash text) RETURNS 
 
 ALTER FUNCTION guarded.set_password(p_user uuid, p_password_hash text) OWNER TO keeper;
 
+CREATE FUNCTION guarded.settle_claim(p_claim uuid) RETURNS boolean
+    LANGUAGE plpgsql SECURITY DEFINER
+    SET search_path TO 'pg_catalog', 'public', 'pg_temp'
+    AS $$ declare claim claims;
+   begin
+     perform 1 from claims c where c.id = p_claim for update skip locked;
+     if not found then return false; end if;
+     select c.* into claim from claims c join organisations o on o.id = c.workshop_id where c.id = p_claim and c.state = 'decided'
+  and (c.contest_waived_at is not null or c.contest_until < (now() at time zone o.time_zone)::date)
+  and not exists (select 1 from claim_lines l where l.claim_id = c.id
+    and l.credit_state not in ('none', 'allocated', 'paidOut', 'replaced'));
+     if claim.id is null then return false; end if;
+     update claims set state = 'settled' where id = p_claim;
+     update claim_lines set holds_unit = false where claim_id = p_claim and holds_unit and verdict = 'declined';
+     insert into timeline_entries (claim_id, seq, seller_id, workshop_id, kind, actor_name, detail, prev_hash, hash)
+       values (claim.id, 0, claim.seller_id, claim.workshop_id, 'settle', 'Partproof', '{}', '', '');
+     return true;
+   end $$;
+
+ALTER FUNCTION guarded.settle_claim(p_claim uuid) OWNER TO keeper;
+
 CREATE FUNCTION guarded.sign_in_candidate(p_email text) RETURNS TABLE(user_id uuid, password_hash text, organisation_id uuid, roles text[])
     LANGUAGE plpgsql SECURITY DEFINER
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
@@ -600,6 +654,38 @@ CREATE FUNCTION public.check_claim_move() RETURNS trigger
 
 ALTER FUNCTION public.check_claim_move() OWNER TO partproof_owner;
 
+CREATE FUNCTION public.check_counter() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+    declare note credit_notes;
+    begin
+      if new.kind = 'credit' then return null; end if;
+      perform pg_advisory_xact_lock(hashtextextended(new.counters_id::text, 11));
+      select * into note from public.credit_notes n where n.id = new.counters_id;
+      if note.kind <> 'credit' or (note.currency, note.net_minor, note.tax_minor, note.claim_id)
+          is distinct from (new.currency, new.net_minor, new.tax_minor, new.claim_id)
+        or (select coalesce(sum(a.amount_minor), 0) from public.credit_allocations a where a.note_id = note.id) <> 0 then
+        raise exception 'only an open note is countered, and whole' using errcode = 'PP003';
+      end if;
+      return null;
+    end $$;
+
+ALTER FUNCTION public.check_counter() OWNER TO partproof_owner;
+
+CREATE FUNCTION public.check_ledger_sum() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+    begin
+      if not exists (select 1 from public.ledger_postings p where p.seller_id = new.seller_id and p.sequence = new.sequence)
+        or exists (select 1 from public.ledger_postings p where p.seller_id = new.seller_id and p.sequence = new.sequence
+          group by p.currency having sum(p.amount_minor) <> 0) then
+        raise exception 'the postings of an entry sum to nothing' using errcode = 'PP003';
+      end if;
+      return null;
+    end $$;
+
+ALTER FUNCTION public.check_ledger_sum() OWNER TO partproof_owner;
+
 CREATE FUNCTION public.ctx_actor() RETURNS uuid
     LANGUAGE sql STABLE
     AS $$ select nullif(current_setting('app.actor_id', true), '')::uuid $$;
@@ -611,6 +697,29 @@ CREATE FUNCTION public.ctx_org() RETURNS uuid
     AS $$ select nullif(current_setting('app.organisation_id', true), '')::uuid $$;
 
 ALTER FUNCTION public.ctx_org() OWNER TO partproof_owner;
+
+CREATE FUNCTION public.keep_allocations() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+    declare note credit_notes; allocated bigint; taken credit_allocations;
+    begin
+      perform pg_advisory_xact_lock(hashtextextended(new.note_id::text, 11));
+      select * into note from public.credit_notes n where n.id = new.note_id;
+      select coalesce(sum(a.amount_minor), 0) into allocated from public.credit_allocations a where a.note_id = new.note_id;
+      if note.kind <> 'credit' or allocated < 0 or allocated > note.total_minor
+        or exists (select 1 from public.credit_notes c where c.counters_id = note.id) then
+        raise exception 'more than the note is allocated' using errcode = 'PP003';
+      end if;
+      if new.takes_back_id is not null then
+        select * into taken from public.credit_allocations a where a.id = new.takes_back_id;
+        if taken.note_id <> new.note_id or taken.amount_minor <> -new.amount_minor then
+          raise exception 'an allocation is taken back whole' using errcode = 'PP003';
+        end if;
+      end if;
+      return null;
+    end $$;
+
+ALTER FUNCTION public.keep_allocations() OWNER TO partproof_owner;
 
 CREATE FUNCTION public.keep_claim_line() RETURNS trigger
     LANGUAGE plpgsql
@@ -657,6 +766,19 @@ CREATE FUNCTION public.keep_outbox() RETURNS trigger
     end $$;
 
 ALTER FUNCTION public.keep_outbox() OWNER TO partproof_owner;
+
+CREATE FUNCTION public.keep_series() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+    begin
+      if (new.seller_id, new.year, new.prefix) is distinct from (old.seller_id, old.year, old.prefix)
+        or new.last_sequence <> old.last_sequence + 1 or new.last_issued_on is null or new.last_issued_on < old.last_issued_on then
+        raise exception 'numbers of credit notes follow each other' using errcode = 'PP003';
+      end if;
+      return new;
+    end $$;
+
+ALTER FUNCTION public.keep_series() OWNER TO partproof_owner;
 
 CREATE FUNCTION public.refuse_change() RETURNS trigger
     LANGUAGE plpgsql
@@ -884,6 +1006,7 @@ CREATE TABLE public.claims (
     lock_version integer DEFAULT 0 NOT NULL,
     created_at timestamp with time zone DEFAULT now() NOT NULL,
     updated_at timestamp with time zone DEFAULT now() NOT NULL,
+    contest_waived_at timestamp with time zone,
     CONSTRAINT claims_asked_minor_check CHECK ((asked_minor >= 0)),
     CONSTRAINT claims_check CHECK (((state = ANY (ARRAY['draft'::text, 'discarded'::text])) OR ((filed_at IS NOT NULL) AND (revision > 0) AND (failed_on IS NOT NULL)))),
     CONSTRAINT claims_check1 CHECK (((state <> ALL (ARRAY['decided'::text, 'contested'::text, 'settled'::text])) OR ((decided_at IS NOT NULL) AND (outcome IS NOT NULL)))),
@@ -897,6 +1020,102 @@ CREATE TABLE public.claims (
 ALTER TABLE ONLY public.claims FORCE ROW LEVEL SECURITY;
 
 ALTER TABLE public.claims OWNER TO partproof_owner;
+
+CREATE TABLE public.credit_allocations (
+    id uuid DEFAULT gen_random_uuid() NOT NULL,
+    note_id uuid NOT NULL,
+    seller_id uuid NOT NULL,
+    workshop_id uuid NOT NULL,
+    amount_minor bigint NOT NULL,
+    how text NOT NULL,
+    reference text NOT NULL,
+    allocated_on date NOT NULL,
+    takes_back_id uuid,
+    allocated_by_id uuid NOT NULL,
+    allocated_at timestamp with time zone DEFAULT now() NOT NULL,
+    CONSTRAINT credit_allocations_amount_minor_check CHECK ((amount_minor <> 0)),
+    CONSTRAINT credit_allocations_check CHECK (((amount_minor < 0) = (takes_back_id IS NOT NULL))),
+    CONSTRAINT credit_allocations_how_check CHECK ((how = ANY (ARRAY['invoice'::text, 'paidOut'::text]))),
+    CONSTRAINT credit_allocations_reference_check CHECK (((length(reference) >= 1) AND (length(reference) <= 80)))
+);
+
+ALTER TABLE ONLY public.credit_allocations FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.credit_allocations OWNER TO partproof_owner;
+
+CREATE TABLE public.credit_note_lines (
+    note_id uuid NOT NULL,
+    "position" integer NOT NULL,
+    seller_id uuid NOT NULL,
+    workshop_id uuid NOT NULL,
+    line_id uuid NOT NULL,
+    invoice_line_id uuid,
+    kind text NOT NULL,
+    net_minor bigint NOT NULL,
+    tax_category text NOT NULL,
+    tax_rate numeric(6,3) NOT NULL,
+    exemption_reason text,
+    CONSTRAINT credit_note_lines_kind_check CHECK ((kind = ANY (ARRAY['part'::text, 'labour'::text, 'diagnosis'::text, 'consumables'::text, 'carriage'::text]))),
+    CONSTRAINT credit_note_lines_net_minor_check CHECK ((net_minor >= 0)),
+    CONSTRAINT credit_note_lines_position_check CHECK (("position" > 0)),
+    CONSTRAINT credit_note_lines_tax_category_check CHECK ((tax_category = ANY (ARRAY['S'::text, 'Z'::text, 'E'::text, 'AE'::text, 'K'::text, 'G'::text, 'O'::text]))),
+    CONSTRAINT credit_note_lines_tax_rate_check CHECK (((tax_rate >= (0)::numeric) AND (tax_rate < (100)::numeric)))
+);
+
+ALTER TABLE ONLY public.credit_note_lines FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.credit_note_lines OWNER TO partproof_owner;
+
+CREATE TABLE public.credit_note_series (
+    seller_id uuid NOT NULL,
+    year integer NOT NULL,
+    prefix text NOT NULL,
+    last_sequence integer DEFAULT 0 NOT NULL,
+    last_issued_on date,
+    CONSTRAINT credit_note_series_last_sequence_check CHECK ((last_sequence >= 0)),
+    CONSTRAINT credit_note_series_prefix_check CHECK ((length(prefix) <= 8)),
+    CONSTRAINT credit_note_series_year_check CHECK (((year >= 2000) AND (year <= 2999)))
+);
+
+ALTER TABLE ONLY public.credit_note_series FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.credit_note_series OWNER TO partproof_owner;
+
+CREATE TABLE public.credit_notes (
+    id uuid DEFAULT gen_random_uuid() NOT NULL,
+    seller_id uuid NOT NULL,
+    workshop_id uuid NOT NULL,
+    account_id uuid NOT NULL,
+    claim_id uuid NOT NULL,
+    verdict_id uuid NOT NULL,
+    kind text NOT NULL,
+    year integer NOT NULL,
+    sequence integer NOT NULL,
+    number text NOT NULL,
+    issued_on date NOT NULL,
+    currency character(3) NOT NULL,
+    net_minor bigint NOT NULL,
+    tax_minor bigint NOT NULL,
+    total_minor bigint NOT NULL,
+    document jsonb NOT NULL,
+    counters_id uuid,
+    reason text,
+    issued_by_id uuid NOT NULL,
+    issued_at timestamp with time zone DEFAULT now() NOT NULL,
+    CONSTRAINT credit_notes_check CHECK ((EXTRACT(year FROM issued_on) = (year)::numeric)),
+    CONSTRAINT credit_notes_check1 CHECK ((total_minor = (net_minor + tax_minor))),
+    CONSTRAINT credit_notes_check2 CHECK (((kind = 'counter'::text) = (counters_id IS NOT NULL))),
+    CONSTRAINT credit_notes_check3 CHECK (((kind = 'counter'::text) = (reason IS NOT NULL))),
+    CONSTRAINT credit_notes_kind_check CHECK ((kind = ANY (ARRAY['credit'::text, 'counter'::text]))),
+    CONSTRAINT credit_notes_net_minor_check CHECK ((net_minor >= 0)),
+    CONSTRAINT credit_notes_reason_check CHECK (((length(reason) >= 1) AND (length(reason) <= 1000))),
+    CONSTRAINT credit_notes_sequence_check CHECK ((sequence > 0)),
+    CONSTRAINT credit_notes_tax_minor_check CHECK ((tax_minor >= 0))
+);
+
+ALTER TABLE ONLY public.credit_notes FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.credit_notes OWNER TO partproof_owner;
 
 CREATE TABLE public.evidence_files (
     id uuid DEFAULT gen_random_uuid() NOT NULL,
@@ -919,17 +1138,41 @@ CREATE TABLE public.evidence_files (
     uploaded_by_id uuid NOT NULL,
     received_at timestamp with time zone DEFAULT now() NOT NULL,
     withdrawn_at timestamp with time zone,
+    taken_by text DEFAULT 'workshop'::text NOT NULL,
     CONSTRAINT evidence_files_kind_check CHECK ((kind = ANY (ARRAY['photo'::text, 'runLog'::text, 'document'::text]))),
     CONSTRAINT evidence_files_media_type_check CHECK ((media_type = ANY (ARRAY['image/jpeg'::text, 'image/png'::text, 'image/webp'::text, 'application/pdf'::text, 'text/csv'::text, 'text/plain'::text]))),
     CONSTRAINT evidence_files_original_name_check CHECK ((length(original_name) <= 200)),
     CONSTRAINT evidence_files_sha256_check CHECK ((sha256 ~ '^[0-9a-f]{64}$'::text)),
     CONSTRAINT evidence_files_size_bytes_check CHECK (((size_bytes > 0) AND (size_bytes <= 26214400))),
+    CONSTRAINT evidence_files_taken_by_check CHECK ((taken_by = ANY (ARRAY['workshop'::text, 'goodsIn'::text]))),
     CONSTRAINT evidence_files_view_state_check CHECK ((view_state = ANY (ARRAY['waiting'::text, 'ready'::text, 'unreadable'::text, 'notNeeded'::text])))
 );
 
 ALTER TABLE ONLY public.evidence_files FORCE ROW LEVEL SECURITY;
 
 ALTER TABLE public.evidence_files OWNER TO partproof_owner;
+
+CREATE TABLE public.findings (
+    id uuid DEFAULT gen_random_uuid() NOT NULL,
+    claim_id uuid NOT NULL,
+    line_id uuid NOT NULL,
+    seller_id uuid NOT NULL,
+    workshop_id uuid NOT NULL,
+    kind text NOT NULL,
+    note text NOT NULL,
+    run_minutes numeric(6,2),
+    evidence_id uuid,
+    bench jsonb DEFAULT '[]'::jsonb NOT NULL,
+    found_by_id uuid NOT NULL,
+    found_at timestamp with time zone DEFAULT now() NOT NULL,
+    CONSTRAINT findings_kind_check CHECK ((kind = ANY (ARRAY['faultConfirmed'::text, 'otherFault'::text, 'noFaultFound'::text, 'notTheUnit'::text, 'damagedOnTheWay'::text, 'notTestable'::text]))),
+    CONSTRAINT findings_note_check CHECK (((length(note) >= 1) AND (length(note) <= 4000))),
+    CONSTRAINT findings_run_minutes_check CHECK ((run_minutes >= (0)::numeric))
+);
+
+ALTER TABLE ONLY public.findings FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.findings OWNER TO partproof_owner;
 
 CREATE TABLE public.fittings (
     id uuid DEFAULT gen_random_uuid() NOT NULL,
@@ -1027,6 +1270,51 @@ CREATE TABLE public.invoice_lines (
 ALTER TABLE ONLY public.invoice_lines FORCE ROW LEVEL SECURITY;
 
 ALTER TABLE public.invoice_lines OWNER TO partproof_owner;
+
+CREATE TABLE public.ledger_entries (
+    seller_id uuid NOT NULL,
+    sequence bigint NOT NULL,
+    workshop_id uuid NOT NULL,
+    kind text NOT NULL,
+    entry_on date NOT NULL,
+    note_id uuid NOT NULL,
+    allocation_id uuid,
+    counters_sequence bigint,
+    entered_by_id uuid NOT NULL,
+    entered_at timestamp with time zone DEFAULT now() NOT NULL,
+    CONSTRAINT ledger_entries_check CHECK (((kind = ANY (ARRAY['allocated'::text, 'allocationTakenBack'::text])) = (allocation_id IS NOT NULL))),
+    CONSTRAINT ledger_entries_check1 CHECK (((kind = ANY (ARRAY['noteCountered'::text, 'allocationTakenBack'::text])) = (counters_sequence IS NOT NULL))),
+    CONSTRAINT ledger_entries_kind_check CHECK ((kind = ANY (ARRAY['noteIssued'::text, 'noteCountered'::text, 'allocated'::text, 'allocationTakenBack'::text])))
+);
+
+ALTER TABLE ONLY public.ledger_entries FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.ledger_entries OWNER TO partproof_owner;
+
+CREATE TABLE public.ledger_heads (
+    seller_id uuid NOT NULL,
+    sequence bigint DEFAULT 0 NOT NULL
+);
+
+ALTER TABLE ONLY public.ledger_heads FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.ledger_heads OWNER TO partproof_owner;
+
+CREATE TABLE public.ledger_postings (
+    seller_id uuid NOT NULL,
+    sequence bigint NOT NULL,
+    "position" integer NOT NULL,
+    account text NOT NULL,
+    amount_minor bigint NOT NULL,
+    currency character(3) NOT NULL,
+    CONSTRAINT ledger_postings_account_check CHECK ((account = ANY (ARRAY['claimsExpense'::text, 'tax'::text, 'workshopPayable'::text, 'receivable'::text, 'bank'::text]))),
+    CONSTRAINT ledger_postings_amount_minor_check CHECK ((amount_minor <> 0)),
+    CONSTRAINT ledger_postings_position_check CHECK (("position" > 0))
+);
+
+ALTER TABLE ONLY public.ledger_postings FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.ledger_postings OWNER TO partproof_owner;
 
 CREATE TABLE public.login_attempts (
     id bigint NOT NULL,
@@ -1126,6 +1414,60 @@ ALTER TABLE ONLY public.outbox FORCE ROW LEVEL SECURITY;
 
 ALTER TABLE public.outbox OWNER TO partproof_owner;
 
+CREATE TABLE public.parcels (
+    id uuid DEFAULT gen_random_uuid() NOT NULL,
+    seller_id uuid NOT NULL,
+    return_id uuid,
+    arrived_at timestamp with time zone DEFAULT now() NOT NULL,
+    received_by_id uuid NOT NULL,
+    number_written text DEFAULT ''::text NOT NULL,
+    sender_written text DEFAULT ''::text NOT NULL,
+    part_written text DEFAULT ''::text NOT NULL,
+    serial_written text DEFAULT ''::text NOT NULL,
+    condition text DEFAULT 'sound'::text NOT NULL,
+    note text DEFAULT ''::text NOT NULL,
+    matched_at timestamp with time zone,
+    matched_by_id uuid,
+    CONSTRAINT parcels_check CHECK (((return_id IS NULL) = (matched_at IS NULL))),
+    CONSTRAINT parcels_condition_check CHECK ((condition = ANY (ARRAY['sound'::text, 'damaged'::text, 'wet'::text, 'leaking'::text]))),
+    CONSTRAINT parcels_note_check CHECK ((length(note) <= 1000)),
+    CONSTRAINT parcels_number_written_check CHECK ((length(number_written) <= 80)),
+    CONSTRAINT parcels_part_written_check CHECK ((length(part_written) <= 200)),
+    CONSTRAINT parcels_sender_written_check CHECK ((length(sender_written) <= 200)),
+    CONSTRAINT parcels_serial_written_check CHECK ((length(serial_written) <= 80))
+);
+
+ALTER TABLE ONLY public.parcels FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.parcels OWNER TO partproof_owner;
+
+CREATE TABLE public.part_returns (
+    id uuid DEFAULT gen_random_uuid() NOT NULL,
+    number text NOT NULL,
+    claim_id uuid NOT NULL,
+    seller_id uuid NOT NULL,
+    workshop_id uuid NOT NULL,
+    send_to text NOT NULL,
+    instructions text DEFAULT ''::text NOT NULL,
+    due_on date NOT NULL,
+    called_in_by_id uuid NOT NULL,
+    called_in_at timestamp with time zone DEFAULT now() NOT NULL,
+    dispatched_at timestamp with time zone,
+    dispatched_by_id uuid,
+    carrier text,
+    tracking_number text,
+    CONSTRAINT part_returns_carrier_check CHECK ((length(carrier) <= 120)),
+    CONSTRAINT part_returns_check CHECK (((dispatched_at IS NULL) = (dispatched_by_id IS NULL))),
+    CONSTRAINT part_returns_instructions_check CHECK ((length(instructions) <= 1000)),
+    CONSTRAINT part_returns_number_check CHECK ((number ~ '^[0-9]{9}$'::text)),
+    CONSTRAINT part_returns_send_to_check CHECK (((length(send_to) >= 1) AND (length(send_to) <= 400))),
+    CONSTRAINT part_returns_tracking_number_check CHECK ((length(tracking_number) <= 80))
+);
+
+ALTER TABLE ONLY public.part_returns FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.part_returns OWNER TO partproof_owner;
+
 CREATE TABLE public.parts (
     id uuid DEFAULT gen_random_uuid() NOT NULL,
     seller_id uuid NOT NULL,
@@ -1158,12 +1500,36 @@ CREATE TABLE public.readings (
     temperature_celsius numeric,
     instrument text,
     taken_by text NOT NULL,
+    finding_id uuid,
+    CONSTRAINT readings_check CHECK (((taken_by = 'goodsIn'::text) = (finding_id IS NOT NULL))),
     CONSTRAINT readings_taken_by_check CHECK ((taken_by = ANY (ARRAY['workshop'::text, 'goodsIn'::text])))
 );
 
 ALTER TABLE ONLY public.readings FORCE ROW LEVEL SECURITY;
 
 ALTER TABLE public.readings OWNER TO partproof_owner;
+
+CREATE TABLE public.return_lines (
+    return_id uuid NOT NULL,
+    line_id uuid NOT NULL,
+    seller_id uuid NOT NULL,
+    workshop_id uuid NOT NULL,
+    parcel_id uuid,
+    place text,
+    serial_seen text,
+    received_at timestamp with time zone,
+    disposed_as text,
+    disposed_at timestamp with time zone,
+    disposed_by_id uuid,
+    CONSTRAINT return_lines_check CHECK (((disposed_as IS NULL) = (disposed_at IS NULL))),
+    CONSTRAINT return_lines_disposed_as_check CHECK ((disposed_as = ANY (ARRAY['kept'::text, 'scrapped'::text, 'sentToMaker'::text, 'sentBack'::text]))),
+    CONSTRAINT return_lines_place_check CHECK (((length(place) >= 1) AND (length(place) <= 40))),
+    CONSTRAINT return_lines_serial_seen_check CHECK ((length(serial_seen) <= 80))
+);
+
+ALTER TABLE ONLY public.return_lines FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.return_lines OWNER TO partproof_owner;
 
 CREATE TABLE public.revision_evidence (
     revision_id uuid NOT NULL,
@@ -1188,7 +1554,7 @@ CREATE TABLE public.rule_book_versions (
     body jsonb NOT NULL,
     published_at timestamp with time zone DEFAULT now() NOT NULL,
     published_by uuid,
-    CONSTRAINT rule_book_versions_kind_check CHECK ((kind = ANY (ARRAY['terms'::text, 'evidenceList'::text, 'limits'::text, 'serviceLevels'::text])))
+    CONSTRAINT rule_book_versions_kind_check CHECK ((kind = ANY (ARRAY['terms'::text, 'evidenceList'::text, 'limits'::text, 'serviceLevels'::text, 'credit'::text])))
 );
 
 ALTER TABLE ONLY public.rule_book_versions FORCE ROW LEVEL SECURITY;
@@ -1355,6 +1721,11 @@ CREATE TABLE public.verdicts (
     decided_by_id uuid NOT NULL,
     decided_at timestamp with time zone DEFAULT now() NOT NULL,
     reverses_id uuid,
+    credit jsonb,
+    credit_net_minor bigint DEFAULT 0 NOT NULL,
+    credit_total_minor bigint DEFAULT 0 NOT NULL,
+    CONSTRAINT verdicts_check CHECK ((credit_total_minor >= credit_net_minor)),
+    CONSTRAINT verdicts_credit_net_minor_check CHECK ((credit_net_minor >= 0)),
     CONSTRAINT verdicts_letter_check CHECK ((length(letter) <= 4000)),
     CONSTRAINT verdicts_outcome_check CHECK ((outcome = ANY (ARRAY['upheld'::text, 'upheldInPart'::text, 'declined'::text])))
 );
@@ -1436,6 +1807,36 @@ ALTER TABLE ONLY public.claims
 ALTER TABLE ONLY public.claims
     ADD CONSTRAINT claims_seller_id_workshop_id_id_key UNIQUE (seller_id, workshop_id, id);
 
+ALTER TABLE ONLY public.credit_allocations
+    ADD CONSTRAINT credit_allocations_pkey PRIMARY KEY (id);
+
+ALTER TABLE ONLY public.credit_allocations
+    ADD CONSTRAINT credit_allocations_seller_id_workshop_id_id_key UNIQUE (seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_allocations
+    ADD CONSTRAINT credit_allocations_seller_id_workshop_id_takes_back_id_key UNIQUE (seller_id, workshop_id, takes_back_id);
+
+ALTER TABLE ONLY public.credit_note_lines
+    ADD CONSTRAINT credit_note_lines_pkey PRIMARY KEY (seller_id, note_id, "position");
+
+ALTER TABLE ONLY public.credit_note_series
+    ADD CONSTRAINT credit_note_series_pkey PRIMARY KEY (seller_id, year);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_pkey PRIMARY KEY (id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_number_key UNIQUE (seller_id, number);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_workshop_id_counters_id_key UNIQUE (seller_id, workshop_id, counters_id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_workshop_id_id_key UNIQUE (seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_year_sequence_key UNIQUE (seller_id, year, sequence);
+
 ALTER TABLE ONLY public.evidence_files
     ADD CONSTRAINT evidence_files_claim_id_row_id_sha256_key UNIQUE (claim_id, row_id, sha256);
 
@@ -1444,6 +1845,12 @@ ALTER TABLE ONLY public.evidence_files
 
 ALTER TABLE ONLY public.evidence_files
     ADD CONSTRAINT evidence_files_seller_id_workshop_id_id_key UNIQUE (seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.findings
+    ADD CONSTRAINT findings_pkey PRIMARY KEY (id);
+
+ALTER TABLE ONLY public.findings
+    ADD CONSTRAINT findings_seller_id_workshop_id_id_key UNIQUE (seller_id, workshop_id, id);
 
 ALTER TABLE ONLY public.fittings
     ADD CONSTRAINT fittings_pkey PRIMARY KEY (id);
@@ -1484,6 +1891,21 @@ ALTER TABLE ONLY public.invoice_lines
 ALTER TABLE ONLY public.invoice_lines
     ADD CONSTRAINT invoice_lines_seller_id_invoice_number_line_number_key UNIQUE (seller_id, invoice_number, line_number);
 
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_pkey PRIMARY KEY (seller_id, sequence);
+
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_seller_id_allocation_id_key UNIQUE (seller_id, allocation_id);
+
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_seller_id_counters_sequence_key UNIQUE (seller_id, counters_sequence);
+
+ALTER TABLE ONLY public.ledger_heads
+    ADD CONSTRAINT ledger_heads_pkey PRIMARY KEY (seller_id);
+
+ALTER TABLE ONLY public.ledger_postings
+    ADD CONSTRAINT ledger_postings_pkey PRIMARY KEY (seller_id, sequence, "position");
+
 ALTER TABLE ONLY public.login_attempts
     ADD CONSTRAINT login_attempts_pkey PRIMARY KEY (id);
 
@@ -1511,6 +1933,24 @@ ALTER TABLE ONLY public.outbox
 ALTER TABLE ONLY public.outbox
     ADD CONSTRAINT outbox_pkey PRIMARY KEY (id);
 
+ALTER TABLE ONLY public.parcels
+    ADD CONSTRAINT parcels_pkey PRIMARY KEY (id);
+
+ALTER TABLE ONLY public.parcels
+    ADD CONSTRAINT parcels_seller_id_id_key UNIQUE (seller_id, id);
+
+ALTER TABLE ONLY public.part_returns
+    ADD CONSTRAINT part_returns_number_key UNIQUE (number);
+
+ALTER TABLE ONLY public.part_returns
+    ADD CONSTRAINT part_returns_pkey PRIMARY KEY (id);
+
+ALTER TABLE ONLY public.part_returns
+    ADD CONSTRAINT part_returns_seller_id_id_key UNIQUE (seller_id, id);
+
+ALTER TABLE ONLY public.part_returns
+    ADD CONSTRAINT part_returns_seller_id_workshop_id_id_key UNIQUE (seller_id, workshop_id, id);
+
 ALTER TABLE ONLY public.parts
     ADD CONSTRAINT parts_pkey PRIMARY KEY (id);
 
@@ -1522,6 +1962,9 @@ ALTER TABLE ONLY public.parts
 
 ALTER TABLE ONLY public.readings
     ADD CONSTRAINT readings_pkey PRIMARY KEY (id);
+
+ALTER TABLE ONLY public.return_lines
+    ADD CONSTRAINT return_lines_pkey PRIMARY KEY (seller_id, return_id, line_id);
 
 ALTER TABLE ONLY public.revision_evidence
     ADD CONSTRAINT revision_evidence_pkey PRIMARY KEY (revision_id, evidence_id);
@@ -1621,6 +2064,8 @@ CREATE INDEX claim_lines_by_invoice_line ON public.claim_lines USING btree (sell
 
 CREATE INDEX claim_lines_by_part ON public.claim_lines USING btree (seller_id, part_id);
 
+CREATE INDEX claim_lines_by_return_state ON public.claim_lines USING btree (seller_id, return_state, claim_id) WHERE (return_state = ANY (ARRAY['awaited'::text, 'sent'::text, 'received'::text, 'missing'::text]));
+
 CREATE INDEX claim_lines_by_unit ON public.claim_lines USING btree (seller_id, unit_id);
 
 CREATE UNIQUE INDEX claim_lines_one_holder ON public.claim_lines USING btree (seller_id, unit_id) WHERE holds_unit;
@@ -1653,9 +2098,25 @@ CREATE INDEX claims_received_filed ON public.claims USING btree (seller_id, stat
 
 CREATE INDEX claims_received_urgent ON public.claims USING btree (seller_id, state, safety_reported DESC, answer_due_at, filed_at NULLS FIRST, id);
 
+CREATE INDEX claims_to_settle ON public.claims USING btree (contest_until) WHERE (state = 'decided'::text);
+
+CREATE INDEX credit_allocations_by_note ON public.credit_allocations USING btree (note_id);
+
+CREATE INDEX credit_note_lines_by_invoice_line ON public.credit_note_lines USING btree (seller_id, invoice_line_id);
+
+CREATE INDEX credit_note_lines_by_line ON public.credit_note_lines USING btree (line_id);
+
+CREATE INDEX credit_notes_by_claim ON public.credit_notes USING btree (claim_id);
+
+CREATE INDEX credit_notes_by_seller ON public.credit_notes USING btree (seller_id, issued_on DESC, sequence DESC);
+
+CREATE INDEX credit_notes_by_workshop ON public.credit_notes USING btree (workshop_id, issued_on DESC, sequence DESC);
+
 CREATE INDEX evidence_files_by_claim ON public.evidence_files USING btree (claim_id);
 
 CREATE INDEX evidence_files_by_hash ON public.evidence_files USING btree (seller_id, sha256);
+
+CREATE INDEX findings_by_line ON public.findings USING btree (line_id, found_at);
 
 CREATE INDEX fittings_by_unit ON public.fittings USING btree (seller_id, unit_id);
 
@@ -1667,13 +2128,31 @@ CREATE INDEX invoice_lines_by_buyer ON public.invoice_lines USING btree (buyer_i
 
 CREATE INDEX invoice_lines_by_part ON public.invoice_lines USING btree (seller_id, part_id);
 
+CREATE INDEX ledger_entries_by_day ON public.ledger_entries USING btree (seller_id, entry_on DESC, sequence DESC);
+
+CREATE INDEX ledger_entries_by_note ON public.ledger_entries USING btree (note_id);
+
+CREATE INDEX ledger_entries_by_workshop ON public.ledger_entries USING btree (seller_id, workshop_id, sequence DESC);
+
 CREATE INDEX login_attempts_by_key ON public.login_attempts USING btree (key_hash, at);
 
 CREATE INDEX memberships_by_user ON public.memberships USING btree (user_id);
 
 CREATE INDEX outbox_waiting ON public.outbox USING btree (not_before) WHERE ((sent_at IS NULL) AND (parked_at IS NULL));
 
+CREATE INDEX parcels_by_return ON public.parcels USING btree (seller_id, return_id);
+
+CREATE INDEX parcels_unmatched ON public.parcels USING btree (seller_id, arrived_at) WHERE (return_id IS NULL);
+
+CREATE INDEX part_returns_by_claim ON public.part_returns USING btree (claim_id);
+
+CREATE INDEX part_returns_due ON public.part_returns USING btree (seller_id, due_on);
+
 CREATE INDEX readings_by_claim ON public.readings USING btree (claim_id, revision);
+
+CREATE INDEX readings_by_finding ON public.readings USING btree (finding_id) WHERE (finding_id IS NOT NULL);
+
+CREATE INDEX return_lines_by_line ON public.return_lines USING btree (line_id);
 
 CREATE INDEX rule_book_by_kind ON public.rule_book_versions USING btree (seller_id, kind, family, valid_from);
 
@@ -1729,6 +2208,42 @@ CREATE TRIGGER claims_touch BEFORE UPDATE ON public.claims FOR EACH ROW EXECUTE 
 
 ALTER TABLE public.claims ENABLE ALWAYS TRIGGER claims_touch;
 
+CREATE TRIGGER credit_allocations_append_only BEFORE DELETE OR UPDATE ON public.credit_allocations FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.credit_allocations ENABLE ALWAYS TRIGGER credit_allocations_append_only;
+
+CREATE TRIGGER credit_allocations_kept AFTER INSERT ON public.credit_allocations FOR EACH ROW EXECUTE FUNCTION public.keep_allocations();
+
+ALTER TABLE public.credit_allocations ENABLE ALWAYS TRIGGER credit_allocations_kept;
+
+CREATE TRIGGER credit_allocations_no_truncate BEFORE TRUNCATE ON public.credit_allocations FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.credit_allocations ENABLE ALWAYS TRIGGER credit_allocations_no_truncate;
+
+CREATE TRIGGER credit_note_lines_append_only BEFORE DELETE OR UPDATE ON public.credit_note_lines FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.credit_note_lines ENABLE ALWAYS TRIGGER credit_note_lines_append_only;
+
+CREATE TRIGGER credit_note_lines_no_truncate BEFORE TRUNCATE ON public.credit_note_lines FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.credit_note_lines ENABLE ALWAYS TRIGGER credit_note_lines_no_truncate;
+
+CREATE TRIGGER credit_note_series_kept BEFORE UPDATE ON public.credit_note_series FOR EACH ROW EXECUTE FUNCTION public.keep_series();
+
+ALTER TABLE public.credit_note_series ENABLE ALWAYS TRIGGER credit_note_series_kept;
+
+CREATE TRIGGER credit_notes_append_only BEFORE DELETE OR UPDATE ON public.credit_notes FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.credit_notes ENABLE ALWAYS TRIGGER credit_notes_append_only;
+
+CREATE TRIGGER credit_notes_counter AFTER INSERT ON public.credit_notes FOR EACH ROW EXECUTE FUNCTION public.check_counter();
+
+ALTER TABLE public.credit_notes ENABLE ALWAYS TRIGGER credit_notes_counter;
+
+CREATE TRIGGER credit_notes_no_truncate BEFORE TRUNCATE ON public.credit_notes FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.credit_notes ENABLE ALWAYS TRIGGER credit_notes_no_truncate;
+
 CREATE TRIGGER evidence_kept BEFORE UPDATE ON public.evidence_files FOR EACH ROW EXECUTE FUNCTION public.keep_evidence();
 
 ALTER TABLE public.evidence_files ENABLE ALWAYS TRIGGER evidence_kept;
@@ -1740,6 +2255,38 @@ ALTER TABLE public.evidence_files ENABLE ALWAYS TRIGGER evidence_never_deleted;
 CREATE TRIGGER evidence_no_truncate BEFORE TRUNCATE ON public.evidence_files FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
 
 ALTER TABLE public.evidence_files ENABLE ALWAYS TRIGGER evidence_no_truncate;
+
+CREATE TRIGGER findings_append_only BEFORE DELETE OR UPDATE ON public.findings FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.findings ENABLE ALWAYS TRIGGER findings_append_only;
+
+CREATE TRIGGER findings_no_truncate BEFORE TRUNCATE ON public.findings FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.findings ENABLE ALWAYS TRIGGER findings_no_truncate;
+
+CREATE TRIGGER ledger_entries_append_only BEFORE DELETE OR UPDATE ON public.ledger_entries FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.ledger_entries ENABLE ALWAYS TRIGGER ledger_entries_append_only;
+
+CREATE CONSTRAINT TRIGGER ledger_entries_balance AFTER INSERT ON public.ledger_entries DEFERRABLE INITIALLY DEFERRED FOR EACH ROW EXECUTE FUNCTION public.check_ledger_sum();
+
+ALTER TABLE public.ledger_entries ENABLE ALWAYS TRIGGER ledger_entries_balance;
+
+CREATE TRIGGER ledger_entries_no_truncate BEFORE TRUNCATE ON public.ledger_entries FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.ledger_entries ENABLE ALWAYS TRIGGER ledger_entries_no_truncate;
+
+CREATE TRIGGER ledger_postings_append_only BEFORE DELETE OR UPDATE ON public.ledger_postings FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.ledger_postings ENABLE ALWAYS TRIGGER ledger_postings_append_only;
+
+CREATE CONSTRAINT TRIGGER ledger_postings_balance AFTER INSERT ON public.ledger_postings DEFERRABLE INITIALLY DEFERRED FOR EACH ROW EXECUTE FUNCTION public.check_ledger_sum();
+
+ALTER TABLE public.ledger_postings ENABLE ALWAYS TRIGGER ledger_postings_balance;
+
+CREATE TRIGGER ledger_postings_no_truncate BEFORE TRUNCATE ON public.ledger_postings FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+
+ALTER TABLE public.ledger_postings ENABLE ALWAYS TRIGGER ledger_postings_no_truncate;
 
 CREATE TRIGGER membership_ends_sessions AFTER UPDATE ON public.memberships FOR EACH ROW EXECUTE FUNCTION guarded.end_sessions_of_member();
 
@@ -1886,11 +2433,59 @@ ALTER TABLE ONLY public.claims
 ALTER TABLE ONLY public.claims
     ADD CONSTRAINT claims_workshop_id_vehicle_id_fkey FOREIGN KEY (workshop_id, vehicle_id) REFERENCES public.vehicles(workshop_id, id);
 
+ALTER TABLE ONLY public.credit_allocations
+    ADD CONSTRAINT credit_allocations_allocated_by_id_fkey FOREIGN KEY (allocated_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.credit_allocations
+    ADD CONSTRAINT credit_allocations_seller_id_workshop_id_note_id_fkey FOREIGN KEY (seller_id, workshop_id, note_id) REFERENCES public.credit_notes(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_allocations
+    ADD CONSTRAINT credit_allocations_seller_id_workshop_id_takes_back_id_fkey FOREIGN KEY (seller_id, workshop_id, takes_back_id) REFERENCES public.credit_allocations(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_note_lines
+    ADD CONSTRAINT credit_note_lines_seller_id_workshop_id_invoice_line_id_fkey FOREIGN KEY (seller_id, workshop_id, invoice_line_id) REFERENCES public.invoice_lines(seller_id, buyer_id, id);
+
+ALTER TABLE ONLY public.credit_note_lines
+    ADD CONSTRAINT credit_note_lines_seller_id_workshop_id_line_id_fkey FOREIGN KEY (seller_id, workshop_id, line_id) REFERENCES public.claim_lines(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_note_lines
+    ADD CONSTRAINT credit_note_lines_seller_id_workshop_id_note_id_fkey FOREIGN KEY (seller_id, workshop_id, note_id) REFERENCES public.credit_notes(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_note_series
+    ADD CONSTRAINT credit_note_series_seller_id_fkey FOREIGN KEY (seller_id) REFERENCES public.organisations(id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_issued_by_id_fkey FOREIGN KEY (issued_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_workshop_id_account_id_fkey FOREIGN KEY (seller_id, workshop_id, account_id) REFERENCES public.trading_accounts(seller_id, buyer_id, id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_workshop_id_claim_id_fkey FOREIGN KEY (seller_id, workshop_id, claim_id) REFERENCES public.claims(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_workshop_id_counters_id_fkey FOREIGN KEY (seller_id, workshop_id, counters_id) REFERENCES public.credit_notes(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.credit_notes
+    ADD CONSTRAINT credit_notes_seller_id_workshop_id_verdict_id_fkey FOREIGN KEY (seller_id, workshop_id, verdict_id) REFERENCES public.verdicts(seller_id, workshop_id, id);
+
 ALTER TABLE ONLY public.evidence_files
     ADD CONSTRAINT evidence_files_seller_id_workshop_id_claim_id_fkey FOREIGN KEY (seller_id, workshop_id, claim_id) REFERENCES public.claims(seller_id, workshop_id, id);
 
 ALTER TABLE ONLY public.evidence_files
     ADD CONSTRAINT evidence_files_uploaded_by_id_fkey FOREIGN KEY (uploaded_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.findings
+    ADD CONSTRAINT findings_found_by_id_fkey FOREIGN KEY (found_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.findings
+    ADD CONSTRAINT findings_seller_id_workshop_id_claim_id_fkey FOREIGN KEY (seller_id, workshop_id, claim_id) REFERENCES public.claims(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.findings
+    ADD CONSTRAINT findings_seller_id_workshop_id_evidence_id_fkey FOREIGN KEY (seller_id, workshop_id, evidence_id) REFERENCES public.evidence_files(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.findings
+    ADD CONSTRAINT findings_seller_id_workshop_id_line_id_fkey FOREIGN KEY (seller_id, workshop_id, line_id) REFERENCES public.claim_lines(seller_id, workshop_id, id);
 
 ALTER TABLE ONLY public.fittings
     ADD CONSTRAINT fittings_seller_id_fkey FOREIGN KEY (seller_id) REFERENCES public.organisations(id);
@@ -1934,6 +2529,30 @@ ALTER TABLE ONLY public.invoice_lines
 ALTER TABLE ONLY public.invoice_lines
     ADD CONSTRAINT invoice_lines_seller_id_part_id_fkey FOREIGN KEY (seller_id, part_id) REFERENCES public.parts(seller_id, id);
 
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_entered_by_id_fkey FOREIGN KEY (entered_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_seller_id_counters_sequence_fkey FOREIGN KEY (seller_id, counters_sequence) REFERENCES public.ledger_entries(seller_id, sequence);
+
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_seller_id_fkey FOREIGN KEY (seller_id) REFERENCES public.organisations(id);
+
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_seller_id_workshop_id_allocation_id_fkey FOREIGN KEY (seller_id, workshop_id, allocation_id) REFERENCES public.credit_allocations(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_seller_id_workshop_id_note_id_fkey FOREIGN KEY (seller_id, workshop_id, note_id) REFERENCES public.credit_notes(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.ledger_entries
+    ADD CONSTRAINT ledger_entries_workshop_id_fkey FOREIGN KEY (workshop_id) REFERENCES public.organisations(id);
+
+ALTER TABLE ONLY public.ledger_heads
+    ADD CONSTRAINT ledger_heads_seller_id_fkey FOREIGN KEY (seller_id) REFERENCES public.organisations(id);
+
+ALTER TABLE ONLY public.ledger_postings
+    ADD CONSTRAINT ledger_postings_seller_id_sequence_fkey FOREIGN KEY (seller_id, sequence) REFERENCES public.ledger_entries(seller_id, sequence);
+
 ALTER TABLE ONLY public.makers
     ADD CONSTRAINT makers_seller_id_fkey FOREIGN KEY (seller_id) REFERENCES public.organisations(id);
 
@@ -1949,6 +2568,27 @@ ALTER TABLE ONLY public.memberships
 ALTER TABLE ONLY public.outbox
     ADD CONSTRAINT outbox_organisation_id_fkey FOREIGN KEY (organisation_id) REFERENCES public.organisations(id);
 
+ALTER TABLE ONLY public.parcels
+    ADD CONSTRAINT parcels_matched_by_id_fkey FOREIGN KEY (matched_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.parcels
+    ADD CONSTRAINT parcels_received_by_id_fkey FOREIGN KEY (received_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.parcels
+    ADD CONSTRAINT parcels_seller_id_fkey FOREIGN KEY (seller_id) REFERENCES public.organisations(id);
+
+ALTER TABLE ONLY public.parcels
+    ADD CONSTRAINT parcels_seller_id_return_id_fkey FOREIGN KEY (seller_id, return_id) REFERENCES public.part_returns(seller_id, id);
+
+ALTER TABLE ONLY public.part_returns
+    ADD CONSTRAINT part_returns_called_in_by_id_fkey FOREIGN KEY (called_in_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.part_returns
+    ADD CONSTRAINT part_returns_dispatched_by_id_fkey FOREIGN KEY (dispatched_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.part_returns
+    ADD CONSTRAINT part_returns_seller_id_workshop_id_claim_id_fkey FOREIGN KEY (seller_id, workshop_id, claim_id) REFERENCES public.claims(seller_id, workshop_id, id);
+
 ALTER TABLE ONLY public.parts
     ADD CONSTRAINT parts_seller_id_fkey FOREIGN KEY (seller_id) REFERENCES public.organisations(id);
 
@@ -1963,6 +2603,21 @@ ALTER TABLE ONLY public.readings
 
 ALTER TABLE ONLY public.readings
     ADD CONSTRAINT readings_seller_id_workshop_id_claim_id_fkey FOREIGN KEY (seller_id, workshop_id, claim_id) REFERENCES public.claims(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.readings
+    ADD CONSTRAINT readings_seller_id_workshop_id_finding_id_fkey FOREIGN KEY (seller_id, workshop_id, finding_id) REFERENCES public.findings(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.return_lines
+    ADD CONSTRAINT return_lines_disposed_by_id_fkey FOREIGN KEY (disposed_by_id) REFERENCES public.users(id);
+
+ALTER TABLE ONLY public.return_lines
+    ADD CONSTRAINT return_lines_seller_id_parcel_id_fkey FOREIGN KEY (seller_id, parcel_id) REFERENCES public.parcels(seller_id, id);
+
+ALTER TABLE ONLY public.return_lines
+    ADD CONSTRAINT return_lines_seller_id_workshop_id_line_id_fkey FOREIGN KEY (seller_id, workshop_id, line_id) REFERENCES public.claim_lines(seller_id, workshop_id, id);
+
+ALTER TABLE ONLY public.return_lines
+    ADD CONSTRAINT return_lines_seller_id_workshop_id_return_id_fkey FOREIGN KEY (seller_id, workshop_id, return_id) REFERENCES public.part_returns(seller_id, workshop_id, id);
 
 ALTER TABLE ONLY public.revision_evidence
     ADD CONSTRAINT revision_evidence_seller_id_workshop_id_evidence_id_fkey FOREIGN KEY (seller_id, workshop_id, evidence_id) REFERENCES public.evidence_files(seller_id, workshop_id, id);
@@ -2073,7 +2728,17 @@ ALTER TABLE public.claim_revisions ENABLE ROW LEVEL SECURITY;
 
 ALTER TABLE public.claims ENABLE ROW LEVEL SECURITY;
 
+ALTER TABLE public.credit_allocations ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.credit_note_lines ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.credit_note_series ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.credit_notes ENABLE ROW LEVEL SECURITY;
+
 ALTER TABLE public.evidence_files ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.findings ENABLE ROW LEVEL SECURITY;
 
 ALTER TABLE public.fittings ENABLE ROW LEVEL SECURITY;
 
@@ -2123,13 +2788,25 @@ CREATE POLICY keeper_read ON public.audit_log FOR SELECT TO keeper USING (true);
 
 CREATE POLICY keeper_read ON public.claim_queries FOR SELECT TO keeper USING (true);
 
+CREATE POLICY keeper_read ON public.credit_notes FOR SELECT TO keeper USING (true);
+
 CREATE POLICY keeper_read ON public.evidence_files FOR SELECT TO keeper USING (true);
 
 CREATE POLICY keeper_read ON public.membership_roles FOR SELECT TO keeper USING (true);
 
 CREATE POLICY keeper_read ON public.organisations FOR SELECT TO keeper USING (true);
 
+CREATE POLICY keeper_settles ON public.claims FOR UPDATE TO keeper USING ((state = 'decided'::text)) WITH CHECK ((state = ANY (ARRAY['decided'::text, 'settled'::text])));
+
+CREATE POLICY keeper_settles ON public.timeline_entries FOR INSERT TO keeper WITH CHECK (((kind = 'settle'::text) AND (actor_id IS NULL) AND (actor_organisation_id IS NULL)));
+
 CREATE POLICY keeper_units ON public.units FOR SELECT TO keeper USING (true);
+
+ALTER TABLE public.ledger_entries ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.ledger_heads ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.ledger_postings ENABLE ROW LEVEL SECURITY;
 
 ALTER TABLE public.login_attempts ENABLE ROW LEVEL SECURITY;
 
@@ -2143,9 +2820,15 @@ ALTER TABLE public.organisations ENABLE ROW LEVEL SECURITY;
 
 ALTER TABLE public.outbox ENABLE ROW LEVEL SECURITY;
 
+ALTER TABLE public.parcels ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.part_returns ENABLE ROW LEVEL SECURITY;
+
 ALTER TABLE public.parts ENABLE ROW LEVEL SECURITY;
 
 ALTER TABLE public.readings ENABLE ROW LEVEL SECURITY;
+
+ALTER TABLE public.return_lines ENABLE ROW LEVEL SECURITY;
 
 ALTER TABLE public.revision_evidence ENABLE ROW LEVEL SECURITY;
 
@@ -2205,7 +2888,19 @@ CREATE POLICY web_insert ON public.claim_revisions FOR INSERT TO web WITH CHECK 
 
 CREATE POLICY web_insert ON public.claims FOR INSERT TO web WITH CHECK (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) AND (state = 'draft'::text)));
 
-CREATE POLICY web_insert ON public.evidence_files FOR INSERT TO web WITH CHECK (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) AND (uploaded_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
+CREATE POLICY web_insert ON public.credit_allocations FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (allocated_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
+
+CREATE POLICY web_insert ON public.credit_note_lines FOR INSERT TO web WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_insert ON public.credit_note_series FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (last_sequence = 0)));
+
+CREATE POLICY web_insert ON public.credit_notes FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (issued_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
+
+CREATE POLICY web_insert ON public.evidence_files FOR INSERT TO web WITH CHECK (((uploaded_by_id = ( SELECT public.ctx_actor() AS ctx_actor)) AND (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) AND (taken_by = 'workshop'::text)) OR ((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (taken_by = 'goodsIn'::text) AND (EXISTS ( SELECT 1
+   FROM public.claims c
+  WHERE ((c.id = evidence_files.claim_id) AND (c.state <> ALL (ARRAY['draft'::text, 'discarded'::text])))))))));
+
+CREATE POLICY web_insert ON public.findings FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (found_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
 
 CREATE POLICY web_insert ON public.fittings FOR INSERT TO web WITH CHECK ((workshop_id = ( SELECT public.ctx_org() AS ctx_org)));
 
@@ -2217,6 +2912,12 @@ CREATE POLICY web_insert ON public.invoice_imports FOR INSERT TO web WITH CHECK 
 
 CREATE POLICY web_insert ON public.invoice_lines FOR INSERT TO web WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
+CREATE POLICY web_insert ON public.ledger_entries FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (entered_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
+
+CREATE POLICY web_insert ON public.ledger_heads FOR INSERT TO web WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_insert ON public.ledger_postings FOR INSERT TO web WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
 CREATE POLICY web_insert ON public.makers FOR INSERT TO web WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_insert ON public.membership_roles FOR INSERT TO web WITH CHECK ((organisation_id = ( SELECT public.ctx_org() AS ctx_org)));
@@ -2227,9 +2928,15 @@ CREATE POLICY web_insert ON public.organisations FOR INSERT TO web WITH CHECK (f
 
 CREATE POLICY web_insert ON public.outbox FOR INSERT TO web WITH CHECK ((organisation_id = ( SELECT public.ctx_org() AS ctx_org)));
 
+CREATE POLICY web_insert ON public.parcels FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (received_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
+
+CREATE POLICY web_insert ON public.part_returns FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (called_in_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
+
 CREATE POLICY web_insert ON public.parts FOR INSERT TO web WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_insert ON public.readings FOR INSERT TO web WITH CHECK (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
+
+CREATE POLICY web_insert ON public.return_lines FOR INSERT TO web WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_insert ON public.revision_evidence FOR INSERT TO web WITH CHECK ((workshop_id = ( SELECT public.ctx_org() AS ctx_org)));
 
@@ -2271,9 +2978,19 @@ CREATE POLICY web_select ON public.claim_revisions FOR SELECT TO web USING (((( 
 
 CREATE POLICY web_select ON public.claims FOR SELECT TO web USING (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) OR ((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (state <> ALL (ARRAY['draft'::text, 'discarded'::text])))));
 
+CREATE POLICY web_select ON public.credit_allocations FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
+
+CREATE POLICY web_select ON public.credit_note_lines FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
+
+CREATE POLICY web_select ON public.credit_note_series FOR SELECT TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_select ON public.credit_notes FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
+
 CREATE POLICY web_select ON public.evidence_files FOR SELECT TO web USING (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) OR ((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (EXISTS ( SELECT 1
    FROM public.claims c
   WHERE ((c.id = evidence_files.claim_id) AND (c.state <> ALL (ARRAY['draft'::text, 'discarded'::text]))))))));
+
+CREATE POLICY web_select ON public.findings FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
 
 CREATE POLICY web_select ON public.fittings FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
 
@@ -2284,6 +3001,12 @@ CREATE POLICY web_select ON public.installers FOR SELECT TO web USING ((workshop
 CREATE POLICY web_select ON public.invoice_imports FOR SELECT TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_select ON public.invoice_lines FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = buyer_id)));
+
+CREATE POLICY web_select ON public.ledger_entries FOR SELECT TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_select ON public.ledger_heads FOR SELECT TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_select ON public.ledger_postings FOR SELECT TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_select ON public.makers FOR SELECT TO web USING (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) OR (EXISTS ( SELECT 1
    FROM public.trading_accounts t
@@ -2297,11 +3020,17 @@ CREATE POLICY web_select ON public.organisations FOR SELECT TO web USING (((id =
    FROM public.trading_accounts t
   WHERE (((t.seller_id = organisations.id) AND (t.buyer_id = ( SELECT public.ctx_org() AS ctx_org))) OR ((t.buyer_id = organisations.id) AND (t.seller_id = ( SELECT public.ctx_org() AS ctx_org))))))));
 
+CREATE POLICY web_select ON public.parcels FOR SELECT TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_select ON public.part_returns FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
+
 CREATE POLICY web_select ON public.parts FOR SELECT TO web USING (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) OR (EXISTS ( SELECT 1
    FROM public.trading_accounts t
   WHERE ((t.seller_id = parts.seller_id) AND (t.buyer_id = ( SELECT public.ctx_org() AS ctx_org)))))));
 
 CREATE POLICY web_select ON public.readings FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
+
+CREATE POLICY web_select ON public.return_lines FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
 
 CREATE POLICY web_select ON public.revision_evidence FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
 
@@ -2349,7 +3078,9 @@ CREATE POLICY web_update ON public.claim_queries FOR UPDATE TO web USING ((works
 
 CREATE POLICY web_update ON public.claims FOR UPDATE TO web USING (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) OR ((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (state <> ALL (ARRAY['draft'::text, 'discarded'::text]))))) WITH CHECK (((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) OR ((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (state <> ALL (ARRAY['draft'::text, 'discarded'::text])))));
 
-CREATE POLICY web_update ON public.evidence_files FOR UPDATE TO web USING ((workshop_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((workshop_id = ( SELECT public.ctx_org() AS ctx_org)));
+CREATE POLICY web_update ON public.credit_note_series FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_update ON public.evidence_files FOR UPDATE TO web USING ((((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) AND (taken_by = 'workshop'::text)) OR ((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (taken_by = 'goodsIn'::text)))) WITH CHECK ((((workshop_id = ( SELECT public.ctx_org() AS ctx_org)) AND (taken_by = 'workshop'::text)) OR ((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (taken_by = 'goodsIn'::text))));
 
 CREATE POLICY web_update ON public.fittings FOR UPDATE TO web USING ((workshop_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((workshop_id = ( SELECT public.ctx_org() AS ctx_org)));
 
@@ -2359,6 +3090,8 @@ CREATE POLICY web_update ON public.installers FOR UPDATE TO web USING ((workshop
 
 CREATE POLICY web_update ON public.invoice_imports FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
+CREATE POLICY web_update ON public.ledger_heads FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
 CREATE POLICY web_update ON public.makers FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_update ON public.membership_roles FOR UPDATE TO web USING ((organisation_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((organisation_id = ( SELECT public.ctx_org() AS ctx_org)));
@@ -2367,7 +3100,13 @@ CREATE POLICY web_update ON public.memberships FOR UPDATE TO web USING ((organis
 
 CREATE POLICY web_update ON public.organisations FOR UPDATE TO web USING ((id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((id = ( SELECT public.ctx_org() AS ctx_org)));
 
+CREATE POLICY web_update ON public.parcels FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_update ON public.part_returns FOR UPDATE TO web USING ((workshop_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((workshop_id = ( SELECT public.ctx_org() AS ctx_org)));
+
 CREATE POLICY web_update ON public.parts FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY web_update ON public.return_lines FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_update ON public.sites FOR UPDATE TO web USING ((organisation_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((organisation_id = ( SELECT public.ctx_org() AS ctx_org)));
 
@@ -2378,6 +3117,8 @@ CREATE POLICY web_update ON public.units FOR UPDATE TO web USING ((seller_id = (
 CREATE POLICY web_update ON public.users FOR UPDATE TO web USING ((id = ( SELECT public.ctx_actor() AS ctx_actor))) WITH CHECK ((id = ( SELECT public.ctx_actor() AS ctx_actor)));
 
 CREATE POLICY web_update ON public.vehicles FOR UPDATE TO web USING ((workshop_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((workshop_id = ( SELECT public.ctx_org() AS ctx_org)));
+
+CREATE POLICY worker_select ON public.credit_notes FOR SELECT TO worker USING (true);
 
 CREATE POLICY worker_select ON public.evidence_files FOR SELECT TO worker USING (true);
 
@@ -2415,6 +3156,9 @@ GRANT ALL ON FUNCTION guarded.chain_timeline() TO partproof_owner;
 REVOKE ALL ON FUNCTION guarded.clear_attempts(p_account text, p_address text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.clear_attempts(p_account text, p_address text) TO web;
 
+REVOKE ALL ON FUNCTION guarded.due_to_settle() FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.due_to_settle() TO worker;
+
 REVOKE ALL ON FUNCTION guarded.end_session(p_session uuid) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.end_session(p_session uuid) TO web;
 
@@ -2451,6 +3195,9 @@ GRANT ALL ON FUNCTION guarded.link_owner(p_token_hash text) TO web;
 REVOKE ALL ON FUNCTION guarded.mail_claim_people(p_claim uuid, p_to text, p_kind text, p_params jsonb, p_dedupe text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.mail_claim_people(p_claim uuid, p_to text, p_kind text, p_params jsonb, p_dedupe text) TO web;
 
+REVOKE ALL ON FUNCTION guarded.mail_credit_note(p_note uuid, p_kind text, p_params jsonb, p_dedupe text) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.mail_credit_note(p_note uuid, p_kind text, p_params jsonb, p_dedupe text) TO web;
+
 REVOKE ALL ON FUNCTION guarded.mail_link_owner(p_token_hash text, p_kind text, p_params jsonb, p_request text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.mail_link_owner(p_token_hash text, p_kind text, p_params jsonb, p_request text) TO web;
 
@@ -2479,6 +3226,9 @@ GRANT ALL ON FUNCTION guarded.session_context(p_session uuid) TO web;
 
 REVOKE ALL ON FUNCTION guarded.set_password(p_user uuid, p_password_hash text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.set_password(p_user uuid, p_password_hash text) TO web;
+
+REVOKE ALL ON FUNCTION guarded.settle_claim(p_claim uuid) FROM PUBLIC;
+GRANT ALL ON FUNCTION guarded.settle_claim(p_claim uuid) TO worker;
 
 REVOKE ALL ON FUNCTION guarded.sign_in_candidate(p_email text) FROM PUBLIC;
 GRANT ALL ON FUNCTION guarded.sign_in_candidate(p_email text) TO web;
@@ -2546,9 +3296,21 @@ GRANT UPDATE(parked_question) ON TABLE public.claims TO keeper;
 
 GRANT UPDATE(query_lapses_on) ON TABLE public.claims TO keeper;
 
+GRANT SELECT,INSERT ON TABLE public.credit_allocations TO web;
+
+GRANT SELECT,INSERT ON TABLE public.credit_note_lines TO web;
+
+GRANT SELECT,INSERT,UPDATE ON TABLE public.credit_note_series TO web;
+
+GRANT SELECT,INSERT ON TABLE public.credit_notes TO web;
+GRANT SELECT ON TABLE public.credit_notes TO worker;
+GRANT SELECT ON TABLE public.credit_notes TO keeper;
+
 GRANT SELECT,INSERT,UPDATE ON TABLE public.evidence_files TO web;
 GRANT SELECT,UPDATE ON TABLE public.evidence_files TO worker;
 GRANT SELECT ON TABLE public.evidence_files TO keeper;
+
+GRANT SELECT,INSERT ON TABLE public.findings TO web;
 
 GRANT SELECT,INSERT,UPDATE ON TABLE public.fittings TO web;
 
@@ -2559,6 +3321,12 @@ GRANT SELECT,INSERT,UPDATE ON TABLE public.installers TO web;
 GRANT SELECT,INSERT,UPDATE ON TABLE public.invoice_imports TO web;
 
 GRANT SELECT,INSERT ON TABLE public.invoice_lines TO web;
+
+GRANT SELECT,INSERT ON TABLE public.ledger_entries TO web;
+
+GRANT SELECT,INSERT,UPDATE ON TABLE public.ledger_heads TO web;
+
+GRANT SELECT,INSERT ON TABLE public.ledger_postings TO web;
 
 GRANT SELECT,INSERT,DELETE ON TABLE public.login_attempts TO keeper;
 
@@ -2579,9 +3347,43 @@ GRANT INSERT ON TABLE public.outbox TO web;
 GRANT SELECT,UPDATE ON TABLE public.outbox TO worker;
 GRANT INSERT ON TABLE public.outbox TO keeper;
 
+GRANT SELECT,INSERT ON TABLE public.parcels TO web;
+
+GRANT UPDATE(return_id) ON TABLE public.parcels TO web;
+
+GRANT UPDATE(matched_at) ON TABLE public.parcels TO web;
+
+GRANT UPDATE(matched_by_id) ON TABLE public.parcels TO web;
+
+GRANT SELECT,INSERT ON TABLE public.part_returns TO web;
+
+GRANT UPDATE(dispatched_at) ON TABLE public.part_returns TO web;
+
+GRANT UPDATE(dispatched_by_id) ON TABLE public.part_returns TO web;
+
+GRANT UPDATE(carrier) ON TABLE public.part_returns TO web;
+
+GRANT UPDATE(tracking_number) ON TABLE public.part_returns TO web;
+
 GRANT SELECT,INSERT,UPDATE ON TABLE public.parts TO web;
 
 GRANT SELECT,INSERT ON TABLE public.readings TO web;
+
+GRANT SELECT,INSERT ON TABLE public.return_lines TO web;
+
+GRANT UPDATE(parcel_id) ON TABLE public.return_lines TO web;
+
+GRANT UPDATE(place) ON TABLE public.return_lines TO web;
+
+GRANT UPDATE(serial_seen) ON TABLE public.return_lines TO web;
+
+GRANT UPDATE(received_at) ON TABLE public.return_lines TO web;
+
+GRANT UPDATE(disposed_as) ON TABLE public.return_lines TO web;
+
+GRANT UPDATE(disposed_at) ON TABLE public.return_lines TO web;
+
+GRANT UPDATE(disposed_by_id) ON TABLE public.return_lines TO web;
 
 GRANT SELECT,INSERT ON TABLE public.revision_evidence TO web;
 

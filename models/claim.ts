@@ -42,6 +42,7 @@ export class Claim extends Model<InferAttributes<Claim>, InferCreationAttributes
   declare decidedAt: CreationOptional<Date | null>;
   declare decidedById: CreationOptional<string | null>;
   declare contestUntil: CreationOptional<CalendarDay | null>;
+  declare contestWaivedAt: CreationOptional<Date | null>;
   declare lockVersion: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
@@ -80,6 +81,7 @@ Claim.init(
     decidedAt: DataTypes.DATE,
     decidedById: DataTypes.UUID,
     contestUntil: DataTypes.DATEONLY,
+    contestWaivedAt: DataTypes.DATE,
     lockVersion: DataTypes.INTEGER,
     createdAt: DataTypes.DATE,
     updatedAt: DataTypes.DATE,

@@ -16,6 +16,7 @@ const WITHOUT_ROW_SECURITY: Readonly<Record<string, string>> = {
 const UNIQUE_ACROSS: Readonly<Record<string, string>> = {
   users_email_key: "one account a person; web cannot insert, guarded.invite_person swallows the clash",
   claims_number_key: "seven random digits, drawn again on a clash",
+  part_returns_number_key: "eight random digits, drawn again on a clash",
   claim_drafts_pkey: "the claim's own id",
   claim_lines_claim_id_line_number_key: "within one claim",
   claim_lines_one_holder: "web cannot set holds_unit; guarded.hold_unit answers nothing",
