@@ -71,12 +71,25 @@ function FaultFacts({ number, draft, family }: CheckFactsProps) {
       <Fact term={t("exclusion.earlierWork")}>
         <Given>{draft.earlierWork}</Given>
       </Fact>
+      <Fact term={t("asked.title")}>
+        <Given>{askedInShort(draft, t)}</Given>
+      </Fact>
       <Fact term={t("fault.incident")}>
         <Given>{draft.incident && t(`fault.${draft.incident}`)}</Given>
       </Fact>
     </CheckCard>
   );
 }
+
+const ASKED = ["diagnosisAsked", "consumablesAsked", "carriageAsked"] as const;
+
+const askedInShort = (draft: ClaimDraft, t: ReturnType<typeof useTranslations<"draft">>): string =>
+  [
+    draft.labourMinutes && t("asked.labourShort", { minutes: draft.labourMinutes }),
+    ...ASKED.map((field) => draft[field] && `${t(`asked.${field}`)} ${draft[field]}`),
+  ]
+    .filter(Boolean)
+    .join("; ");
 
 function EvidenceFacts({ number, draft, evidence, rows }: CheckFactsProps) {
   const t = useTranslations("draft.check");

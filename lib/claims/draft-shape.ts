@@ -42,6 +42,10 @@ const shape = {
   testDrive: yesNo,
   incident: yesNo,
   incidentNote: typed(1000),
+  labourMinutes: typed(20),
+  diagnosisAsked: typed(20),
+  consumablesAsked: typed(20),
+  carriageAsked: typed(20),
 };
 
 const draftShape = z.strictObject({ ...shape, lines: z.array(z.strictObject(lineShape)).max(8) });

@@ -43,6 +43,10 @@ export const emptyDraft = (): ClaimDraft => ({
   testDrive: "",
   incident: "",
   incidentNote: "",
+  labourMinutes: "",
+  diagnosisAsked: "",
+  consumablesAsked: "",
+  carriageAsked: "",
 });
 
 /** Far above the rows of any list: what is sent beyond them is not kept, so that a draft cannot grow without end. */

@@ -70,6 +70,15 @@ export const claimFacts = z.strictObject({
     })
     .nullable(),
   incident: z.strictObject({ note: z.string() }).nullable(),
+  /** What is asked for besides the part; absent where nothing is. */
+  asked: z
+    .strictObject({
+      labourMinutes: z.int().min(0).max(6000),
+      diagnosisMinor: minor,
+      consumablesMinor: minor,
+      carriageMinor: minor,
+    })
+    .optional(),
   evidence: z.array(
     z.strictObject({
       id: z.uuid(),
@@ -83,6 +92,7 @@ export const claimFacts = z.strictObject({
 });
 
 export type ClaimFacts = z.infer<typeof claimFacts>;
+export type AskedBesides = NonNullable<ClaimFacts["asked"]>;
 export type FactLine = ClaimFacts["lines"][number];
 
 /** The one text of some facts: keys in order, no spaces, so that the same facts always have the same hash. */

@@ -54,5 +54,12 @@ export const CURRENCIES: readonly Currency[] = Object.values(CODES)
 /** True for an ISO 4217 code, in capitals, that has a minor unit. */
 export const isCurrency = (text: string): text is Currency => DIGITS.has(text);
 
+/** The currency of data that was checked when it came in, as a `char(3)` column gives it. Throws RangeError for any other text. */
+export function currencyFrom(text: string): Currency {
+  const code = text.trim();
+  if (!isCurrency(code)) throw new RangeError(`unknown currency ${code}`);
+  return code;
+}
+
 /** Decimals of the currency's minor unit by ISO 4217: 2 for EUR, 0 for JPY, 3 for KWD. */
 export const minorDigits = (currency: Currency): number => DIGITS.get(currency) ?? 2;

@@ -4,7 +4,7 @@ import type { ClaimDraft } from "@/lib/claims/draft";
 import { readDraft, type FoundLine } from "@/lib/claims/filing/read-draft";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { FAMILIES } from "@/lib/parts/families";
-import { ORGANISATIONS } from "../story/organisations";
+import { accountBetween, ORGANISATIONS } from "../story/organisations";
 import type { Case, CaseLine } from "./case";
 import type { RowsAsked } from "./rows-asked";
 
@@ -40,6 +40,7 @@ export function factsSent(one: Case, { draft, asked, sentOn, evidence }: Sending
     today: sentOn,
     filedOn: sentOn,
     locale: ORGANISATIONS[one.workshop].language,
+    currency: accountBetween(one.seller, one.workshop).currency,
     family: FAMILIES[one.family],
     rows: asked.rows,
     evidenceListId: asked.listId,

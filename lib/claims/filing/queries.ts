@@ -2,6 +2,7 @@ import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { dayInZone } from "@/lib/kernel/calendar-day";
+import { currencyFrom } from "@/lib/kernel/currency";
 import { normaliseSerial } from "@/lib/labels/serial";
 import { familyOf } from "@/lib/parts/families";
 import { findSoldLine, findSoldUnit, type SoldUnit } from "@/lib/parts/queries";
@@ -123,6 +124,7 @@ export async function draftContext(
     today: dayInZone(now, work.actor.timeZone),
     filedOn,
     locale: work.actor.locale,
+    currency: currencyFrom(claim.currency),
     family,
     rows: list.rows,
     evidenceListId: list.id,

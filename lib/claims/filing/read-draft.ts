@@ -1,14 +1,16 @@
 import { completeness } from "@/lib/evidence/completeness";
 import { readReading } from "@/lib/evidence/reading";
+import type { Currency } from "@/lib/kernel/currency";
 import { isAfter, isBefore, type CalendarDay } from "@/lib/kernel/calendar-day";
 import type { Locale } from "@/lib/kernel/locale";
 import { readTypedDay } from "@/lib/kernel/typed-day";
 import { readingKindOf, symptomOf, type PartFamily } from "@/lib/parts/family";
 import type { EvidenceRow } from "@/lib/rule-book/evidence-list-shape";
 import type { ClaimDraft, DraftLine } from "../draft";
-import type { ClaimFacts, FactLine } from "../facts-shape";
+import type { AskedBesides, ClaimFacts, FactLine } from "../facts-shape";
 import { givenByRow, type Given } from "../given";
 import type { DraftStep } from "../paths";
+import { readAsked } from "./read-asked";
 
 /** What the database knows about a line: found by the ids in the draft, never by what was typed. */
 export type FoundLine = Pick<FactLine, "part" | "unit" | "invoiceLine" | "installer"> & {
@@ -20,6 +22,7 @@ export type DraftContext = {
   readonly today: CalendarDay;
   readonly filedOn: CalendarDay;
   readonly locale: Locale;
+  readonly currency: Currency;
   readonly family: PartFamily;
   readonly rows: readonly EvidenceRow[];
   readonly evidenceListId: string | null;
@@ -79,10 +82,14 @@ export function readDraft(
   if (lines.length === 0) problems.add({ step: "part", field: "serial" }, "lineMissing");
   const given = givenIn(draft, readings, context);
   checkRows(given, context, problems);
+  const asked = readBesides(draft, reading);
 
   const read = lines.filter((line) => line !== null);
   if (problems.list.length > 0 || failedOn === null) return { facts: null, problems: problems.list };
-  return { facts: factsOf(draft, context, { failedOn, repairedOn, lines: read, given }), problems: [] };
+  return {
+    facts: factsOf(draft, context, { failedOn, repairedOn, lines: read, given, asked }),
+    problems: [],
+  };
 }
 
 const missingDay = (typed: string, problems: Problems): null =>
@@ -177,6 +184,12 @@ function checkRows(given: Given, context: DraftContext, problems: Problems) {
   }
 }
 
+function readBesides(draft: ClaimDraft, { context, problems }: Reader): AskedBesides | null {
+  const { asked, refused } = readAsked(draft, context.currency);
+  for (const { field, code, detail } of refused) problems.add({ step: "fault", field }, code, detail);
+  return asked;
+}
+
 /** The texts somebody really wrote, by the row they belong to. */
 const written = (texts: Readonly<Record<string, string>>): [id: string, text: string][] =>
   Object.entries(texts).flatMap(([id, text]) => (text.trim() === "" ? [] : [[id, text.trim()]]));
@@ -190,10 +203,16 @@ const givenIn = (draft: ClaimDraft, readings: Reading[], context: DraftContext):
   evidence: context.evidence,
 });
 
-type ReadParts = { failedOn: CalendarDay; repairedOn: CalendarDay | null; lines: FactLine[]; given: Given };
+type ReadParts = {
+  failedOn: CalendarDay;
+  repairedOn: CalendarDay | null;
+  lines: FactLine[];
+  given: Given;
+  asked: AskedBesides | null;
+};
 
 function factsOf(draft: ClaimDraft, context: DraftContext, read: ReadParts): ClaimFacts {
-  const { failedOn, repairedOn, lines, given } = read;
+  const { failedOn, repairedOn, lines, given, asked } = read;
   return {
     shape: 1,
     filedOn: context.filedOn,
@@ -211,6 +230,7 @@ function factsOf(draft: ClaimDraft, context: DraftContext, read: ReadParts): Cla
     conditionNote: draft.conditionNote.trim(),
     earlierWork: draft.earlierWork.trim(),
     incident: draft.incident === "yes" ? { note: draft.incidentNote.trim() } : null,
+    ...(asked ? { asked } : {}),
     evidenceListId: context.evidenceListId,
   };
 }

@@ -1,4 +1,4 @@
-import { isCurrency } from "@/lib/kernel/currency";
+import { currencyFrom } from "@/lib/kernel/currency";
 import type { ClaimState, VerdictOutcome } from "../lifecycle";
 import { printClaimNumber } from "../number";
 import type { ClaimList, ListedClaim } from "./queries";
@@ -9,29 +9,26 @@ import type { ClaimItem, ClaimItems, ClaimMark } from "./view";
 const markOf = (state: ClaimState, outcome: VerdictOutcome | null): ClaimMark =>
   state === "decided" ? (outcome ?? "upheldInPart") : state;
 
-const presentItem = (claim: ListedClaim): ClaimItem => {
-  const currency = claim.currency.trim();
-  return {
-    number: printClaimNumber(claim.number),
-    mark: markOf(claim.state, claim.outcome),
-    partName: claim.partName,
-    partNumber: claim.partNumber,
-    serial: claim.serial,
-    family: claim.family,
-    symptom: claim.symptom,
-    otherParty: claim.otherParty,
-    lineCount: claim.lineCount,
-    askedMinor: claim.askedMinor,
-    currency: isCurrency(currency) ? currency : "EUR",
-    filedAt: claim.filedAt?.toISOString() ?? null,
-    updatedAt: claim.updatedAt.toISOString(),
-    answerDueAt: claim.answerDueAt?.toISOString() ?? null,
-    isClockStopped: claim.clockStoppedAt !== null,
-    safetyReported: claim.safetyReported,
-    holderName: claim.holderName,
-    flagCount: claim.flagCount,
-  };
-};
+const presentItem = (claim: ListedClaim): ClaimItem => ({
+  number: printClaimNumber(claim.number),
+  mark: markOf(claim.state, claim.outcome),
+  partName: claim.partName,
+  partNumber: claim.partNumber,
+  serial: claim.serial,
+  family: claim.family,
+  symptom: claim.symptom,
+  otherParty: claim.otherParty,
+  lineCount: claim.lineCount,
+  askedMinor: claim.askedMinor,
+  currency: currencyFrom(claim.currency),
+  filedAt: claim.filedAt?.toISOString() ?? null,
+  updatedAt: claim.updatedAt.toISOString(),
+  answerDueAt: claim.answerDueAt?.toISOString() ?? null,
+  isClockStopped: claim.clockStoppedAt !== null,
+  safetyReported: claim.safetyReported,
+  holderName: claim.holderName,
+  flagCount: claim.flagCount,
+});
 
 /** One page of a list, as it travels. */
 export const presentList = ({ claims, total, counts }: ClaimList, page: number): ClaimItems => ({

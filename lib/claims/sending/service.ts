@@ -14,6 +14,7 @@ import { ClaimDraft as DraftRow } from "@/models/claim-draft";
 import { storedDraft } from "../draft-shape";
 import { canonicalText, type ClaimFacts } from "../facts-shape";
 import { draftContext } from "../filing/queries";
+import { besidesMinor } from "../filing/read-asked";
 import { readDraft } from "../filing/read-draft";
 import { nameOf } from "../parties/queries";
 import { moveClaim } from "../moves/service";
@@ -79,7 +80,7 @@ const safetyOf = (claim: Claim, facts: ClaimFacts, now: Date) => {
 };
 
 const sumOf = (facts: ClaimFacts): string =>
-  facts.lines.reduce((sum, line) => sum + BigInt(line.askedMinor), 0n).toString();
+  facts.lines.reduce((sum, line) => sum + BigInt(line.askedMinor), besidesMinor(facts)).toString();
 
 /** What every sending writes on the claim's row. */
 const changesOf = (claim: Claim, facts: ClaimFacts, now: Date) => ({

@@ -1,7 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import type { Coverage } from "@/lib/coverage/coverage";
-import { isCurrency, type Currency } from "@/lib/kernel/currency";
+import { currencyFrom } from "@/lib/kernel/currency";
 import { money, type Money } from "@/lib/kernel/money";
 import type { Limits } from "@/lib/rule-book/limits-shape";
 import { claimFacts, type ClaimFacts, type FactLine } from "../facts-shape";
@@ -26,13 +26,7 @@ export type WorkedOut = {
   readonly caseLine: CaseLine | null;
 };
 
-const currencyOf = (code: string): Currency => {
-  const trimmed = code.trim();
-  if (!isCurrency(trimmed)) throw new Error(`unknown currency ${trimmed}`);
-  return trimmed;
-};
-
-const amount = (minor: string, currency: string): Money => money(BigInt(minor), currencyOf(currency));
+const amount = (minor: string, currency: string): Money => money(BigInt(minor), currencyFrom(currency));
 const iso = (at: Date | null): string | null => at?.toISOString() ?? null;
 
 /** The facts of the newest revision, or null for a claim that was never sent. */

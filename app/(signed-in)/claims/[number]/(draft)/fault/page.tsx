@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import { getTranslations } from "next-intl/server";
+import { AskedFields } from "@/components/claims/asked-fields";
 import { Cautions } from "@/components/claims/cautions";
 import { DraftForm } from "@/components/claims/draft-form";
 import { ExclusionFields } from "@/components/claims/exclusion-fields";
@@ -45,6 +46,7 @@ export default async function FaultStepPage(props: StepProps) {
         />
         <ExclusionFields draft={draft} family={context.family} />
         <SwapFields draft={draft} />
+        <AskedFields draft={draft} currency={context.currency} problems={sentences} />
         <StepButtons />
       </DraftForm>
     </div>
