@@ -101,6 +101,8 @@ const returns = `
     add foreign key (seller_id, workshop_id, finding_id) references findings (seller_id, workshop_id, id),
     add check ((taken_by = 'goodsIn') = (finding_id is not null));
   create index readings_by_finding on readings (finding_id) where finding_id is not null;
+  -- What was found is a row of its own now.
+  alter table claim_lines drop column finding;
 `;
 
 // The bench adds its own photos and logs to a claim. Whoever brought a file in may take it back, the other side may not.
@@ -148,5 +150,6 @@ export const down = (run: Run) =>
     drop index readings_by_finding;
     alter table readings drop column finding_id;
     drop table findings, return_lines, parcels, part_returns cascade;
+    alter table claim_lines add column finding jsonb;
     drop index claim_lines_by_return_state;
   `);

@@ -286,17 +286,27 @@ CREATE FUNCTION guarded.mail_claim_people(p_claim uuid, p_to text, p_kind text, 
     begin
       select * into claim from claims c where c.id = p_claim and ctx_org() in (c.seller_id, c.workshop_id);
       if claim.id is null then return 0; end if;
+      with people as (
+        select u.id, u.email, u.locale, u.name, m.organisation_id,
+          p_to = 'workshop' or u.id = claim.holder_id as is_mailed
+        from memberships m join users u on u.id = m.user_id and u.disabled_at is null
+          cross join lateral (select array(select r.role from membership_roles r
+            where r.organisation_id = m.organisation_id and r.user_id = m.user_id) as roles) held
+        where m.organisation_id = case p_to when 'workshop' then claim.workshop_id when 'holder' then claim.seller_id end
+          and m.disabled_at is null and m.accepted_at is not null
+          and case p_to when 'workshop' then u.id = claim.created_by_id or 'workshopManager' = any (held.roles)
+            else u.id = claim.holder_id or (p_kind = 'queryAnswered' and 'assessor' = any (held.roles)) end),
+      told as (
+        insert into alerts (organisation_id, user_id, kind, claim_number, dedupe_key, params, read_at)
+          select p.organisation_id, p.id, p_kind, claim.number, ctx_org() || ':' || p_dedupe, (select coalesce(jsonb_object_agg(key, value), '{}') from jsonb_each(p_params)
+  where jsonb_typeof(value) in ('string', 'number')
+    and key not in ('link', 'number', 'name', 'letter', 'question', 'note', 'instructions', 'reason', 'sendTo')),
+            case when p.id = ctx_actor() then now() end
+          from people p on conflict do nothing)
       insert into outbox (organisation_id, kind, dedupe_key, recipient, locale, params, request_id)
-        select ctx_org(), p_kind, p_dedupe || ':' || u.id, u.email, u.locale, p_params || jsonb_build_object('name', u.name),
+        select ctx_org(), p_kind, p_dedupe || ':' || p.id, p.email, p.locale, p_params || jsonb_build_object('name', p.name),
           nullif(current_setting('app.request_id', true), '')
-        from users u
-        where u.disabled_at is null and (
-          (p_to = 'workshop' and exists (select 1 from memberships m where m.user_id = u.id
-            and m.organisation_id = claim.workshop_id and m.disabled_at is null and m.accepted_at is not null)
-            and (u.id = claim.created_by_id or exists (select 1 from membership_roles r where r.user_id = u.id
-              and r.organisation_id = claim.workshop_id and r.role = 'workshopManager')))
-          or (p_to = 'holder' and u.id = claim.holder_id and exists (select 1 from memberships m where m.user_id = u.id
-            and m.organisation_id = claim.seller_id and m.disabled_at is null and m.accepted_at is not null)));
+        from people p where p.is_mailed;
       get diagnostics sent = row_count;
       return sent;
     end $$;
@@ -341,17 +351,23 @@ CREATE FUNCTION guarded.mail_of_query(p_query uuid, p_kind text, p_dedupe text, 
     LANGUAGE sql
     SET search_path TO 'pg_catalog', 'public', 'pg_temp'
     AS $$
-    insert into outbox (kind, dedupe_key, recipient, locale, params)
-      select p_kind, p_dedupe || ':' || u.id, u.email, u.locale, p_params || jsonb_build_object('name', u.name)
-      from claim_queries q join claims c on c.id = q.claim_id join users u on u.disabled_at is null
+    with people as (
+      select u.id, u.email, u.locale, u.name, c.number, m.organisation_id
+      from claim_queries q join claims c on c.id = q.claim_id
+        join memberships m on m.organisation_id in (c.workshop_id, c.seller_id) and m.disabled_at is null
+        join users u on u.id = m.user_id and u.disabled_at is null
       where q.id = p_query and (
-        (exists (select 1 from memberships m where m.user_id = u.id and m.organisation_id = c.workshop_id
-            and m.disabled_at is null)
-          and (u.id = c.created_by_id or exists (select 1 from membership_roles r where r.user_id = u.id
-            and r.organisation_id = c.workshop_id and r.role = 'workshopManager')))
-        or (p_asker_too and u.id = q.asked_by_id and exists (select 1 from memberships m where m.user_id = u.id
-          and m.organisation_id = c.seller_id and m.disabled_at is null)))
-      on conflict do nothing $$;
+        (m.organisation_id = c.workshop_id and (u.id = c.created_by_id or exists (select 1 from membership_roles r
+          where r.user_id = u.id and r.organisation_id = c.workshop_id and r.role = 'workshopManager')))
+        or (p_asker_too and m.organisation_id = c.seller_id and u.id = q.asked_by_id))),
+    told as (
+      insert into alerts (organisation_id, user_id, kind, claim_number, dedupe_key, params)
+        select p.organisation_id, p.id, p_kind, p.number, p_dedupe, (select coalesce(jsonb_object_agg(key, value), '{}') from jsonb_each(p_params)
+  where jsonb_typeof(value) in ('string', 'number')
+    and key not in ('link', 'number', 'name', 'letter', 'question', 'note', 'instructions', 'reason', 'sendTo')) from people p on conflict do nothing)
+    insert into outbox (kind, dedupe_key, recipient, locale, params)
+      select p_kind, p_dedupe || ':' || p.id, p.email, p.locale, p_params || jsonb_build_object('name', p.name)
+      from people p on conflict do nothing $$;
 
 ALTER FUNCTION guarded.mail_of_query(p_query uuid, p_kind text, p_dedupe text, p_params jsonb, p_asker_too boolean) OWNER TO keeper;
 
@@ -823,6 +839,24 @@ CREATE FUNCTION public.touch_row() RETURNS trigger
 
 ALTER FUNCTION public.touch_row() OWNER TO partproof_owner;
 
+CREATE TABLE public.alerts (
+    id uuid DEFAULT gen_random_uuid() NOT NULL,
+    organisation_id uuid NOT NULL,
+    user_id uuid NOT NULL,
+    kind text NOT NULL,
+    claim_number text NOT NULL,
+    dedupe_key text NOT NULL,
+    params jsonb NOT NULL,
+    at timestamp with time zone DEFAULT now() NOT NULL,
+    read_at timestamp with time zone,
+    CONSTRAINT alerts_claim_number_check CHECK ((claim_number ~ '^[0-9]{8}$'::text)),
+    CONSTRAINT alerts_kind_check CHECK (((length(kind) >= 1) AND (length(kind) <= 60)))
+);
+
+ALTER TABLE ONLY public.alerts FORCE ROW LEVEL SECURITY;
+
+ALTER TABLE public.alerts OWNER TO partproof_owner;
+
 CREATE TABLE public.audit_heads (
     organisation_id uuid NOT NULL,
     seq bigint DEFAULT 0 NOT NULL,
@@ -888,7 +922,6 @@ CREATE TABLE public.claim_lines (
     asked_minor bigint DEFAULT 0 NOT NULL,
     verdict text,
     attribution jsonb,
-    finding jsonb,
     return_state text DEFAULT 'notNeeded'::text NOT NULL,
     return_waived_reason text,
     credit_state text DEFAULT 'none'::text NOT NULL,
@@ -1741,6 +1774,12 @@ CREATE TABLE public.worker_heartbeats (
 
 ALTER TABLE public.worker_heartbeats OWNER TO partproof_owner;
 
+ALTER TABLE ONLY public.alerts
+    ADD CONSTRAINT alerts_organisation_id_user_id_dedupe_key_key UNIQUE (organisation_id, user_id, dedupe_key);
+
+ALTER TABLE ONLY public.alerts
+    ADD CONSTRAINT alerts_pkey PRIMARY KEY (id);
+
 ALTER TABLE ONLY public.audit_heads
     ADD CONSTRAINT audit_heads_pkey PRIMARY KEY (organisation_id);
 
@@ -2056,6 +2095,10 @@ ALTER TABLE ONLY public.verdicts
 ALTER TABLE ONLY public.worker_heartbeats
     ADD CONSTRAINT worker_heartbeats_pkey PRIMARY KEY (name);
 
+CREATE INDEX alerts_newest ON public.alerts USING btree (organisation_id, user_id, at DESC, id);
+
+CREATE INDEX alerts_unread ON public.alerts USING btree (organisation_id, user_id, at) WHERE (read_at IS NULL);
+
 CREATE INDEX claim_flags_by_claim ON public.claim_flags USING btree (claim_id);
 
 CREATE INDEX claim_lines_by_claim ON public.claim_lines USING btree (claim_id);
@@ -2101,6 +2144,8 @@ CREATE INDEX claims_received_urgent ON public.claims USING btree (seller_id, sta
 CREATE INDEX claims_to_settle ON public.claims USING btree (contest_until) WHERE (state = 'decided'::text);
 
 CREATE INDEX credit_allocations_by_note ON public.credit_allocations USING btree (note_id);
+
+CREATE INDEX credit_allocations_by_workshop ON public.credit_allocations USING btree (workshop_id, allocated_on);
 
 CREATE INDEX credit_note_lines_by_invoice_line ON public.credit_note_lines USING btree (seller_id, invoice_line_id);
 
@@ -2351,6 +2396,9 @@ ALTER TABLE public.verdicts ENABLE ALWAYS TRIGGER verdicts_append_only;
 CREATE TRIGGER verdicts_no_truncate BEFORE TRUNCATE ON public.verdicts FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
 
 ALTER TABLE public.verdicts ENABLE ALWAYS TRIGGER verdicts_no_truncate;
+
+ALTER TABLE ONLY public.alerts
+    ADD CONSTRAINT alerts_organisation_id_user_id_fkey FOREIGN KEY (organisation_id, user_id) REFERENCES public.memberships(organisation_id, user_id) ON DELETE CASCADE;
 
 ALTER TABLE ONLY public.audit_heads
     ADD CONSTRAINT audit_heads_organisation_id_fkey FOREIGN KEY (organisation_id) REFERENCES public.organisations(id);
@@ -2706,6 +2754,8 @@ ALTER TABLE ONLY public.verdicts
 ALTER TABLE ONLY public.verdicts
     ADD CONSTRAINT verdicts_seller_id_workshop_id_reverses_id_fkey FOREIGN KEY (seller_id, workshop_id, reverses_id) REFERENCES public.verdicts(seller_id, workshop_id, id);
 
+ALTER TABLE public.alerts ENABLE ROW LEVEL SECURITY;
+
 ALTER TABLE public.audit_heads ENABLE ROW LEVEL SECURITY;
 
 ALTER TABLE public.audit_log ENABLE ROW LEVEL SECURITY;
@@ -2773,6 +2823,8 @@ CREATE POLICY keeper_clock ON public.claims FOR UPDATE TO keeper USING ((state =
 CREATE POLICY keeper_clock ON public.timeline_entries FOR INSERT TO keeper WITH CHECK (((kind = ANY (ARRAY['reminded'::text, 'lapse'::text])) AND (actor_id IS NULL) AND (actor_organisation_id IS NULL)));
 
 CREATE POLICY keeper_flags ON public.claim_flags TO keeper USING (true) WITH CHECK (true);
+
+CREATE POLICY keeper_insert ON public.alerts FOR INSERT TO keeper WITH CHECK (true);
 
 CREATE POLICY keeper_insert ON public.audit_log FOR INSERT TO keeper WITH CHECK (true);
 
@@ -2956,6 +3008,8 @@ CREATE POLICY web_insert ON public.verdict_lines FOR INSERT TO web WITH CHECK ((
 
 CREATE POLICY web_insert ON public.verdicts FOR INSERT TO web WITH CHECK (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) AND (decided_by_id = ( SELECT public.ctx_actor() AS ctx_actor))));
 
+CREATE POLICY web_select ON public.alerts FOR SELECT TO web USING (((organisation_id = ( SELECT public.ctx_org() AS ctx_org)) AND (user_id = ( SELECT public.ctx_actor() AS ctx_actor))));
+
 CREATE POLICY web_select ON public.audit_log FOR SELECT TO web USING ((organisation_id = ( SELECT public.ctx_org() AS ctx_org)));
 
 CREATE POLICY web_select ON public.batches FOR SELECT TO web USING (((seller_id = ( SELECT public.ctx_org() AS ctx_org)) OR (EXISTS ( SELECT 1
@@ -3063,6 +3117,8 @@ CREATE POLICY web_select ON public.vehicles FOR SELECT TO web USING (((workshop_
 CREATE POLICY web_select ON public.verdict_lines FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
 
 CREATE POLICY web_select ON public.verdicts FOR SELECT TO web USING (((( SELECT public.ctx_org() AS ctx_org) = seller_id) OR (( SELECT public.ctx_org() AS ctx_org) = workshop_id)));
+
+CREATE POLICY web_update ON public.alerts FOR UPDATE TO web USING (((organisation_id = ( SELECT public.ctx_org() AS ctx_org)) AND (user_id = ( SELECT public.ctx_actor() AS ctx_actor)))) WITH CHECK (((organisation_id = ( SELECT public.ctx_org() AS ctx_org)) AND (user_id = ( SELECT public.ctx_actor() AS ctx_actor))));
 
 CREATE POLICY web_update ON public.batches FOR UPDATE TO web USING ((seller_id = ( SELECT public.ctx_org() AS ctx_org))) WITH CHECK ((seller_id = ( SELECT public.ctx_org() AS ctx_org)));
 
@@ -3251,6 +3307,11 @@ GRANT SELECT,INSERT ON TABLE public.audit_log TO keeper;
 
 GRANT SELECT,INSERT ON TABLE public.timeline_entries TO web;
 GRANT INSERT ON TABLE public.timeline_entries TO keeper;
+
+GRANT SELECT ON TABLE public.alerts TO web;
+GRANT INSERT ON TABLE public.alerts TO keeper;
+
+GRANT UPDATE(read_at) ON TABLE public.alerts TO web;
 
 GRANT SELECT,INSERT,UPDATE ON TABLE public.audit_heads TO keeper;
 

@@ -51,6 +51,11 @@ export const APPEND_ONLY = [
   "timeline_entries",
   "claim_messages",
   "revision_evidence",
+  "credit_notes",
+  "credit_note_lines",
+  "credit_allocations",
+  "ledger_entries",
+  "ledger_postings",
 ] as const;
 
 const texts = (rows: readonly Found[]) => rows.map(({ what }) => what);

@@ -21,7 +21,10 @@ const COLUMN_TYPE: Readonly<Record<string, string>> = {
   "ARRAY(TEXT)": "_text",
 };
 
-const typeOf = (type: unknown): string => String(Reflect.get(Object(type), "key"));
+const typeOf = (type: unknown): string => {
+  const key = String(Reflect.get(Object(type), "key"));
+  return key === "ARRAY" ? `ARRAY(${typeOf(Reflect.get(Object(type), "type"))})` : key;
+};
 
 beforeAll(async () => {
   for (const file of readdirSync(FOLDER)) await import(/* @vite-ignore */ join(FOLDER, file));
