@@ -1,59 +1,79 @@
 import "server-only";
+import { fn } from "sequelize";
 import { z } from "zod";
 import type { Actor } from "@/lib/access/actor";
 import { hasRight } from "@/lib/access/rights";
 import { rows, undoing, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { isBenchRow, lineOfBenchRow } from "@/lib/evidence/bench-rows";
 import { FILE_KINDS, LIMITS, type FileKind } from "@/lib/kernel/limits";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { originalKey } from "@/lib/storage/keys";
 import { copyOnce, remove } from "@/lib/storage/objects";
 import { receiveFile, type Received, type ReceiveRefusal } from "@/lib/storage/receive";
+import { Claim } from "@/models/claim";
+import { ClaimLine } from "@/models/claim-line";
+import { EvidenceFile } from "@/models/evidence-file";
 import { presentEvidence, type EvidenceRow } from "./present";
 import { EVIDENCE, isEvidenceId } from "./queries";
 
 const target = z.object({
   claimId: z.uuid(),
-  rowId: z.string().regex(/^[a-z][A-Za-z0-9]{0,59}$/u),
+  rowId: z
+    .string()
+    .regex(/^[a-z][A-Za-z0-9]{0,59}$/u)
+    .or(z.string().refine((text) => lineOfBenchRow(text) !== null)),
   kind: z.enum(FILE_KINDS),
 });
 const captured = z.object({ takenAt: z.iso.datetime().optional(), by: z.literal("phone").optional() });
 
 type Target = z.infer<typeof target>;
-type ClaimRow = {
-  id: string;
-  sellerId: string;
-  workshopId: string;
-  state: string;
-};
 export type EvidenceRefusal =
   ReceiveRefusal | "notFound" | "notAllowed" | "moveNotOpen" | "filesTooMany" | "bytesTooMany";
 
-/** The claim an upload is for, locked, if it is this workshop's and still takes files. */
+/** Whose file it is by its row: the bench has rows of its own, everything else is the workshop's. */
+const takenBy = (rowId: string): "workshop" | "goodsIn" => (isBenchRow(rowId) ? "goodsIn" : "workshop");
+
+/** The claim an upload is for, locked, if it is this side's and still takes files: a draft, or a part at the bench. */
 async function openClaim(
   work: Work,
-  claimId: string,
-): Promise<Outcome<ClaimRow, "notFound" | "moveNotOpen">> {
-  const [claim] = await rows<ClaimRow>(
-    work,
-    `select id, seller_id as "sellerId", workshop_id as "workshopId", state from claims
-     where id = $1 and workshop_id = $2 for update`,
-    [claimId, work.actor.organisationId],
-  );
+  { claimId, rowId }: Target,
+): Promise<Outcome<Claim, "notFound" | "moveNotOpen">> {
+  const isBench = takenBy(rowId) === "goodsIn";
+  const { transaction, actor } = work;
+  const side = isBench ? { sellerId: actor.organisationId } : { workshopId: actor.organisationId };
+  const claim = await Claim.findOne({
+    where: { id: claimId, ...side },
+    transaction,
+    lock: transaction.LOCK.UPDATE,
+  });
   if (!claim) return refuse("notFound");
-  return claim.state === "draft" || claim.state === "answerNeeded" ? ok(claim) : refuse("moveNotOpen");
+  const isOpen = isBench
+    ? await isAtBench(work, claim, lineOfBenchRow(rowId))
+    : claim.state === "draft" || claim.state === "answerNeeded";
+  return isOpen ? ok(claim) : refuse("moveNotOpen");
+}
+
+/** Whether the part of a line has arrived and is not disposed of. */
+async function isAtBench(work: Work, claim: Claim, lineNumber: number | null): Promise<boolean> {
+  if (lineNumber === null) return false;
+  const line = await ClaimLine.findOne({
+    where: { claimId: claim.id, lineNumber, returnState: ["received", "examined"] },
+    transaction: work.transaction,
+  });
+  return line !== null;
 }
 
 /** Counted by a statement of its own, which begins under the claim's lock and so sees what the one before it kept. */
 async function room(
   work: Work,
-  claim: ClaimRow,
-  moreBytes: number,
+  claim: Claim,
+  { rowId, moreBytes }: { rowId: string; moreBytes: number },
 ): Promise<Outcome<true, "filesTooMany" | "bytesTooMany">> {
   const [held] = await rows<{ files: number; bytes: string }>(
     work,
     `select count(*)::int as files, coalesce(sum(size_bytes), 0) as bytes from evidence_files
-     where claim_id = $1 and withdrawn_at is null`,
-    [claim.id],
+     where claim_id = $1 and withdrawn_at is null and taken_by = $2`,
+    [claim.id, takenBy(rowId)],
   );
   if (held && held.files >= LIMITS.filesPerClaim)
     return refuse("filesTooMany", { most: LIMITS.filesPerClaim });
@@ -61,8 +81,10 @@ async function room(
   return isOver ? refuse("bytesTooMany", { mostMb: LIMITS.bytesPerClaim / 1e6 }) : ok(true);
 }
 
-const writesClaims = ({ roles }: Actor): boolean =>
-  hasRight(roles, "startClaim", { sells: false, buys: true });
+const mayWrite = ({ roles }: Actor, rowId: string): boolean =>
+  takenBy(rowId) === "goodsIn"
+    ? hasRight(roles, "receiveParts", { sells: true, buys: false })
+    : hasRight(roles, "startClaim", { sells: false, buys: true });
 
 /** Before a byte is kept: is there such a claim, does it take files, is there room. */
 const decideFor =
@@ -70,11 +92,12 @@ const decideFor =
   async (fields: Readonly<Record<string, string>>): Promise<Outcome<FileKind, EvidenceRefusal>> => {
     const given = target.safeParse(fields);
     if (!given.success) return refuse("notFound");
-    if (!writesClaims(actor)) return refuse("notAllowed");
+    const { rowId } = given.data;
+    if (!mayWrite(actor, rowId)) return refuse("notAllowed");
     return unitOfWork(actor, async (work) => {
-      const claim = await openClaim(work, given.data.claimId);
+      const claim = await openClaim(work, given.data);
       if (!claim.ok) return claim;
-      const space = await room(work, claim.value, 0);
+      const space = await room(work, claim.value, { rowId, moreBytes: 0 });
       return space.ok ? ok(given.data.kind) : space;
     });
   };
@@ -90,13 +113,13 @@ const readCaptured = (text: string | undefined): unknown => {
 
 type Arrived = { to: Target; file: Received; capturedText: string | undefined };
 
-async function insertRow(work: Work, claim: ClaimRow, { to, file, capturedText }: Arrived) {
+async function insertRow(work: Work, claim: Claim, { to, file, capturedText }: Arrived) {
   const isPhoto = to.kind === "photo";
   const [made] = await rows<{ id: string }>(
     work,
     `insert into evidence_files (claim_id, seller_id, workshop_id, row_id, kind, media_type, original_name, size_bytes, sha256,
-       object_key, view_state, captured, uploaded_by_id)
-     values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11, $12, $13)
+       object_key, view_state, captured, uploaded_by_id, taken_by)
+     values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11, $12, $13, $14)
      on conflict (claim_id, row_id, sha256) do nothing returning id`,
     [
       claim.id,
@@ -112,6 +135,7 @@ async function insertRow(work: Work, claim: ClaimRow, { to, file, capturedText }
       isPhoto ? "waiting" : "notNeeded",
       JSON.stringify(readCaptured(capturedText)),
       work.actor.userId,
+      takenBy(to.rowId),
     ],
   );
   if (made) {
@@ -135,9 +159,10 @@ async function insertRow(work: Work, claim: ClaimRow, { to, file, capturedText }
 /** Files the received bytes under their content and notes them on the claim, in one transaction under the claim's lock. */
 const keep = (actor: Actor, arrived: Arrived) =>
   undoing<ReturnType<typeof presentEvidence>, EvidenceRefusal>(actor, async (work) => {
-    const claim = await openClaim(work, arrived.to.claimId);
+    const { rowId } = arrived.to;
+    const claim = await openClaim(work, arrived.to);
     if (!claim.ok) return claim;
-    const space = await room(work, claim.value, arrived.file.sizeBytes);
+    const space = await room(work, claim.value, { rowId, moreBytes: arrived.file.sizeBytes });
     if (!space.ok) return space;
     const row = await insertRow(work, claim.value, arrived);
     return row ? ok(presentEvidence(row)) : refuse("uploadBroken", { name: arrived.file.name });
@@ -160,26 +185,36 @@ export async function receiveEvidence(actor: Actor, request: Request) {
   }
 }
 
-/** Takes back a file that no sent revision holds. Its bytes stay until retention ends; nobody is shown them any more. */
+/**
+ * Takes back a file that no sent revision and no finding holds. Each side takes back its own alone. The bytes stay until
+ * retention ends; nobody is shown them any more.
+ */
 export const withdrawEvidence = (actor: Actor, id: string) =>
   undoing<{ id: string }, "notFound" | "notAllowed" | "evidenceSent">(actor, async (work) => {
     if (!isEvidenceId(id)) return refuse("notFound");
-    if (!writesClaims(actor)) return refuse("notAllowed");
+    const { transaction } = work;
+    const known = await EvidenceFile.findByPk(id, { attributes: ["id", "rowId"], transaction });
+    if (!known) return refuse("notFound");
+    if (!mayWrite(actor, known.rowId)) return refuse("notAllowed");
+    const asked = [id, actor.organisationId, takenBy(known.rowId)];
     // Under the claim's lock, in a statement of its own: a revision that is being sent just now keeps its files.
     await rows(
       work,
       `select c.id from claims c join evidence_files e on e.claim_id = c.id
-       where e.id = $1 and c.workshop_id = $2 for update of c`,
-      [id, actor.organisationId],
+       where e.id = $1 and e.taken_by = $3 and case $3 when 'goodsIn' then c.seller_id else c.workshop_id end = $2
+       for update of c`,
+      asked,
     );
     const [file] = await rows<{ id: string; isSent: boolean }>(
       work,
-      `select e.id, exists (select 1 from revision_evidence r where r.evidence_id = e.id) as "isSent"
-       from evidence_files e where e.id = $1 and e.workshop_id = $2 and e.withdrawn_at is null for update of e`,
-      [id, actor.organisationId],
+      `select e.id, exists (select 1 from revision_evidence r where r.evidence_id = e.id)
+         or exists (select 1 from findings f where f.evidence_id = e.id) as "isSent"
+       from evidence_files e where e.id = $1 and e.taken_by = $3 and e.withdrawn_at is null
+         and case $3 when 'goodsIn' then e.seller_id else e.workshop_id end = $2 for update of e`,
+      asked,
     );
     if (!file) return refuse("notFound");
     if (file.isSent) return refuse("evidenceSent");
-    await rows(work, "update evidence_files set withdrawn_at = now() where id = $1 returning id", [id]);
+    await known.update({ withdrawnAt: fn("now") }, { transaction });
     return ok({ id });
   });
