@@ -3,6 +3,7 @@ import { log } from "@/lib/web/log";
 import { beat } from "./tasks/beat";
 import { remindAndLapse } from "./tasks/remind-and-lapse";
 import { sendMails } from "./tasks/send-mails";
+import { settleClaims } from "./tasks/settle-claims";
 import { sweepUploads } from "./tasks/sweep-uploads";
 import { viewCopy } from "./tasks/view-copy";
 import { readRunLog } from "./tasks/read-run-log";
@@ -21,7 +22,7 @@ const runner = await run({
   concurrency: 2,
   noHandleSignals: false,
   pollInterval: 1000,
-  taskList: { beat, sendMails, viewCopy, readRunLog, sweepUploads, remindAndLapse },
+  taskList: { beat, sendMails, viewCopy, readRunLog, sweepUploads, remindAndLapse, settleClaims },
   parsedCronItems: parseCronItems([
     { task: "sweepUploads", match: "17 * * * *", identifier: "sweepUploads" },
     {
@@ -29,6 +30,12 @@ const runner = await run({
       match: "23 * * * *",
       identifier: "remindAndLapse",
       // Days pass while nothing runs: a round missed in the last hour is made up for at the start.
+      options: { backfillPeriod: 3_600_000 },
+    },
+    {
+      task: "settleClaims",
+      match: "41 * * * *",
+      identifier: "settleClaims",
       options: { backfillPeriod: 3_600_000 },
     },
   ]),

@@ -12,6 +12,7 @@ const PRESENT: Presenters = {
   evidenceList: (head, body) => ({ ...head, kind: "evidenceList", body: ruleBody("evidenceList", body) }),
   limits: (head, body) => ({ ...head, kind: "limits", body: ruleBody("limits", body) }),
   serviceLevels: (head, body) => ({ ...head, kind: "serviceLevels", body: ruleBody("serviceLevels", body) }),
+  credit: (head, body) => ({ ...head, kind: "credit", body: ruleBody("credit", body) }),
 };
 
 const subjectOf = ({ kind, family, partNumber }: StoredRule): string =>

@@ -7,6 +7,7 @@ export const RULE_KINDS = [
   "evidenceList",
   "limits",
   "serviceLevels",
+  "credit",
 ] as const satisfies readonly RuleKind[];
 
 /** The sheets of the book: its kinds of rules, and the reasons a verdict may give. */

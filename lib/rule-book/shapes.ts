@@ -1,4 +1,5 @@
 import type { z } from "zod";
+import { creditShape } from "./credit-shape";
 import { evidenceListShape } from "./evidence-list-shape";
 import { limitsShape } from "./limits-shape";
 import { serviceLevelsShape } from "./service-levels-shape";
@@ -10,6 +11,7 @@ export const RULE_SHAPES = {
   evidenceList: evidenceListShape,
   limits: limitsShape,
   serviceLevels: serviceLevelsShape,
+  credit: creditShape,
 } as const;
 
 export type RuleKind = keyof typeof RULE_SHAPES;

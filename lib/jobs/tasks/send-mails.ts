@@ -1,6 +1,6 @@
-import type { Task } from "graphile-worker";
 import type { PoolClient } from "pg";
-import { isLocale } from "@/lib/kernel/locale";
+import { noteAttachment, type Attachment } from "@/lib/documents/note-attachment";
+import { isLocale, type Locale } from "@/lib/kernel/locale";
 import { letterFor } from "@/lib/mail/letter";
 import { sendLetter } from "@/lib/mail/transport";
 import { log } from "@/lib/web/log";
@@ -15,6 +15,11 @@ type Waiting = {
   tries: number;
 };
 
+/** Of what the worker hands a task, all that this one needs. */
+type Connections = {
+  readonly withPgClient: <T>(act: (client: PoolClient) => Promise<T>) => Promise<T>;
+};
+
 const AT_ONCE = 20;
 const MOST_TRIES = 8;
 
@@ -27,11 +32,28 @@ const take = async (client: PoolClient): Promise<Waiting | undefined> => {
   return rows[0];
 };
 
+/** A mail about a credit note carries the note, made anew from its frozen document. */
+async function attachmentsOf(client: PoolClient, { params }: Waiting, locale: Locale): Promise<Attachment[]> {
+  if (typeof params.noteId !== "string") return [];
+  const { rows } = await client.query<{ document: unknown }>(
+    "select document from credit_notes where id = $1",
+    [params.noteId],
+  );
+  return Promise.all(rows.map(({ document }) => noteAttachment(document, locale)));
+}
+
 async function sendOne(client: PoolClient, mail: Waiting): Promise<void> {
   try {
     const locale = isLocale(mail.locale) ? mail.locale : "en";
     const letter = await letterFor(mail.kind, mail.params, locale);
-    await sendLetter({ ...letter, to: mail.recipient, requestId: mail.request_id, id: mail.id });
+    const attachments = await attachmentsOf(client, mail, locale);
+    await sendLetter({
+      ...letter,
+      attachments,
+      to: mail.recipient,
+      requestId: mail.request_id,
+      id: mail.id,
+    });
     await client.query("update outbox set sent_at = now(), tries = tries + 1 where id = $1", [mail.id]);
     log.info({ event: "mailSent", mail: mail.id, kind: mail.kind, requestId: mail.request_id });
   } catch (fault) {
@@ -52,7 +74,7 @@ async function sendOne(client: PoolClient, mail: Waiting): Promise<void> {
 }
 
 /** Sends what waits in the outbox, each under its own lock: two workers never send the same mail. */
-export const sendMails: Task = async (_payload, { withPgClient }) => {
+export const sendMails = async (_payload: unknown, { withPgClient }: Connections): Promise<void> => {
   for (let sent = 0; sent < AT_ONCE; sent += 1) {
     const isMore = await withPgClient(async (client) => {
       await client.query("begin");
