@@ -4,8 +4,10 @@ import { getTranslations } from "next-intl/server";
 import { ClaimList } from "@/components/claims/claim-list";
 import { LinkButton } from "@/components/ui/link-button";
 import { PageHeader } from "@/components/ui/page-header";
+import { TodayCard } from "@/components/workshop-today/today-card";
 import { listOwnClaims } from "@/lib/claims/lists/queries";
 import { listQuery, WORKSHOP_VIEWS } from "@/lib/claims/lists/schema";
+import { findWorkshopToday } from "@/lib/reports/workshop-today/queries";
 import { may, requireSession } from "@/lib/web/session";
 
 export async function generateMetadata(): Promise<Metadata> {
@@ -21,7 +23,10 @@ export default async function WorkshopTodayPage({ searchParams }: Props) {
   if (!may(session, "seeOwnClaims")) notFound();
   const query = listQuery.parse(search);
   const view = WORKSHOP_VIEWS.find((one) => one === query.view) ?? "onUs";
-  const list = await listOwnClaims(session.actor, { ...query, view });
+  const [list, today] = await Promise.all([
+    listOwnClaims(session.actor, { ...query, view }),
+    findWorkshopToday(session.actor),
+  ]);
   return (
     <>
       <PageHeader
@@ -35,6 +40,15 @@ export default async function WorkshopTodayPage({ searchParams }: Props) {
           ) : undefined
         }
       />
+      {today ? (
+        <TodayCard
+          today={today}
+          onUs={list.counts.onUs ?? 0}
+          onThem={list.counts.onThem ?? 0}
+          notesPath={may(session, "seeCreditNotes") ? "/credit-notes" : null}
+          locale={session.actor.locale}
+        />
+      ) : null}
       <ClaimList
         path="/workshop-today"
         views={WORKSHOP_VIEWS}

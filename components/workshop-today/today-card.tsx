@@ -1,0 +1,102 @@
+import Link from "next/link";
+import { useTranslations } from "next-intl";
+import type { ReactNode } from "react";
+import { Card } from "@/components/ui/card";
+import { TextLink } from "@/components/ui/link-button";
+import { printClaimNumber } from "@/lib/claims/number";
+import type { CalendarDay } from "@/lib/kernel/calendar-day";
+import { formatDay, formatMoney } from "@/lib/kernel/format";
+import type { Locale } from "@/lib/kernel/locale";
+import type { Money } from "@/lib/kernel/money";
+import { AgeBars, type AgesShown } from "./age-bars";
+
+type Today = {
+  readonly ages: AgesShown;
+  readonly openCount: number;
+  readonly asked: readonly Money[];
+  readonly promised: readonly Money[];
+  readonly creditedThisMonth: readonly Money[];
+  readonly toSend: readonly { readonly number: string; readonly dueOn: CalendarDay }[];
+  readonly contestSoon: readonly { readonly number: string; readonly until: CalendarDay }[];
+};
+type Reader = { readonly locale: Locale };
+type TodayProps = Reader & {
+  today: Today;
+  onUs: number;
+  onThem: number;
+  /** Where the credit notes are, for a person who may see them. */
+  notesPath: "/credit-notes" | null;
+};
+
+/** A workshop's day in four numbers, each a link, and how old what is open has become. */
+export function TodayCard({ today, onUs, onThem, notesPath, locale }: TodayProps) {
+  const t = useTranslations("workshopToday");
+  const sums = (amounts: readonly Money[]) =>
+    amounts.length === 0
+      ? t("nothing")
+      : amounts.map((amount) => (
+          <span key={amount.currency} className="block">
+            {formatMoney(amount, locale)}
+          </span>
+        ));
+  return (
+    <Card isInCharge title={t("title")} note={t("asked", { count: today.openCount })}>
+      <ul className="grid gap-px border-y border-rule bg-rule sm:grid-cols-2 xl:grid-cols-4">
+        <Figure label={t("onUs")} href="/workshop-today?view=onUs" value={onUs} />
+        <Figure label={t("onThem")} href="/workshop-today?view=onThem" value={onThem} />
+        <Figure label={t("promised")} href="/workshop-today?view=decided" value={sums(today.promised)} />
+        <Figure label={t("credited")} href={notesPath} value={sums(today.creditedThisMonth)} />
+      </ul>
+      <div className="mt-5 grid gap-6 lg:grid-cols-2">
+        <AgeBars ages={today.ages} />
+        <Deadlines today={today} locale={locale} />
+      </div>
+    </Card>
+  );
+}
+
+type FigureProps = { label: string; value: ReactNode; href: `/${string}` | null };
+
+function Figure({ label, value, href }: FigureProps) {
+  const words = (
+    <>
+      <span className="block text-small text-ink-2">{label}</span>
+      <span className="block font-heading text-24 tabular-nums">{value}</span>
+    </>
+  );
+  return (
+    <li className="bg-card">
+      {href ? (
+        <Link href={href} className="block min-h-target p-3 hover:bg-well focus-visible:-outline-offset-3">
+          {words}
+        </Link>
+      ) : (
+        <div className="p-3">{words}</div>
+      )}
+    </li>
+  );
+}
+
+function Deadlines({ today, locale }: Reader & { today: Today }) {
+  const t = useTranslations("workshopToday");
+  const due = [
+    ...today.toSend.map(({ number, dueOn }) => ({ number, on: dueOn, what: "toSend" as const })),
+    ...today.contestSoon.map(({ number, until }) => ({ number, on: until, what: "contest" as const })),
+  ].toSorted((a, b) => (a.on < b.on ? -1 : 1));
+  return (
+    <div>
+      <h3 className="mb-2 text-18">{t("deadlines")}</h3>
+      {due.length === 0 ? <p className="text-ink-2">{t("noDeadlines")}</p> : null}
+      <ul className="grid gap-1">
+        {due.map(({ number, on, what }) => (
+          <li key={`${what} ${number}`}>
+            <TextLink href={`/claims/${printClaimNumber(number)}`}>
+              <span className="font-mono">{printClaimNumber(number)}</span>
+            </TextLink>{" "}
+            {t(`due.${what}`, { day: formatDay(on, locale) })}
+          </li>
+        ))}
+      </ul>
+    </div>
+  );
+}
