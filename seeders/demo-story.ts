@@ -1,6 +1,9 @@
 import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { claimsOf } from "./claims/all-claims";
 import type { Case } from "./claims/case";
+import { claimRows } from "./claims/claim-rows";
+import { unmatchedParcels } from "./claims/parcels";
+import { creditRows } from "./credits/credit-rows";
 import type { MadeFile } from "./evidence/made";
 import type { PhotoRenderer } from "./evidence/photo/render";
 import { chanceFrom } from "./random";
@@ -29,7 +32,13 @@ export async function storyOn(
   return {
     world,
     cases: claims.cases,
-    tables: together([worldRows(world, passwordHash), claims.tables]),
+    tables: together([
+      worldRows(world, passwordHash),
+      // Credits first: they fill the numbers of notes into what the claims tell of them.
+      creditRows(claims.scenes, world),
+      ...claims.scenes.map(claimRows),
+      unmatchedParcels(world, claims.scenes),
+    ]),
     files: claims.files,
   };
 }

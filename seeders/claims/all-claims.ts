@@ -2,18 +2,19 @@ import type { PhotoRenderer } from "../evidence/photo/render";
 import { filesMade, type MadeFile } from "../evidence/made";
 import type { Chance } from "../random";
 import type { World } from "../story/world";
-import { together, type Tables } from "../tables";
 import type { Case } from "./case";
 import { casesOf } from "./cases";
 import { draftText } from "./draft-text";
-import { filesOf, withPhotoReused, type FilePlan } from "./evidence-plan";
+import { benchFilesOf, filesOf, withPhotoReused, type FilePlan } from "./evidence-plan";
 import { flagsOf } from "./flags";
 import { playClaim } from "./play";
 import { rowsAsked, type RowsAsked } from "./rows-asked";
+import type { Scene } from "./scene";
 
 export type Claims = {
   readonly cases: readonly Case[];
-  readonly tables: Tables;
+  /** Each claim as it stands at the end. */
+  readonly scenes: readonly Scene[];
   /** Each file once, for the object store. */
   readonly files: readonly MadeFile[];
 };
@@ -26,11 +27,12 @@ export async function claimsOf(world: World, chance: Chance, render: PhotoRender
     draftText(one, { asked: askedRows, world, chance: chance.fork("texts") }, sending);
   const planned = [...asked].map(([one, askedRows]): [Case, readonly FilePlan[]] => {
     const { readings } = draftOf(one, askedRows)(2);
-    return [one, filesOf(one, askedRows, { world, readings, draw: chance.fork(`files ${one.key}`) })];
+    const planning = { world, readings, draw: chance.fork(`files ${one.key}`) };
+    return [one, [...filesOf(one, askedRows, planning), ...benchFilesOf(one, planning)]];
   });
   const plans = withPhotoReused(new Map(planned));
   const made = await filesMade([...plans.values()].flat(), render, world.today);
-  const chapters = [...asked].map(([one, askedRows]) =>
+  const scenes = [...asked].map(([one, askedRows]) =>
     playClaim({
       one,
       world,
@@ -44,7 +46,7 @@ export async function claimsOf(world: World, chance: Chance, render: PhotoRender
   );
   return {
     cases,
-    tables: together(chapters),
+    scenes,
     files: [...new Map([...made.values()].map((file) => [file.sha256, file])).values()],
   };
 }

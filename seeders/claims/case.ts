@@ -20,6 +20,8 @@ export type Twist =
   | "serialDoubtful"
   | "heldElsewhere"
   | "parcelLost"
+  | "parcelWet"
+  | "otherUnitSent"
   | "zeroRated";
 
 /** One line of a claim as the workshop knows it. */
@@ -48,6 +50,8 @@ export type Case = {
   readonly symptom: string;
   readonly plot: PlotName;
   readonly twist: Twist | null;
+  /** One of the many: its photos are few and small. */
+  readonly isMinor: boolean;
   readonly vehicle: Vehicle;
   readonly failedDaysAgo: number;
   readonly repairedDaysAgo: number;

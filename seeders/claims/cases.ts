@@ -15,7 +15,9 @@ const LONGEST_DAYS_TO_FILE = 6;
 /** Every claim of the story, the oldest first. */
 export function casesOf(world: World, chance: Chance): Case[] {
   const numbers = numbersFrom(chance.fork("numbers"));
-  const fromFailures = castOf(world).map((played) => caseOf(played, { world, chance, number: numbers() }));
+  const fromFailures = castOf(world, chance).map((played) =>
+    caseOf(played, { world, chance, number: numbers() }),
+  );
   const extra = extraCases(world, fromFailures).map((one): Case => ({ ...one, number: numbers() }));
   return [...fromFailures, ...extra].sort(
     (a, b) => b.filedDaysAgo - a.filedDaysAgo || (a.key < b.key ? -1 : 1),
@@ -39,7 +41,7 @@ function numbersFrom(draw: Chance): () => string {
 
 type Making = { readonly world: World; readonly chance: Chance; readonly number: string };
 
-function caseOf({ failure, plot, twist }: Played, { world, chance, number }: Making): Case {
+function caseOf({ failure, plot, twist, isMinor }: Played, { world, chance, number }: Making): Case {
   const draw = chance.fork(`case ${failure.id}`);
   const { part, role } = failure.unit.batch;
   const repair = world.repairs.get(failure.id);
@@ -53,9 +55,10 @@ function caseOf({ failure, plot, twist }: Played, { world, chance, number }: Mak
     seller: failure.unit.account.seller,
     workshop: failure.unit.account.buyer,
     family: part.family,
-    symptom: symptomFor(part.family, twist, draw),
+    symptom: symptomFor(part.family, { plot, twist }, draw),
     plot,
     twist,
+    isMinor,
     vehicle: failure.vehicle,
     failedDaysAgo: failure.failedDaysAgo,
     repairedDaysAgo,
@@ -73,7 +76,7 @@ function lineOf(failure: Fitting, world: World, twist: Twist | null): CaseLine {
     part: unit.batch.part,
     unit: isDoubtful ? null : unit,
     serialTyped: isDoubtful ? lookAlikeOf(unit, world.units) : unit.serial,
-    sale: isDoubtful ? null : (world.sales.find((sale) => sale.unitId === unit.id) ?? null),
+    sale: isDoubtful ? null : (world.saleOfUnit.get(unit.id) ?? null),
     quantity: 1,
     position,
     fittingId: isDoubtful ? null : id,
@@ -106,9 +109,27 @@ const SYMPTOMS: Readonly<Record<FamilyCode, readonly string[]>> = {
   throttle: ["jumps", "dead"],
 };
 
-function symptomFor(family: FamilyCode, twist: Twist | null, draw: Chance): string {
+const HOT: Readonly<Partial<Record<FamilyCode, string>>> = {
+  brake: "grabsWhenWarm",
+  motor: "weakWhenWarm",
+  controller: "cutsOutWhenWarm",
+};
+const SHOWN_HOT: readonly (Twist | null)[] = [
+  "badCoil",
+  "photoReused",
+  "parcelLost",
+  "otherUnitSent",
+  "parcelWet",
+];
+
+function symptomFor(
+  family: FamilyCode,
+  { plot, twist }: Pick<Played, "plot" | "twist">,
+  draw: Chance,
+): string {
   if (twist === "incident") return "willNotHold";
   if (twist === "fittingFault") return "wheelNotDriven";
-  if (twist === "badCoil" || twist === "photoReused" || twist === "parcelLost") return "grabsWhenWarm";
-  return draw.pick(SYMPTOMS[family]);
+  const drawn = draw.pick(SYMPTOMS[family]);
+  const isHot = SHOWN_HOT.includes(twist) || plot === "settledUnproven";
+  return (isHot ? HOT[family] : undefined) ?? drawn;
 }

@@ -70,7 +70,8 @@ export class ClaimLife {
     if (!from.some((state) => state === this.state))
       throw new RangeError(`${this.one.number} cannot ${move} from ${this.state}`);
     this.state = to;
-    this.write({ kind: move, by, detail });
+    // Why a claim was given back to the list is for the distributor alone.
+    this.write({ kind: move, by, detail, ...(move === "putBack" ? { onlyFor: this.one.seller } : {}) });
   }
 
   /** Adds to the timeline what happened without a change of state. */

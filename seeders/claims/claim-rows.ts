@@ -40,6 +40,7 @@ function claimRow({ one, life, world, fields }: Scene): Row {
     decidedAt: null,
     decidedById: null,
     contestUntil: null,
+    contestWaivedAt: null,
     ...fields,
     id: life.claimId,
     number: one.number,
@@ -63,7 +64,6 @@ function lineRow(scene: Scene, line: CaseLine, place: number): Row {
   const { life } = scene;
   const state = scene.lines[place];
   const asked = scene.sent.at(-1)?.facts.lines[place]?.askedMinor ?? "0";
-  const isLost = scene.one.twist === "parcelLost";
   return {
     ...state,
     id: lineId(scene, place),
@@ -78,6 +78,5 @@ function lineRow(scene: Scene, line: CaseLine, place: number): Row {
     fittingId: line.fittingId,
     holdsUnit: line.unit !== null && holdsItsUnit(life.state, state?.verdict ?? null),
     askedMinor: asked,
-    returnState: isLost ? "missing" : (state?.returnState ?? "notNeeded"),
   };
 }

@@ -9,7 +9,8 @@ import type { Case, CaseLine } from "./case";
 
 export type Covered = { readonly coverage: Coverage; readonly terms: Rule<"terms"> | null };
 
-const citing = (terms: Rule<"terms">): TermsInForce => ({
+/** Terms with the version that is named beside every step taken from them. */
+export const citing = (terms: Rule<"terms">): TermsInForce => ({
   terms: terms.body,
   version: `${terms.ruleNumber} (${terms.validFrom})`,
 });

@@ -1,20 +1,28 @@
-import { outcomeOfLines } from "@/lib/claims/verdict";
+import type { Credit } from "@/lib/credits/credit";
+import { outcomeOfLines, type ReasonCode } from "@/lib/claims/verdict";
 import { addDays } from "@/lib/kernel/calendar-day";
 import { idOf } from "../identity";
 import { ASSESSORS, PEOPLE, type PersonKey } from "../story/people";
 import type { CaseLine } from "./case";
-import { coverOf, type Covered } from "./cover";
-import { isContested } from "./plots";
+import { coverOf } from "./cover";
+import { isContested, type PlotName } from "./plots";
 import { addRow, lineId, type Scene } from "./scene";
 import { filled } from "./texts/texts";
-import { verdictOn, type LineVerdict } from "./verdicts";
+import { creditOf, isOwedOn, type Decided } from "./reckoning";
+import { frozen } from "../frozen";
+import { verdictOn } from "./verdicts";
 
-/** Who judges now: what one assessor decided and was contested is heard by the other. */
-export const judgeOf = ({ one, verdicts }: Scene): PersonKey =>
-  ASSESSORS[one.seller][verdicts > 0 ? "second" : "first"];
+/** Who judges: most goes to the first assessor; what she decided and was contested is heard by the other. */
+export function judgeOf({ one, verdicts, draw }: Scene): PersonKey {
+  const { first, second } = ASSESSORS[one.seller];
+  if (verdicts > 0) return second;
+  if (FOR_THE_FIRST.includes(one.plot) || isContested(one.plot) || one.twist === "chainSecond") return first;
+  return draw.fork("judge").happens(SHARE_OF_THE_SECOND) ? second : first;
+}
 
-const SHARE_WAIVED = 0.6;
-const MINUTES_OF_A_COLD_RUN = 10;
+/** Claims that stay with the first assessor, because the story shows them in her hands. */
+const FOR_THE_FIRST: readonly PlotName[] = ["held", "parked", "putBack"];
+const SHARE_OF_THE_SECOND = 0.4;
 
 /** Decides every line by the story's facts and the product's own cover, and writes verdict, lines and letter. */
 export function decide(scene: Scene): void {
@@ -26,6 +34,7 @@ export function decide(scene: Scene): void {
   const decided = one.lines.map((line) => decideLine(scene, line, round));
   const outcome = outcomeOfLines(decided.map(({ verdict }) => verdict.outcome));
   const verdictId = idOf("verdict", life.claimId, round);
+  const credit = creditOf(one, decided, { world, decidedOn: life.lastOn, facts: seen.facts });
   addRow(scene, "verdicts", {
     id: verdictId,
     claimId: life.claimId,
@@ -37,8 +46,12 @@ export function decide(scene: Scene): void {
     decidedById: PEOPLE[judge].id,
     decidedAt: life.lastAt,
     reversesId: round === 1 ? null : idOf("verdict", life.claimId, round - 1),
+    credit: frozen(credit),
+    creditNetMinor: String(credit.netMinor),
+    creditTotalMinor: String(credit.totalMinor),
   });
-  decided.forEach((line, place) => writeLine(scene, { ...line, verdictId, place }));
+  scene.given = { credit, decidedOn: life.lastOn, lines: decided.map(({ verdict }) => verdict) };
+  decided.forEach((line, place) => writeLine(scene, { ...line, credit, verdictId, place }));
   const contestDays = Math.max(
     ...decided.map(({ covered }) => covered.terms?.body.contestDays ?? DAYS_TO_CONTEST),
   );
@@ -62,10 +75,11 @@ export function decide(scene: Scene): void {
 
 const DAYS_TO_CONTEST = 14;
 
+/** The assessor's words for a reason. */
+export const reasonText = ({ seller }: Scene, code: ReasonCode): string => seller.reasons[code] ?? code;
+
 /** A claim nobody holds and nobody was asked about. */
 export const NOBODY = { holderId: null, heldUntil: null, parkedWithId: null, parkedQuestion: null };
-
-type Decided = { readonly covered: Covered; readonly verdict: LineVerdict };
 
 function letterOf({ one, seller }: Scene, outcome: keyof Scene["seller"]["letters"], round: number): string {
   const [line] = one.lines;
@@ -73,22 +87,22 @@ function letterOf({ one, seller }: Scene, outcome: keyof Scene["seller"]["letter
   return filled(seller.letters[round > 1 ? "reversed" : outcome], { part: line.part.number, serial });
 }
 
-function writeLine(
-  scene: Scene,
-  { covered, verdict, verdictId, place }: Decided & { verdictId: string; place: number },
-): void {
+type LineToWrite = Decided & {
+  readonly credit: Credit;
+  readonly verdictId: string;
+  readonly place: number;
+};
+
+function writeLine(scene: Scene, { covered, verdict, credit, verdictId, place }: LineToWrite): void {
   const { outcome, attribution, reasonCode } = verdict;
   const state = scene.lines[place];
   if (!state) throw new RangeError("A verdict on a line that is not there");
-  const isRun =
-    reasonCode === "noFaultShown" || isContested(scene.one.plot) || !scene.draw.happens(SHARE_WAIVED);
+  const isExamined = state.returnState === "examined";
   Object.assign(state, {
     verdict: outcome,
     attribution,
-    returnState: isRun ? "examined" : "notNeeded",
-    finding: isRun ? findingOf(scene, reasonCode === "noFaultShown") : null,
-    returnWaivedReason: isRun ? null : scene.seller.waived,
-    creditState: outcome === "declined" ? "none" : "due",
+    returnWaivedReason: isExamined ? null : scene.seller.waived,
+    creditState: isOwedOn(credit, place + 1) ? "due" : "none",
   });
   addRow(scene, "verdictLines", {
     verdictId,
@@ -97,14 +111,9 @@ function writeLine(
     outcome,
     attribution,
     reasonCode,
-    reason: scene.seller.reasons[reasonCode] ?? reasonCode,
+    reason: reasonText(scene, reasonCode),
     ruleVersionId: covered.terms?.id ?? null,
     coverage: covered.coverage,
     returnWaivedReason: state.returnWaivedReason,
   });
 }
-
-const findingOf = ({ one, seller }: Scene, wasCold: boolean) =>
-  wasCold
-    ? { faultShown: false, ranMinutes: MINUTES_OF_A_COLD_RUN, note: seller.reasons.noFaultShown ?? "" }
-    : { faultShown: true, ranMinutes: one.faultAfterMinutes + 2, note: seller.finding };

@@ -43,7 +43,29 @@ export function draftText(
     failedOn: typedDay(workingDayAgo(world.today, one.failedDaysAgo), one),
     ...rowsTyped(asked.answers, writing, sending),
   };
-  return isUnsent(one.plot) ? common : { ...common, ...checksTyped(writing) };
+  return isUnsent(one.plot) ? common : { ...common, ...checksTyped(writing), ...askedTyped(writing) };
+}
+
+type Asked = Pick<ClaimDraft, "labourMinutes" | "diagnosisAsked" | "consumablesAsked" | "carriageAsked">;
+
+const SHARE_ASKING_LABOUR = 0.55;
+const SHARE_ASKING_CARRIAGE = 0.25;
+
+/** What is asked besides the part: labour by most, the carriage of the part by some, diagnosis and grease by few. */
+function askedTyped({ one, draw: drawn }: Writing): Asked {
+  const draw = drawn.fork("asked");
+  const decimals = ORGANISATIONS[one.workshop].language === "de" ? "," : ".";
+  const amount = (share: number, from: number, to: number): string => {
+    const minor = draw.whole(from, to) * 10;
+    return draw.happens(share) ? (minor / 100).toFixed(2).replace(".", decimals) : "";
+  };
+  const minutes = draw.pick([30, 45, 45, 60, 75, 90]);
+  return {
+    labourMinutes: draw.happens(SHARE_ASKING_LABOUR) ? String(minutes) : "",
+    diagnosisAsked: amount(SHARE_ASKING_CARRIAGE / 2, 120, 380),
+    consumablesAsked: amount(SHARE_ASKING_CARRIAGE / 2, 20, 60),
+    carriageAsked: amount(SHARE_ASKING_CARRIAGE, 60, 140),
+  };
 }
 
 /** A day as the people of the workshop write it. */

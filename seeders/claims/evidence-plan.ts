@@ -1,4 +1,5 @@
 import type { ClaimDraft } from "@/lib/claims/draft";
+import { benchRowId } from "@/lib/evidence/bench-rows";
 import { workingDayAgo } from "../days";
 import type { DialectName } from "../evidence/logs";
 import type { PhotoScene, View } from "../evidence/photo/scene";
@@ -8,7 +9,10 @@ import type { Chance } from "../random";
 import { ORGANISATIONS, type BuyerKey } from "../story/organisations";
 import type { World } from "../story/world";
 import type { Case } from "./case";
+import { foundOn, hasBenchLog } from "./found";
+import { timesIn } from "./plots";
 import type { RowAnswer, RowsAsked } from "./rows-asked";
+import type { StoryTexts } from "./texts/texts";
 import { textsFor } from "./texts/texts-for";
 
 /** What a file of the story holds. `sameAs` is a photo sent a second time. */
@@ -27,7 +31,7 @@ export type FilePlan = {
   /** Minutes after midnight on the workshop's clock. */
   readonly takenAtMinutes: number;
   readonly timeZone: string;
-  readonly sending: "first" | "second";
+  readonly sending: "first" | "second" | "bench";
   readonly content: Content;
 };
 
@@ -113,6 +117,7 @@ function sceneOf(rowId: string, { one, readings }: Planning): PhotoScene {
     },
     reading: value === undefined ? null : { value, unit: sign },
     marked: view === "close",
+    size: one.isMinor ? "small" : "full",
   };
 }
 
@@ -135,22 +140,39 @@ const LOGGERS: Readonly<Record<BuyerKey, readonly DialectName[]>> = {
 
 const SECONDS_PER_ROW = 10;
 
-function runOf({ one, draw }: Planning): Content {
-  const dialect = draw.pick(LOGGERS[one.workshop]);
+const runOf = ({ one, draw }: Planning): Content => ({
+  is: "runLog",
+  run: runPlanOf(one, { seed: draw.fork("run"), words: textsFor(one.workshop).log }),
+  dialect: draw.pick(LOGGERS[one.workshop]),
+});
+
+/** The bench's own run: as the claim says, a little later, or long enough without a fault. */
+function benchRunOf({ one, draw }: Planning): Content {
+  const { kind, runMinutes } = foundOn(one, timesIn(one.plot, "examine"));
+  const plan = runPlanOf(one, { seed: draw.fork("bench run"), words: textsFor(one.seller).log });
+  const isGood = kind === "noFaultFound";
+  return {
+    is: "runLog",
+    run: { ...plan, faultAfterMinutes: isGood ? null : runMinutes, minutes: runMinutes ?? plan.minutes },
+    dialect: one.seller === "larkmoor" ? "plain" : "semicolon",
+  };
+}
+
+type RunOf = { readonly seed: Chance; readonly words: StoryTexts["log"] };
+
+function runPlanOf(one: Case, { seed, words }: RunOf): RunPlan {
   const { coilOhm, windingOhm } = one.lines[0].part.rated;
   const ohmAt20 = typeof coilOhm === "number" ? coilOhm : typeof windingOhm === "number" ? windingOhm : 57.6;
-  const { on, brakeFault, fault, off } = textsFor(one.workshop).log;
-  const words = { on, off, fault: one.family === "brake" ? brakeFault : fault };
-  const run = {
-    seed: draw.fork("run"),
+  const { on, brakeFault, fault, off } = words;
+  return {
+    seed,
     ohmAt20,
     faultAfterMinutes: one.faultAfterMinutes,
     minutes: 45,
     stepS: SECONDS_PER_ROW,
     turns: one.family !== "brake",
-    words,
+    words: { on, off, fault: one.family === "brake" ? brakeFault : fault },
   };
-  return { is: "runLog", run, dialect };
 }
 
 function nameOf(content: Content, day: string, draw: Chance): string {
@@ -158,6 +180,28 @@ function nameOf(content: Content, day: string, draw: Chance): string {
   if (content.is === "document") return `capacity-${day}.pdf`;
   return `IMG_${draw.whole(1000, 9899)}.jpg`;
 }
+
+/** The run log the bench leaves beside its last finding, where it ran the part warm. */
+export function benchFilesOf(one: Case, planning: Omit<Planning, "one">): FilePlan[] {
+  if (!hasBenchLog(one, timesIn(one.plot, "examine"))) return [];
+  const key = `${one.key} ${BENCH_ROW}`;
+  const content = benchRunOf({ one, ...planning });
+  return [
+    {
+      id: idOf("evidence", key),
+      key,
+      rowId: BENCH_ROW,
+      name: `bench-${one.number}.csv`,
+      takenDaysAgo: one.filedDaysAgo,
+      takenAtMinutes: FIRST_PHOTO_MINUTE,
+      timeZone: ORGANISATIONS[one.seller].timeZone,
+      sending: "bench",
+      content,
+    },
+  ];
+}
+
+const BENCH_ROW = benchRowId("runLog", 1);
 
 /** Lets the claim that re-uses a photo show the one of an earlier claim of its workshop, byte for byte. */
 export function withPhotoReused(

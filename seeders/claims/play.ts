@@ -1,29 +1,44 @@
+import type { CreditState } from "@/lib/claims/lifecycle";
 import { calendarDay, daysBetween, dayInZone } from "@/lib/kernel/calendar-day";
 import { addWorkingDays, endOfWorkingDay } from "@/lib/kernel/working-time";
 import { instantOn } from "../days";
 import { idOf } from "../identity";
 import { ASSESSORS, CLAIMANTS, PEOPLE } from "../story/people";
 import { ruleOn } from "../story/rule-book";
-import type { Tables } from "../tables";
 import { answer, ask } from "./asking";
-import { claimRows } from "./claim-rows";
+import { allocate, allocatePart, counter, issueNote, payOut, replace, waiveContest } from "./crediting";
 import { decide, judgeOf, NOBODY } from "./deciding";
+import { examine } from "./examining";
 import { isUnsent, PLOTS, type Step } from "./plots";
+import { callIn, dispatch, dispose, loseParcel, missDeadline, receive, scrapOnSite } from "./returning";
 import { addRow, sceneOf, type Prepared, type Scene } from "./scene";
 import { sendRevision, uploadFiles } from "./sending";
 import { filled } from "./texts/texts";
 
 const HOLD_MS = 10 * 60_000;
 
-/** Plays a claim from its first day to where its plot leaves it, and returns its rows. */
-export function playClaim(prepared: Prepared): Tables {
+/** Plays a claim from its first day to where its plot leaves it. */
+export function playClaim(prepared: Prepared): Scene {
   const scene = sceneOf(prepared);
   for (const step of PLOTS[scene.one.plot]) {
     scene.life.next(daysAgoOf(scene, step));
     STEPS[step.what](scene);
   }
-  return claimRows(scene);
+  settleIfDue(scene);
+  return scene;
 }
+
+/** As the product's clock would have done: where nothing is owed and nobody may contest any more. */
+function settleIfDue(scene: Scene): void {
+  const { life, lines, dueOn, world } = scene;
+  const isOver = dueOn !== null && daysBetween(calendarDay(dueOn), world.today) > 1;
+  const isClosed = lines.every(({ creditState }) => CLOSED.includes(creditState));
+  if (life.state !== "decided" || !isOver || !isClosed) return;
+  life.next(daysAgoOf(scene, { what: "settle", after: "whenDue" }));
+  settle(scene);
+}
+
+const CLOSED: readonly CreditState[] = ["none", "allocated", "paidOut", "replaced"];
 
 function daysAgoOf({ one, dueOn, world }: Scene, { after }: Step): number {
   if (after === "yesterday") return 1;
@@ -45,6 +60,21 @@ const STEPS: Readonly<Record<Step["what"], (scene: Scene) => void>> = {
   answer,
   decide,
   settle,
+  callIn,
+  scrapOnSite,
+  dispatch,
+  receive,
+  examine,
+  missDeadline,
+  loseParcel,
+  dispose,
+  issueNote,
+  allocate,
+  allocatePart,
+  payOut,
+  replace,
+  counter,
+  waiveContest,
   discard: (scene) => scene.life.move("discard", claimant(scene).starts, {}),
   putBack: (scene) => {
     Object.assign(scene.fields, NOBODY);
@@ -53,6 +83,7 @@ const STEPS: Readonly<Record<Step["what"], (scene: Scene) => void>> = {
   contest: (scene) => {
     const reason = filled(scene.workshop.contest, { minutes: String(scene.one.faultAfterMinutes) });
     scene.life.move("contest", claimant(scene).contests, { reason });
+    scene.fields["answerDueAt"] = answerDueAt(scene);
   },
   withdraw: (scene) => {
     Object.assign(scene.fields, NOBODY);
@@ -118,13 +149,7 @@ function park(scene: Scene): void {
   });
 }
 
-/** The credit of every line is closed, and the days to contest are over. */
-function settle(scene: Scene): void {
-  for (const line of scene.lines) {
-    if (line.returnState === "examined") line.returnState = "disposed";
-    if (line.creditState !== "due") continue;
-    const closed = scene.draw.pick(["allocated", "allocated", "paidOut"] as const);
-    line.creditState = scene.one.twist === "chainFirst" ? "replaced" : closed;
-  }
-  scene.life.move("settle", null, {});
+/** The credit of every line is closed, and the days to contest are over or given up. */
+function settle({ life }: Scene): void {
+  life.move("settle", null, {});
 }

@@ -5,7 +5,7 @@ import { workingDayAgo } from "../days";
 import type { Chance } from "../random";
 import { ruleOn } from "../story/rule-book";
 import type { World } from "../story/world";
-import type { Case } from "./case";
+import type { Case, Twist } from "./case";
 import { isQueried, isUnsent, PLOTS } from "./plots";
 
 /** What the workshop does about a row: gives it with the first sending or with the second, or says why it cannot. */
@@ -20,6 +20,9 @@ export type RowsAsked = {
 /** Rows answered by questions of their own, on another page than the list. */
 const ASKED_ELSEWHERE: readonly string[] = ["ruledOut", "swapProof"];
 const SHARE_EXCUSED = 0.12;
+const SHARE_EXCUSED_OF_MINOR = 0.4;
+const LOGS_KEPT_DAYS = 75;
+const SHARE_OF_OLD_LOGS = 0.35;
 const ROWS_LEFT_OUT = 2;
 const ROWS_IN_A_DRAFT = 4;
 
@@ -37,9 +40,17 @@ function isGiven(row: EvidenceRow, one: Case, draw: Chance): boolean {
   if (row.need === "required") return true;
   if (row.need === "notNeeded" || row.accepts === "document") return false;
   if (row.accepts === "photo") return one.twist === "fittingFault" && row.id === "conditionAsFound";
-  if (row.accepts === "runLog") return symptomOf(FAMILIES[one.family], one.symptom)?.heatFault ?? false;
+  if (row.accepts === "runLog") return hasLog(one, draw);
   return draw.happens(0.5);
 }
+
+/** A fault that shows only hot is logged; of the logs from before the list asked for them not all were kept. */
+const hasLog = (one: Case, draw: Chance): boolean => {
+  const isHeatFault = symptomOf(FAMILIES[one.family], one.symptom)?.heatFault ?? false;
+  return (
+    isHeatFault && (!one.isMinor || one.filedDaysAgo < LOGS_KEPT_DAYS || draw.happens(SHARE_OF_OLD_LOGS))
+  );
+};
 
 const begun = (wanted: readonly EvidenceRow[]): RowAnswer[] =>
   wanted.slice(0, ROWS_IN_A_DRAFT).map((row) => ({ row, how: "first" }));
@@ -49,10 +60,13 @@ function answered(wanted: readonly EvidenceRow[], one: Case, draw: Chance): RowA
   // The label comes first in every list, and nobody leaves it out.
   const open = wanted.slice(1).filter((row) => row.accepts === "photo" || row.accepts === "reading");
   const leftOut = isQueried(one.plot) ? draw.shuffled(open).slice(0, ROWS_LEFT_OUT) : [];
+  const share = one.isMinor ? SHARE_EXCUSED_OF_MINOR : SHARE_EXCUSED;
   return wanted.map((row, place): RowAnswer => {
     if (leftOut.includes(row)) return { row, how: isAnswered ? "second" : "never" };
-    const isExcused =
-      place > 0 && row.accepts === "photo" && one.twist === null && draw.happens(SHARE_EXCUSED);
+    const isExcused = place > 0 && row.accepts === "photo" && isExcusable(one.twist) && draw.happens(share);
     return { row, how: isExcused ? "excused" : "first" };
   });
 }
+
+/** Claims that turn on a photo keep theirs. */
+const isExcusable = (twist: Twist | null): boolean => twist === null || twist === "badCoil";

@@ -2,6 +2,9 @@ import type { ClaimDraft } from "@/lib/claims/draft";
 import type { ClaimFacts } from "@/lib/claims/facts-shape";
 import type { CreditState, ReturnState, VerdictOutcome } from "@/lib/claims/lifecycle";
 import type { Attribution } from "@/lib/claims/verdict";
+import type { Credit } from "@/lib/credits/credit";
+import type { AllocationWay } from "@/lib/credits/ledger";
+import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import type { MadeFile } from "../evidence/made";
 import { idOf } from "../identity";
 import type { Chance } from "../random";
@@ -14,6 +17,7 @@ import type { Flag } from "./flags";
 import type { RowsAsked } from "./rows-asked";
 import type { StoryTexts } from "./texts/texts";
 import { textsFor } from "./texts/texts-for";
+import type { LineVerdict } from "./verdicts";
 
 /** Everything prepared for a claim before it is played. */
 export type Prepared = {
@@ -31,10 +35,30 @@ export type Prepared = {
 export type LineState = {
   verdict: VerdictOutcome | null;
   attribution: Attribution | null;
-  finding: Row | null;
   returnState: ReturnState;
   returnWaivedReason: string | null;
   creditState: CreditState;
+};
+
+type Columns = Record<string, unknown>;
+
+/** A return number with its rows, as they stand at the moment. */
+export type Returning = { readonly row: Columns; readonly lines: readonly Columns[] };
+
+type CreditGiven = {
+  readonly credit: Credit;
+  readonly decidedOn: CalendarDay;
+  /** The verdict of each line, in their order. */
+  readonly lines: readonly LineVerdict[];
+};
+
+/** A credit note as the story issues it. The numbers of its entries in the timeline are filled in later. */
+export type NoteMade = {
+  readonly verdictId: string;
+  readonly issuedAt: Date;
+  readonly details: Columns[];
+  allocation: { readonly how: AllocationWay; readonly at: Date; readonly isWhole: boolean } | null;
+  countered: { readonly at: Date; readonly reason: string } | null;
 };
 
 /** A claim while it is played: what was prepared, what has happened, and the rows so far. */
@@ -49,6 +73,13 @@ export type Scene = Prepared & {
   readonly rows: Partial<Record<TableName, Row[]>>;
   readonly sent: { readonly facts: ClaimFacts; readonly sha256: string }[];
   verdicts: number;
+  findings: number;
+  /** The part on its way back, once it was called in. */
+  returning: Returning | null;
+  /** What the verdict that stands gives; null before there is one. */
+  given: CreditGiven | null;
+  /** The credit note this claim led to, and what became of it; numbered when all claims have been played. */
+  note: NoteMade | null;
   /** When the rules move the claim on by themselves. */
   dueOn: string | null;
 };
@@ -56,7 +87,6 @@ export type Scene = Prepared & {
 const untouched = (): LineState => ({
   verdict: null,
   attribution: null,
-  finding: null,
   returnState: "notNeeded",
   returnWaivedReason: null,
   creditState: "none",
@@ -76,6 +106,10 @@ export const sceneOf = (prepared: Prepared): Scene => {
     rows: {},
     sent: [],
     verdicts: 0,
+    findings: 0,
+    returning: null,
+    given: null,
+    note: null,
     dueOn: null,
   };
 };

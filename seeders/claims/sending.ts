@@ -3,7 +3,7 @@ import { originalKey, viewKey } from "@/lib/storage/keys";
 import { FAMILIES } from "@/lib/parts/families";
 import { symptomOf } from "@/lib/parts/family";
 import { idOf } from "../identity";
-import { CLAIMANTS, PEOPLE } from "../story/people";
+import { ASSESSORS, CLAIMANTS, PEOPLE } from "../story/people";
 import type { FilePlan } from "./evidence-plan";
 import { factsSent } from "./facts-sent";
 import { addRow, type Scene } from "./scene";
@@ -30,7 +30,7 @@ export function sendRevision(scene: Scene): void {
   if (isReported) scene.fields["incidentKnownAt"] ??= life.lastAt;
 }
 
-/** Files of a draft that was never sent are uploaded all the same. */
+/** Files of a draft that was never sent are uploaded all the same, and those of the bench beside its finding. */
 export const uploadFiles = (scene: Scene, sending: FilePlan["sending"]): void =>
   scene.plans
     .filter((plan) => plan.sending === sending)
@@ -45,6 +45,7 @@ function uploadFile(scene: Scene, plan: FilePlan, place: number): void {
     claimId: life.claimId,
     ...life.parties,
     rowId: plan.rowId,
+    takenBy: plan.sending === "bench" ? "goodsIn" : "workshop",
     kind: file.kind,
     mediaType: file.mediaType,
     originalName: plan.name,
@@ -57,19 +58,22 @@ function uploadFile(scene: Scene, plan: FilePlan, place: number): void {
     heightPx: file.heightPx,
     captured: file.takenAt ? { takenAt: file.takenAt.toISOString() } : {},
     summary: file.summary,
-    uploadedById: PEOPLE[CLAIMANTS[one.workshop].starts].id,
+    uploadedById:
+      PEOPLE[plan.sending === "bench" ? ASSESSORS[one.seller].bench : CLAIMANTS[one.workshop].starts].id,
     receivedAt: new Date(life.lastAt.getTime() - MINUTES_OF_UPLOAD * MINUTE_MS + place * 1000 * 20),
   });
 }
 
 const evidenceOf = ({ rows }: Scene): ClaimFacts["evidence"] =>
-  (rows.evidenceFiles ?? []).map((row) => ({
-    id: String(row["id"]),
-    rowId: String(row["rowId"]),
-    kind: row["kind"] === "photo" ? "photo" : row["kind"] === "runLog" ? "runLog" : "document",
-    sha256: String(row["sha256"]),
-    originalName: String(row["originalName"]),
-  }));
+  (rows.evidenceFiles ?? [])
+    .filter((row) => row["takenBy"] === "workshop")
+    .map((row) => ({
+      id: String(row["id"]),
+      rowId: String(row["rowId"]),
+      kind: row["kind"] === "photo" ? "photo" : row["kind"] === "runLog" ? "runLog" : "document",
+      sha256: String(row["sha256"]),
+      originalName: String(row["originalName"]),
+    }));
 
 function writeRevision(scene: Scene, facts: ClaimFacts, sha256: string): void {
   const { life, one } = scene;
@@ -101,6 +105,7 @@ function writeRevision(scene: Scene, facts: ClaimFacts, sha256: string): void {
       temperatureCelsius,
       instrument,
       takenBy: "workshop",
+      findingId: null,
     });
   }
 }

@@ -38,8 +38,6 @@ const NOTHING_SHOWN: LineVerdict = {
 const OUTSIDE: LineVerdict = { outcome: "declined", attribution: { wear: "1/1" }, reasonCode: "outsideTerm" };
 
 const MONTHS_UNTIL_WORN = 11;
-/** The first brakes of the bad batch were run cold, and nothing was seen. */
-const COLD_RUNS_UNTIL_DAYS_AGO = 105;
 /** One of the gearboxes had a fault of its own beside the loose key. */
 const SHARED_FITTING_DAYS_AGO = 178;
 
@@ -53,9 +51,8 @@ export function verdictOn(one: Case, coverage: Coverage, round: number): LineVer
 
 function decided(one: Case, { answer, monthsUsed }: Coverage, round: number): LineVerdict {
   if (answer === "outside") return OUTSIDE;
-  if (one.plot === "refused") return NOTHING_SHOWN;
+  if (one.plot === "refused" || one.plot === "settledUnproven") return NOTHING_SHOWN;
   if (isContested(one.plot)) return round === 1 ? NOTHING_SHOWN : UPHELD;
   if (one.twist === "fittingFault") return one.filedDaysAgo > SHARED_FITTING_DAYS_AGO ? SHARED : FITTED_WRONG;
-  if (one.twist === "badCoil") return one.filedDaysAgo > COLD_RUNS_UNTIL_DAYS_AGO ? NOTHING_SHOWN : UPHELD;
   return (monthsUsed ?? 0) >= MONTHS_UNTIL_WORN && one.twist === null ? WORN : UPHELD;
 }

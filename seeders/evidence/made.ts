@@ -35,27 +35,28 @@ const plain = (bytes: Buffer, kind: "runLog" | "document", summary: RunLogSummar
 
 const AT_ONCE = 4;
 
-/** Makes every planned file, a few at a time; a photo sent twice is made once. By the plan's key. */
+/** Makes every planned file, a few at a time; a photo sent twice is made once. By the plan's key, in the order of the plans. */
 export async function filesMade(
   plans: readonly FilePlan[],
   render: PhotoRenderer,
   today: CalendarDay,
 ): Promise<Map<string, MadeFile>> {
-  const made = new Map<string, MadeFile>();
-  const own = plans.filter(({ content }) => content.is !== "sameAs");
-  for (let at = 0; at < own.length; at += AT_ONCE) {
-    const some = own.slice(at, at + AT_ONCE);
-    const files = await Promise.all(some.map((plan) => fileMade(plan, render, today)));
-    some.forEach((plan, index) => {
-      const file = files[index];
-      if (file) made.set(plan.key, file);
-    });
-  }
-  for (const { key, content } of plans) {
-    const same = content.is === "sameAs" ? made.get(content.key) : undefined;
-    if (same) made.set(key, same);
-  }
-  return made;
+  const done = new Map<string, MadeFile>();
+  const waiting = plans.filter(({ content }) => content.is !== "sameAs").values();
+  // All take from one queue, so that a large photo holds up none of the others.
+  const maker = async (): Promise<void> => {
+    for (const plan of waiting) {
+      const file = await fileMade(plan, render, today);
+      if (file) done.set(plan.key, file);
+    }
+  };
+  await Promise.all(Array.from({ length: AT_ONCE }, maker));
+  return new Map(
+    plans.flatMap(({ key, content }) => {
+      const file = done.get(content.is === "sameAs" ? content.key : key);
+      return file ? [[key, file] as const] : [];
+    }),
+  );
 }
 
 async function fileMade(plan: FilePlan, render: PhotoRenderer, today: CalendarDay): Promise<MadeFile | null> {

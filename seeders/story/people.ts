@@ -8,6 +8,8 @@ export type Person = {
   readonly email: string;
   readonly organisation: OrganisationKey;
   readonly roles: readonly Role[];
+  /** A second organisation this person works for, and what as. */
+  readonly also: { readonly organisation: OrganisationKey; readonly roles: readonly Role[] } | null;
   /** What the tour shows with this person. */
   readonly note: string;
 };
@@ -21,12 +23,12 @@ const DOMAINS: Readonly<Record<OrganisationKey, string>> = {
   quayhead: "quayhead.example",
 };
 
-type Sketch = Pick<Person, "organisation" | "roles" | "note">;
+type Sketch = Pick<Person, "organisation" | "roles" | "note"> & Partial<Pick<Person, "also">>;
 
 const person = (name: string, sketch: Sketch): Person => {
   const local = name.toLowerCase().replace("ä", "ae").replace("ö", "oe").replace(" ", ".");
   const email = `${local}@${DOMAINS[sketch.organisation]}`;
-  return { id: idOf("person", email), name, email, ...sketch };
+  return { id: idOf("person", email), name, email, also: null, ...sketch };
 };
 
 export const PEOPLE = {
@@ -63,27 +65,27 @@ export const PEOPLE = {
   ada: person("Ada Merrow", {
     organisation: "larkmoor",
     roles: ["assessor"],
-    note: "Judges claims; holds one and has parked another.",
+    note: "Judges claims: thirty wait; she holds one after an incident and has parked two.",
   }),
   tobias: person("Tobias Quill", {
     organisation: "larkmoor",
     roles: ["assessor"],
-    note: "The second assessor: hears what Ada decided and was contested.",
+    note: "The second assessor: hears what Ada decided and was contested, and waits for parts.",
   }),
   rosa: person("Rosa Finchley", {
     organisation: "larkmoor",
     roles: ["goodsIn"],
-    note: "Receives parts and runs the bench; one parcel never came.",
+    note: "Receives parts and runs the bench: two parcels without a match, three parts to examine, one that never came.",
   }),
   edwin: person("Edwin Marsh", {
     organisation: "larkmoor",
     roles: ["accounts"],
-    note: "Turns verdicts into credit.",
+    note: "Turns verdicts into credit: notes to issue, to allocate, and one that was countered.",
   }),
   nadia: person("Nadia Brook", {
     organisation: "larkmoor",
     roles: ["analyst"],
-    note: "Looks for the bad batch.",
+    note: "Looks for the bad batch: LMB-2410 of batch R2614.",
   }),
   colin: person("Colin Thorpe", {
     organisation: "larkmoor",
@@ -95,10 +97,21 @@ export const PEOPLE = {
     roles: ["technician", "workshopManager"],
     note: "Larkmoor's own workshop, which claims from Fenwright Supply.",
   }),
+  kit: person("Kit Dunmore", {
+    organisation: "larkmoor",
+    roles: ["technician"],
+    also: { organisation: "saltmarsh", roles: ["technician"] },
+    note: "Works at Larkmoor's service bay, and two days a week at Saltmarsh Mobility.",
+  }),
   greta: person("Greta Lindau", {
     organisation: "fenwright",
     roles: ["assessor"],
-    note: "Judges claims in German.",
+    note: "Judges claims in German; her list is long.",
+  }),
+  imke: person("Imke Rahn", {
+    organisation: "fenwright",
+    roles: ["analyst", "assessor"],
+    note: "Looks after the life curves, and hears what Greta decided and was contested.",
   }),
   holger: person("Holger Bruns", {
     organisation: "fenwright",
@@ -123,8 +136,11 @@ export const CLAIMANTS: Readonly<
 /** Who judges at a distributor: the first takes most, the second hears what the first decided. */
 export const ASSESSORS = {
   larkmoor: { first: "ada", second: "tobias", bench: "rosa" },
-  fenwright: { first: "greta", second: "greta", bench: "holger" },
+  fenwright: { first: "greta", second: "imke", bench: "holger" },
 } as const;
+
+/** Who issues and allocates credit notes. */
+export const ACCOUNTANTS = { larkmoor: "edwin", fenwright: "holger" } as const;
 
 /** The list for the start command and the tour. */
 export const peopleList = () =>

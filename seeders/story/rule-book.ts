@@ -4,6 +4,7 @@ import { ruleBody, type RuleBody, type RuleKind } from "@/lib/rule-book/shapes";
 import { versionOn } from "@/lib/rule-book/versions";
 import { idOf } from "../identity";
 import { PARTS, type Part } from "./catalogue";
+import { CREDIT_RULES } from "./credit-rules";
 import { earlierList, fullList } from "./evidence-lists";
 import { familyLimits, partLimits } from "./limits";
 import { ORGANISATIONS, type SellerKey } from "./organisations";
@@ -36,6 +37,7 @@ const monthsBack = (today: CalendarDay, months: number): CalendarDay =>
 const FIRST_MONTHS_BACK = 34;
 const NEW_TERMS_MONTHS_BACK = 13;
 const NEW_LISTS_MONTHS_BACK = 2;
+const NEW_CREDITS_MONTHS_BACK = 6;
 const DAYS_BEFORE_IT_HOLDS = 14;
 
 type Sketch<Kind extends RuleKind> = {
@@ -76,6 +78,7 @@ type Editions = {
   readonly first: CalendarDay;
   readonly renewed: CalendarDay;
   readonly lists: CalendarDay;
+  readonly credits: CalendarDay;
 };
 
 const editionsOf = (seller: SellerKey, today: CalendarDay): Editions => ({
@@ -83,11 +86,13 @@ const editionsOf = (seller: SellerKey, today: CalendarDay): Editions => ({
   first: monthsBack(today, FIRST_MONTHS_BACK),
   renewed: monthsBack(today, NEW_TERMS_MONTHS_BACK),
   lists: monthsBack(today, NEW_LISTS_MONTHS_BACK),
+  credits: monthsBack(today, NEW_CREDITS_MONTHS_BACK),
 });
 
-function generalRules({ seller, first, renewed }: Editions, today: CalendarDay): Rule[] {
+function generalRules({ seller, first, renewed, credits }: Editions, today: CalendarDay): Rule[] {
   const words = RULE_WORDS[seller];
   const [before, now] = TERMS[seller];
+  const [credited, crediting] = CREDIT_RULES[seller];
   return [
     rule({ seller, kind: "terms", number: "T-1", title: words.terms(1), validFrom: first, body: before }),
     rule({ seller, kind: "terms", number: "T-2", title: words.terms(2), validFrom: renewed, body: now }),
@@ -98,6 +103,15 @@ function generalRules({ seller, first, renewed }: Editions, today: CalendarDay):
       title: words.levels,
       validFrom: first,
       body: serviceLevels(seller, today),
+    }),
+    rule({ seller, kind: "credit", number: "C-1", title: words.credit(1), validFrom: first, body: credited }),
+    rule({
+      seller,
+      kind: "credit",
+      number: "C-2",
+      title: words.credit(2),
+      validFrom: credits,
+      body: crediting,
     }),
   ];
 }

@@ -30,6 +30,7 @@ export const RULE_WORDS = {
   larkmoor: {
     terms: (which: Edition) => `Warranty terms, ${edition(which)}`,
     levels: "Working hours and answers",
+    credit: (which: Edition) => `How we credit, ${edition(which)}`,
     list: (family: FamilyCode, which: Edition) => `Evidence list for ${ENGLISH[family]}, ${edition(which)}`,
     limits: (family: FamilyCode) => `Limits of readings for ${ENGLISH[family]}`,
     partLimits: (number: string) => `Limits of readings for ${number}`,
@@ -37,6 +38,7 @@ export const RULE_WORDS = {
   fenwright: {
     terms: (which: Edition) => `Gewährleistungsbedingungen, ${ausgabe(which)}`,
     levels: "Arbeitszeiten und Antworten",
+    credit: (which: Edition) => `Wie wir gutschreiben, ${ausgabe(which)}`,
     list: (family: FamilyCode, which: Edition) => `Nachweisliste für ${GERMAN[family]}, ${ausgabe(which)}`,
     limits: (family: FamilyCode) => `Grenzwerte für ${GERMAN[family]}`,
     partLimits: (number: string) => `Grenzwerte für ${number}`,

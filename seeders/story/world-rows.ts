@@ -19,6 +19,7 @@ export const worldRows = (world: World, passwordHash: string): Tables => ({
 });
 
 const YEARS_OPEN_DAYS = 1400;
+const SECOND_PLACE_DAYS = 300;
 
 function houseRows(today: CalendarDay): Tables {
   const houses = Object.values(ORGANISATIONS);
@@ -44,6 +45,13 @@ function peopleRows(today: CalendarDay, passwordHash: string): Tables {
     const { id: organisationId, language } = ORGANISATIONS[organisation];
     return { id, name, email, organisationId, language, roles };
   });
+  const second = Object.values(PEOPLE).flatMap(({ id, also }) =>
+    also ? [{ id, organisationId: ORGANISATIONS[also.organisation].id, roles: also.roles }] : [],
+  );
+  const work = [
+    ...people.map((one) => ({ ...one, acceptedDaysAgo: YEARS_OPEN_DAYS })),
+    ...second.map((one) => ({ ...one, acceptedDaysAgo: SECOND_PLACE_DAYS })),
+  ];
   return {
     users: people.map(({ id, name, email, language }) => ({
       id,
@@ -54,12 +62,12 @@ function peopleRows(today: CalendarDay, passwordHash: string): Tables {
       passwordHash,
       sessionVersion: 1,
     })),
-    memberships: people.map(({ id, organisationId }) => ({
+    memberships: work.map(({ id, organisationId, acceptedDaysAgo }) => ({
       userId: id,
       organisationId,
-      acceptedAt: addDays(today, -YEARS_OPEN_DAYS),
+      acceptedAt: addDays(today, -acceptedDaysAgo),
     })),
-    membershipRoles: people.flatMap(({ id, organisationId, roles }) =>
+    membershipRoles: work.flatMap(({ id, organisationId, roles }) =>
       roles.map((role) => ({ userId: id, organisationId, role })),
     ),
   };

@@ -24,6 +24,8 @@ export type World = {
   readonly failures: readonly Failure[];
   readonly repairs: ReadonlyMap<string, Repair>;
   readonly sales: readonly SaleLine[];
+  /** By the id of the unit that was sold. */
+  readonly saleOfUnit: ReadonlyMap<string, SaleLine>;
   readonly chain: Chain;
   /** The failed unit that was sold on the zero-rated invoice. */
   readonly zeroRated: Failure;
@@ -43,6 +45,7 @@ export function worldOn(today: CalendarDay, chance: Chance): World {
   const { byFitting, newFittings } = repairsOf(service, chance.fork("repairs"));
   const units = [...bought, chain.second.unit];
   const zeroRatedUnitId = zeroRated.unit.id;
+  const sales = salesOf(units, { today, chance, zeroRatedUnitId, freeUnitId: chain.second.unit.id });
   return {
     today,
     batches,
@@ -51,7 +54,8 @@ export function worldOn(today: CalendarDay, chance: Chance): World {
     fittings: [...service.fittings, ...withoutFirst(newFittings, byFitting, chain), chain.second],
     failures: failuresOf([...failures, chain.second]),
     repairs: new Map([...byFitting, ...repairsOfChain(chain)]),
-    sales: salesOf(units, { today, chance, zeroRatedUnitId, freeUnitId: chain.second.unit.id }),
+    sales,
+    saleOfUnit: new Map(sales.flatMap((sale) => (sale.unitId === null ? [] : [[sale.unitId, sale]]))),
     chain,
     zeroRated,
     ruleBook: ruleBookOn(today),

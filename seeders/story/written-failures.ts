@@ -4,6 +4,12 @@ import type { Fitting } from "./service";
 
 type Written = { readonly buyer: BuyerKey; readonly family: FamilyCode; readonly failedDaysAgo: number };
 
+const at = (
+  buyer: BuyerKey,
+  family: FamilyCode,
+  ...daysAgo: readonly [number, ...number[]]
+): readonly Written[] => daysAgo.map((failedDaysAgo) => ({ buyer, family, failedDaysAgo }));
+
 /** Failures the story needs on certain days, so that every desk has work on it; chance wrote the others. */
 const WRITTEN: readonly Written[] = [
   { buyer: "saltmarsh", family: "throttle", failedDaysAgo: 5 },
@@ -13,7 +19,20 @@ const WRITTEN: readonly Written[] = [
   { buyer: "larkmoor", family: "controller", failedDaysAgo: 9 },
   { buyer: "hollin", family: "controller", failedDaysAgo: 12 },
   { buyer: "saltmarsh", family: "charger", failedDaysAgo: 17 },
+  { buyer: "saltmarsh", family: "battery", failedDaysAgo: 24 },
   { buyer: "quayhead", family: "battery", failedDaysAgo: 30 },
+  // Fenwright Supply has one assessor and was short of her for a while: its list is long.
+  ...at("quayhead", "throttle", 4, 13, 23, 31),
+  ...at("quayhead", "charger", 10, 19, 26, 33),
+  ...at("quayhead", "brake", 9, 14, 21, 29),
+  ...at("quayhead", "gearbox", 11, 25, 34),
+  ...at("quayhead", "motor", 16, 28, 35),
+  ...at("quayhead", "controller", 18, 27),
+  ...at("larkmoor", "motor", 5, 20),
+  ...at("larkmoor", "charger", 30),
+  ...at("larkmoor", "battery", 8, 22, 32),
+  ...at("larkmoor", "throttle", 12, 27),
+  ...at("larkmoor", "brake", 17),
 ];
 
 const LEAST_DAYS_IN_USE = 45;

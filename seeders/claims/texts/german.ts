@@ -92,7 +92,32 @@ export const GERMAN: StoryTexts = {
       "Ihr Widerspruch war berechtigt. Warm und so lange wie bei Ihnen zeigt das Teil den Fehler. Wir erkennen die Meldung an: {part}, Seriennummer {serial}.",
   },
   waived: "Fotos, Messschrieb und Messwerte sind eindeutig: Das Teil muss nicht zurück.",
-  finding: "Warm auf dem Prüfstand gelaufen. Der Fehler trat auf.",
+  looks: { sameUnit: "Seriennummer wie gemeldet.", marksOfWork: "Keine." },
+  findings: {
+    faultConfirmed: "Der Fehler tritt auf wie gemeldet.",
+    otherFault:
+      "Das Teil selbst ist gut. Die Passfeder hat in der Welle gearbeitet, der Sitz ist einseitig verschlissen.",
+    noFaultFound: "Warm länger gelaufen als in der Meldung. Kein Fehler, alle Messwerte in den Grenzen.",
+    notTheUnit: "Die Seriennummer auf dem Teil ist nicht die gemeldete.",
+    damagedOnTheWay: "Paket durchnässt, Wasser im Teil. Getrocknet und fotografiert, nicht gelaufen.",
+    notTestable: "Der Prüfstand ist in Reparatur. Zehn Minuten kalt gelaufen, ohne Fehler.",
+  },
+  returns: {
+    department: "Wareneingang",
+    instructions: {
+      brake: "Kabel am Teil lassen. Bremse nicht öffnen.",
+      motor: "Bürsten im Motor lassen. Leitung am Gehäuse festbinden.",
+      battery: "Pole abkleben, aufrecht. Gebläht oder nass nicht mit der gewöhnlichen Post.",
+      gearbox: "Öl ablassen, Passfeder in einen Beutel.",
+    },
+    carriers: ["Küstenbote", "Paketlinie Nord"],
+    wet: "Nass angekommen, Karton weich.",
+    notSent: "Die Frist ist um, zwei Mails blieben ohne Antwort.",
+    missing: "Der Paketdienst sucht seit zehn Tagen. Der Versandbeleg ist gut.",
+    damaged: "Eine Ecke eingedrückt, das Teil sieht heil aus.",
+    otherSerial: "R2608-7KT4P",
+  },
+  counterReason: "Mit falschem Anteil ausgestellt. Eine neue Gutschrift folgt.",
   messages: {
     parcelSent: "Mit dem üblichen Paketdienst versandt, Sendung 0041 7720 5518.",
     parcelMissing: "Unter dieser Nummer ist hier nichts angekommen. Wir fragen beim Paketdienst nach.",

@@ -1,5 +1,6 @@
 import type { FamilyCode } from "@/lib/parts/families";
 import type { ReasonCode } from "@/lib/claims/verdict";
+import type { FindingKind } from "@/lib/returns/kinds";
 
 type Several = readonly [string, ...string[]];
 
@@ -26,7 +27,21 @@ export type StoryTexts = {
   readonly reasons: Readonly<Partial<Record<ReasonCode, string>>>;
   readonly letters: Readonly<Record<"upheld" | "upheldInPart" | "declined" | "reversed", string>>;
   readonly waived: string;
-  readonly finding: string;
+  /** What is seen at the bench before the run, by step of the bench plan. */
+  readonly looks: Readonly<Record<"sameUnit" | "marksOfWork", string>>;
+  readonly findings: Readonly<Record<FindingKind, string>>;
+  readonly returns: {
+    readonly department: string;
+    readonly instructions: Readonly<Partial<Record<FamilyCode, string>>>;
+    readonly carriers: Several;
+    readonly wet: string;
+    readonly damaged: string;
+    readonly notSent: string;
+    readonly missing: string;
+    /** What stands on a unit that was sent in place of the claimed one. */
+    readonly otherSerial: string;
+  };
+  readonly counterReason: string;
   readonly messages: Readonly<
     Record<
       "parcelSent" | "parcelMissing" | "parcelInside" | "thanks" | "reuseInside" | "serialInside",

@@ -2,7 +2,7 @@ import { createHash } from "node:crypto";
 import sharp from "sharp";
 import { chanceFrom, type Chance } from "../../random";
 import { BENCH_MARGIN, benchSvgs, HEIGHT, WIDTH } from "./bench";
-import { sceneSvg, type PhotoScene } from "./scene";
+import { pixelsOf, sceneSvg, type PhotoScene } from "./scene";
 
 export type RenderedPhoto = {
   readonly original: Buffer;
@@ -16,16 +16,19 @@ export type RenderedPhoto = {
 const VIEW_PX = 1600;
 const LARGE = { width: WIDTH + BENCH_MARGIN, height: HEIGHT + BENCH_MARGIN };
 
+type Size = { readonly width: number; readonly height: number };
 type Picture = { readonly pixels: Buffer; readonly channels: 3 | 4 };
 
 const rawOf = (channels: 3 | 4, { width, height } = LARGE) => ({ raw: { width, height, channels } });
 
-const pieceOf = (draw: Chance) => ({
+const pieceOf = (draw: Chance, size: Size) => ({
   left: draw.whole(0, BENCH_MARGIN),
   top: draw.whole(0, BENCH_MARGIN),
-  width: WIDTH,
-  height: HEIGHT,
+  ...size,
 });
+
+const grainPiece = ({ pixels }: Picture, piece: ReturnType<typeof pieceOf>): Promise<Buffer> =>
+  sharp(pixels, rawOf(3)).extract(piece).raw().toBuffer();
 
 const drawnBench = async (svg: string): Promise<Picture> => ({
   pixels: await sharp(Buffer.from(svg)).removeAlpha().resize(LARGE).raw().toBuffer(),
@@ -59,21 +62,23 @@ export async function photoRenderer(): Promise<PhotoRenderer> {
   return async (scene, takenAt) => {
     const draw = chanceFrom(`render/${scene.key}`);
     const bench = draw.pick(benches);
-    const noise = await sharp(grain.pixels, rawOf(3)).extract(pieceOf(draw)).raw().toBuffer();
+    const size = pixelsOf(scene);
+    const piece = pieceOf(draw, size);
+    // The grain of a small photo would be lost in its pixels.
+    const noise = scene.size === "full" ? [await grainPiece(grain, piece)] : [];
     const things = await sharp(Buffer.from(sceneSvg(scene)))
-      .resize(WIDTH, HEIGHT)
+      .resize(size.width, size.height)
       .ensureAlpha()
       .raw()
       .toBuffer();
-    const size = { width: WIDTH, height: HEIGHT };
     const original = await sharp(bench.pixels, rawOf(3))
-      .extract(pieceOf(draw))
+      .extract(pieceOf(draw, size))
       .flip(draw.happens(0.5))
       .flop(draw.happens(0.5))
       .linear(draw.between(0.86, 1.12))
       .composite([
         { input: things, ...rawOf(4, size) },
-        { input: noise, ...rawOf(3, size), blend: "soft-light" },
+        ...noise.map((input) => ({ input, ...rawOf(3, size), blend: "soft-light" as const })),
       ])
       .jpeg({ quality: draw.whole(78, 88) })
       .withExif({ IFD0: { Software: "Bench camera" }, IFD2: { DateTimeOriginal: capturedText(takenAt) } })
@@ -81,6 +86,6 @@ export async function photoRenderer(): Promise<PhotoRenderer> {
     const fitted = { width: VIEW_PX, height: VIEW_PX, fit: "inside", withoutEnlargement: true } as const;
     const view = await sharp(original).resize(fitted).jpeg({ quality: 80 }).toBuffer();
     const sha256 = createHash("sha256").update(original).digest("hex");
-    return { original, view, sha256, widthPx: WIDTH, heightPx: HEIGHT };
+    return { original, view, sha256, widthPx: size.width, heightPx: size.height };
   };
 }

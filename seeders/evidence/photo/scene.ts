@@ -20,7 +20,13 @@ export type PhotoScene = {
   readonly reading: { readonly value: string; readonly unit: string } | null;
   /** Whether the damage of the story can be seen. */
   readonly marked: boolean;
+  /** A small photo is two fifths as wide and high, and takes a fifth of the time. */
+  readonly size: "full" | "small";
 };
+
+/** Pixels of a photo. */
+export const pixelsOf = ({ size }: Pick<PhotoScene, "size">): { width: number; height: number } =>
+  size === "full" ? { width: WIDTH, height: HEIGHT } : { width: WIDTH * 0.4, height: HEIGHT * 0.4 };
 
 const THINGS: Readonly<Record<FamilyCode, (draw: Chance, marked: boolean) => Thing>> = {
   brake,
@@ -90,7 +96,7 @@ const shadowOf = (thing: Thing, framing: Framing, draw: Chance): string =>
 
 const SCALE = 0.75;
 
-/** What stands on the bench as SVG, drawn at three quarters of 1200 by 900: part, label or meter, and light. */
+/** What stands on the bench as SVG, drawn at three quarters of its pixels: part, label or meter, and light. */
 export function sceneSvg(scene: PhotoScene): string {
   const draw = chanceFrom(`photo/${scene.key}`);
   const thing = THINGS[scene.family](draw.fork("thing"), scene.marked);
@@ -115,7 +121,8 @@ export function sceneSvg(scene: PhotoScene): string {
     lamp.body,
   ];
   const defs = tag("defs", {}, haze("smear", "#2b2118"), thing.defs, shown?.defs ?? "", lamp.defs);
-  return `<svg xmlns="http://www.w3.org/2000/svg" width="${WIDTH * SCALE}" height="${HEIGHT * SCALE}" viewBox="0 0 ${WIDTH} ${HEIGHT}">${defs}${body.join("")}</svg>`;
+  const { width, height } = pixelsOf(scene);
+  return `<svg xmlns="http://www.w3.org/2000/svg" width="${width * SCALE}" height="${height * SCALE}" viewBox="0 0 ${WIDTH} ${HEIGHT}">${defs}${body.join("")}</svg>`;
 }
 
 function stickerOn(scene: PhotoScene, draw: Chance): string {

@@ -18,6 +18,7 @@ const scene = (changes: Partial<PhotoScene> = {}): PhotoScene => ({
   label: LABEL,
   reading: { value: "24.1", unit: "V" },
   marked: false,
+  size: "full",
   ...changes,
 });
 const TAKEN_AT = new Date("2026-11-03T10:00:00Z");
@@ -48,6 +49,17 @@ describe("the photos of the story", () => {
     expect((await sharp(original).metadata()).exif?.toString("latin1")).toContain("2026:11:03 10:00:00");
     expect((await sharp(view).metadata()).exif).toBeUndefined();
     expect(original.length).toBeLessThan(400_000);
+  });
+
+  it("are smaller for the many claims nobody looks at closely, and no two the same", async () => {
+    const small = await Promise.all(
+      ["one", "two"].map((key) => render(scene({ key, size: "small" }), TAKEN_AT)),
+    );
+    expect(small.map(({ widthPx, heightPx }) => [widthPx, heightPx])).toEqual([
+      [480, 360],
+      [480, 360],
+    ]);
+    expect(new Set(small.map(({ sha256 }) => sha256)).size).toBe(2);
   });
 
   it.each(FAMILY_CODES)("show a %s from every side without a face of the machine's own", (family) => {

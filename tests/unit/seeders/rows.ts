@@ -16,8 +16,16 @@ export const instant = (row: Row | undefined, column: string): Date => {
   return value;
 };
 
-export const byColumn = (rows: readonly Row[], column: string): Map<string, Row[]> => {
-  const groups = new Map<string, Row[]>();
-  for (const row of rows) groups.set(text(row, column), [...(groups.get(text(row, column)) ?? []), row]);
+/** Things by a name, in the order they came. */
+export const grouped = <T>(all: readonly T[], nameOf: (one: T) => string): Map<string, T[]> => {
+  const groups = new Map<string, T[]>();
+  for (const one of all) {
+    const group = groups.get(nameOf(one));
+    if (group) group.push(one);
+    else groups.set(nameOf(one), [one]);
+  }
   return groups;
 };
+
+export const byColumn = (rows: readonly Row[], column: string): Map<string, Row[]> =>
+  grouped(rows, (row) => text(row, column));

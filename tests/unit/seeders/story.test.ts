@@ -1,12 +1,14 @@
 import { createHash } from "node:crypto";
 import { beforeAll, describe, expect, it } from "vitest";
-import { CLAIM_STATES, RETURN_STATES } from "@/lib/claims/lifecycle";
+import { CLAIM_STATES, CREDIT_STATES, RETURN_STATES } from "@/lib/claims/lifecycle";
 import { calendarDay } from "@/lib/kernel/calendar-day";
 import { isClaimNumber } from "@/lib/labels/check-digit";
 import { printClaimNumber } from "@/lib/claims/number";
 import { ROLES } from "@/lib/access/roles";
+import { DISPOSALS, FINDING_KINDS } from "@/lib/returns/kinds";
 import { FAMILY_CODES } from "@/lib/parts/families";
 import { storyOn, type Story } from "@/seeders/demo-story";
+import { ORGANISATIONS } from "@/seeders/story/organisations";
 import { PEOPLE, peopleList } from "@/seeders/story/people";
 import { TABLES } from "@/seeders/tables";
 import { quickRenderer } from "./quick-renderer";
@@ -51,7 +53,47 @@ describe("the demo story", () => {
     expect(new Set(claims.map(({ state }) => state))).toEqual(new Set(CLAIM_STATES));
     const outcomes = claims.filter(({ state }) => state === "decided").map(({ outcome }) => outcome);
     expect(new Set(outcomes)).toEqual(new Set(["upheld", "upheldInPart", "declined"]));
-    expect(claims.length).toBeGreaterThan(60);
+    expect(claims.length).toBeGreaterThanOrEqual(240);
+    expect(claims.length).toBeLessThanOrEqual(260);
+  });
+
+  it("shows every state of the part and of the credit, and every way a part may end", () => {
+    const lines = rowsOf(story.tables, "claimLines");
+    expect(new Set(lines.map(({ returnState }) => returnState))).toEqual(new Set(RETURN_STATES));
+    expect(new Set(lines.map(({ creditState }) => creditState))).toEqual(new Set(CREDIT_STATES));
+    const ends = rowsOf(story.tables, "returnLines").flatMap(({ disposedAs }) =>
+      disposedAs === null ? [] : [disposedAs],
+    );
+    expect(new Set(ends)).toEqual(new Set(DISPOSALS));
+    const findings = rowsOf(story.tables, "findings").map(({ kind }) => kind);
+    expect(new Set(findings)).toEqual(new Set(FINDING_KINDS));
+  });
+
+  it("has work on every desk of both distributors", () => {
+    for (const seller of [ORGANISATIONS.larkmoor.id, ORGANISATIONS.fenwright.id]) {
+      const claims = rowsOf(story.tables, "claims").filter(({ sellerId }) => sellerId === seller);
+      const waiting = claims.filter(({ state }) => state === "filed" || state === "contested");
+      expect(waiting.length).toBeGreaterThanOrEqual(30);
+      const lines = rowsOf(story.tables, "claimLines").filter(({ sellerId }) => sellerId === seller);
+      for (const state of ["awaited", "sent", "received", "examined"])
+        expect(lines.filter(({ returnState }) => returnState === state).length, state).toBeGreaterThan(0);
+      for (const state of ["due", "noteIssued"])
+        expect(lines.filter(({ creditState }) => creditState === state).length, state).toBeGreaterThan(1);
+    }
+  });
+
+  it("shows the first assessor a claim in her hands that waits for no part, before the others", () => {
+    const held = rowsOf(story.tables, "claims")
+      .filter(({ state, holderId }) => state === "beingJudged" && holderId === PEOPLE.ada.id)
+      .filter(({ safetyReported }) => safetyReported === true);
+    expect(held).toHaveLength(1);
+    const lines = rowsOf(story.tables, "claimLines").filter(({ claimId }) => claimId === held[0]?.["id"]);
+    expect(lines.map(({ returnState }) => returnState)).toEqual(["notNeeded"]);
+  });
+
+  it("has one person who works in two places", () => {
+    const places = byColumn(rowsOf(story.tables, "memberships"), "userId");
+    expect([...places].filter(([, own]) => own.length > 1).map(([id]) => id)).toEqual([PEOPLE.kit.id]);
   });
 
   it("writes every table it says it writes", () => {

@@ -7,7 +7,7 @@ import { calendarDay } from "@/lib/kernel/calendar-day";
 import { storyOn, type Story } from "@/seeders/demo-story";
 import { isUnsent } from "@/seeders/claims/plots";
 import { quickRenderer } from "./quick-renderer";
-import { byColumn, rowsOf, text } from "./rows";
+import { byColumn, grouped, rowsOf, text } from "./rows";
 
 let story: Story;
 beforeAll(async () => {
@@ -15,28 +15,60 @@ beforeAll(async () => {
 });
 
 describe("the hidden truth of the story", () => {
+  const ofPart = (role: string) =>
+    story.world.fittings.filter(
+      ({ unit }) => unit.batch.part.number === "LMB-2410" && unit.batch.role === role,
+    );
+  const failed = (fittings: ReturnType<typeof ofPart>) =>
+    fittings.filter(({ failedDaysAgo }) => failedDaysAgo !== null);
+
   it("lets the bad brake batch fail at many times the rate of the other batches of its part", () => {
-    const rate = (role: string) => {
-      const fittings = story.world.fittings.filter(
-        ({ unit }) => unit.batch.part.number === "LMB-2410" && unit.batch.role === role,
-      );
-      const days = fittings.reduce(
+    const perDay = (role: string) => {
+      const days = ofPart(role).reduce(
         (sum, { fittedDaysAgo, failedDaysAgo }) => sum + fittedDaysAgo - (failedDaysAgo ?? 0),
         0,
       );
-      return fittings.filter(({ failedDaysAgo }) => failedDaysAgo !== null).length / days;
+      return failed(ofPart(role)).length / days;
     };
-    expect(rate("bad") / rate("usual")).toBeGreaterThan(10);
-    const workshops = new Set(
-      story.cases.filter(({ twist }) => twist === "badCoil").map(({ workshop }) => workshop),
-    );
-    expect(workshops.size).toBe(3);
+    expect(perDay("bad") / perDay("usual")).toBeGreaterThan(10);
+    // By hand, too: claims by units in service.
+    const crude = (role: string) => failed(ofPart(role)).length / ofPart(role).length;
+    expect(crude("bad") / crude("usual")).toBeGreaterThan(4);
   });
 
-  it("has a young batch with units in service and no failure yet", () => {
-    const young = story.world.fittings.filter(({ unit }) => unit.batch.role === "young");
+  it("claims sixty to ninety brakes of the bad batch from three workshops, the largest of them with no more than two thirds", () => {
+    const claims = story.cases.filter(({ lines: [line] }) => line.unit?.batch.role === "bad");
+    expect(claims.length).toBeGreaterThanOrEqual(60);
+    expect(claims.length).toBeLessThanOrEqual(90);
+    const workshops = grouped(claims, ({ workshop }) => workshop);
+    expect(workshops.size).toBe(3);
+    for (const own of workshops.values()) expect(own.length / claims.length).toBeLessThan(2 / 3);
+  });
+
+  it("gives the bad batch sisters enough to be told from: four batches, each larger and with failures of its own", () => {
+    const bad = story.world.batches.find(({ role }) => role === "bad");
+    const sisters = story.world.batches.filter(
+      ({ part, role }) => part.number === "LMB-2410" && role === "usual",
+    );
+    expect(sisters).toHaveLength(4);
+    for (const sister of sisters) {
+      expect(sister.units).toBeGreaterThan(bad?.units ?? 0);
+      const own = ofPart("usual").filter(({ unit }) => unit.batch === sister);
+      expect(own.length).toBeGreaterThan(100);
+      expect(failed(own).length).toBeGreaterThan(0);
+    }
+  });
+
+  it("has a young batch with units in service, no failure, and none as old as the usual first failure of its part", () => {
+    const young = ofPart("young");
     expect(young.length).toBeGreaterThan(10);
-    expect(young.filter(({ failedDaysAgo }) => failedDaysAgo !== null)).toEqual([]);
+    expect(failed(young)).toEqual([]);
+    const firstAge = Math.min(
+      ...failed(ofPart("usual")).map(
+        ({ fittedDaysAgo, failedDaysAgo }) => fittedDaysAgo - (failedDaysAgo ?? 0),
+      ),
+    );
+    expect(Math.max(...young.map(({ fittedDaysAgo }) => fittedDaysAgo))).toBeLessThan(firstAge);
   });
 
   it("puts the early gearbox failures on one workshop and one installer", () => {
@@ -73,7 +105,9 @@ describe("the hidden truth of the story", () => {
   it("shows the same coils failing hot: every log is read, and its fault stands where the story put it", () => {
     const files = new Map(story.files.map((file) => [file.sha256, file]));
     const logs = byColumn(
-      rowsOf(story.tables, "evidenceFiles").filter(({ kind }) => kind === "runLog"),
+      rowsOf(story.tables, "evidenceFiles").filter(
+        ({ kind, takenBy }) => kind === "runLog" && takenBy === "workshop",
+      ),
       "claimId",
     );
     const claims = rowsOf(story.tables, "claims");
@@ -95,5 +129,21 @@ describe("the hidden truth of the story", () => {
       }
     }
     expect(seen).toBeGreaterThan(20);
+  });
+
+  it("finds no fault on the bench only after a run as long as the workshop's, 45 minutes where the claim gives none", () => {
+    const files = rowsOf(story.tables, "evidenceFiles");
+    const good = rowsOf(story.tables, "findings").filter(({ kind }) => kind === "noFaultFound");
+    expect(good.length).toBeGreaterThan(0);
+    for (const finding of good) {
+      const claim = rowsOf(story.tables, "claims").find(({ id }) => id === finding["claimId"]);
+      const one = story.cases.find(({ number }) => number === claim?.["number"]);
+      const isLogged = files.some(
+        ({ claimId, kind, takenBy }) =>
+          claimId === finding["claimId"] && kind === "runLog" && takenBy === "workshop",
+      );
+      const least = isLogged ? (one?.faultAfterMinutes ?? 0) : 45;
+      expect(Number(finding["runMinutes"])).toBeGreaterThanOrEqual(least);
+    }
   });
 });
