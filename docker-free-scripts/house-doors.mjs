@@ -3,7 +3,7 @@ import { basename } from "node:path";
 
 /** The areas of lib, each building on those before it. */
 const AREAS =
-  "kernel reliability labels access people accounts parts rule-book coverage evidence credits claims evidence-files returns day-book notices recovery imports reports";
+  "kernel reliability labels access people accounts parts rule-book coverage evidence credits claims alerts evidence-files returns day-book notices recovery imports reports";
 const ADAPTERS = ["db", "web", "storage", "mail", "documents", "jobs"];
 /** Also with a word before: `doubts-queries`. */
 const EDGE_FILE = /(^|-)(queries|service|present|report)$/;

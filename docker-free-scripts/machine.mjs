@@ -35,17 +35,24 @@ export function needPackages(...names) {
   const missing = names.filter((name) => !PACKAGES[name].has());
   if (missing.length === 0) return "all there";
   const packages = missing.flatMap((name) => PACKAGES[name].needs);
-  const command = `apt-get update && apt-get install -y --no-install-recommends ${packages.join(" ")}`;
+  const command = `apt-get update && apt-get install -y --no-install-recommends -o DPkg::Lock::Timeout=300 ${packages.join(" ")}`;
   if (!isRoot)
     throw new Stop(
-      `Debian packages are missing. Run this once, then start again:\n  sudo sh -c '${command}'`,
+      `Debian packages are missing. Run this once, then the same again:\n  sudo sh -c '${command}'`,
     );
+  process.stdout.write(`Installing ${packages.join(", ")} from Debian; this takes a minute or more\n`);
   const run = spawnSync("sh", ["-c", command], {
-    stdio: ["ignore", "ignore", "inherit"],
+    encoding: "utf8",
+    maxBuffer: 64e6,
     env: { ...process.env, DEBIAN_FRONTEND: "noninteractive" },
   });
-  if (run.status !== 0)
-    throw new Stop(`Debian's packages could not be installed. Run this by hand to see why:\n  ${command}`);
+  // A package may be in place although something beside it was not: what counts is the file.
+  if (run.status !== 0 || names.some((name) => !PACKAGES[name].has())) {
+    const said = `${run.stdout ?? ""}${run.stderr ?? ""}`.trim().split("\n").slice(-15).join("\n");
+    throw new Stop(
+      `Debian's packages could not be installed:\n${said}\nRun this by hand to see more:\n  ${command}`,
+    );
+  }
   return `installed ${packages.join(", ")}`;
 }
 

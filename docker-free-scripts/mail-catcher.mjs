@@ -30,6 +30,11 @@ function keep(parsed, envelope) {
     subject: parsed.subject ?? "",
     text: parsed.text ?? "",
     html: parsed.html || "",
+    attachments: parsed.attachments.map(({ filename, contentType, content }) => ({
+      filename: filename ?? "",
+      contentType,
+      base64: content.toString("base64"),
+    })),
     headers: Object.fromEntries(
       [...parsed.headers].map(([name, value]) => [
         name,
@@ -78,7 +83,7 @@ const list = () =>
 const one = (mail) =>
   page(
     mail.subject,
-    `<p><a href="/">All mails</a></p><h1>${escape(mail.subject)}</h1><p>To ${escape(mail.to.join(", "))}</p><pre>${escape(mail.text)}</pre><iframe sandbox title="HTML part" srcdoc="${escape(mail.html)}"></iframe>`,
+    `<p><a href="/">All mails</a></p><h1>${escape(mail.subject)}</h1><p>To ${escape(mail.to.join(", "))}</p>${(mail.attachments ?? []).map((file, place) => `<p><a href="/mails/${mail.id}/${place}">${escape(file.filename)}</a></p>`).join("")}<pre>${escape(mail.text)}</pre><iframe sandbox title="HTML part" srcdoc="${escape(mail.html)}"></iframe>`,
   );
 
 function answer(request, response) {
@@ -94,6 +99,17 @@ function answer(request, response) {
     });
     response.end(text);
   };
+  const [, fileOf = "", place = ""] = /^\/mails\/([\w-]+)\/(\d{1,2})$/.exec(url.pathname) ?? [];
+  const file = mails.get(fileOf)?.attachments?.[Number(place)];
+  if (file) {
+    // Saved, never shown here: what somebody sent must not run as a page of ours.
+    const name = encodeURIComponent(file.filename);
+    response.writeHead(200, {
+      "content-type": "application/octet-stream",
+      "content-disposition": `attachment; filename*=UTF-8''${name}`,
+    });
+    return response.end(Buffer.from(file.base64, "base64"));
+  }
   const id = /^(?:\/api)?\/mails\/([\w-]+)$/.exec(url.pathname)?.[1];
   if (url.pathname === "/api/mails" && request.method === "DELETE") {
     for (const old of mails.keys()) rmSync(join(MAIL_FOLDER, `${old}.json`), { force: true });

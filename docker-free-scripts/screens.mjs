@@ -9,6 +9,13 @@ const claim =
   };
 const draft = (step) => claim("own", "onUs", { marks: ["draft"], rest: `/${step}` });
 
+/** Where the first such link on the list of goods-in leads. */
+const goodsIn = (selector) => async (page) => {
+  await page.goto("/goods-in");
+  const link = page.locator(`main a${selector}`).first();
+  return (await link.count()) > 0 ? await link.getAttribute("href") : undefined;
+};
+
 /** Every screen by the person who lives in it. A path may be found out first; what has no claim to show is left out. */
 export const SCREENS = [
   {
@@ -38,6 +45,7 @@ export const SCREENS = [
       "claim-upheld": claim("own", "decided", { marks: ["upheld", "upheldInPart"] }),
       "claim-declined": claim("own", "decided", { marks: ["declined"] }),
       "nothing-found": "/workshop-today?view=all&q=nothing-like-it",
+      alerts: "/alerts",
       account: "/account",
       help: "/help",
     },
@@ -54,6 +62,28 @@ export const SCREENS = [
       decide: claim("received", "held", { rest: "/decide" }),
       "claim-decided": claim("received", "decided"),
       "rule-book": "/rule-book",
+      alerts: "/alerts",
+    },
+  },
+  {
+    role: "goods-in",
+    email: "rosa.finchley@larkmoor.example",
+    screens: {
+      "goods-in": "/goods-in",
+      "goods-in-nothing-found": "/goods-in?find=nothing-like-it",
+      receive: goodsIn('[href^="/goods-in/returns/"]:not([href*="/bench/"])'),
+      bench: goodsIn('[href*="/bench/"]'),
+      "parcel-new": "/goods-in/parcels/new",
+      "parcel-match": goodsIn('[href^="/goods-in/parcels/"]:not([href$="/new"])'),
+    },
+  },
+  {
+    role: "analyst",
+    email: "nadia.brook@larkmoor.example",
+    screens: {
+      "life-curves": "/life-curves",
+      "life-curves-upper": "/life-curves?axis=upper&count=upheld",
+      "life-curves-claims": "/life-curves/claims",
     },
   },
   {
@@ -147,9 +177,17 @@ export const MORE_SCREENS = [
     },
   },
   {
-    role: "goods-in",
+    role: "goods-in-acting",
     email: "rosa.finchley@larkmoor.example",
-    screens: { home: "/", account: "/account" },
+    screens: {
+      home: "/",
+      account: "/account",
+      "receive-refused": after(
+        goodsIn('[href^="/goods-in/returns/"]:not([href*="/bench/"])'),
+        press("Receive"),
+      ),
+      "finding-refused": after(goodsIn('[href*="/bench/"]'), press("Write the finding")),
+    },
   },
   {
     role: "administrator-acting",

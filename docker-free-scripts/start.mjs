@@ -71,7 +71,9 @@ async function main() {
   const cluster = clusterFolder();
   if (isRunning(cluster)) stopCluster(cluster);
   for (const [name, number] of Object.entries(ports)) await needFreePort(number, VARIABLE[name]);
-  mkdirSync(join(folder, "run"), { recursive: true });
+  // Mails, evidence and logs are for the owner of the checkout alone, on a machine others share too.
+  for (const name of ["log", "mail", "run", "store"])
+    mkdirSync(join(folder, name), { recursive: true, mode: 0o700 });
   writeFileSync(pidFile, JSON.stringify({ pid: process.pid, url: environment.PUBLIC_URL }));
 
   let exitCode = 0;

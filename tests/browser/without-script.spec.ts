@@ -92,3 +92,51 @@ test("a claim is taken, judged as far as the refusal, and given back without scr
   await page.goto("/judging");
   await page.waitForURL(/\/sign-in$/);
 });
+
+test("a list stands in its place without script: its rows and no skeleton, and what is not one's own is 404", async ({
+  page,
+}) => {
+  await signInAs(page, ADA);
+  for (const list of ["/judging?view=all", "/rule-book"]) {
+    expect((await page.goto(list))?.status()).toBe(200);
+    await expect(page.locator("main tbody tr").first()).toBeVisible();
+    // What streams in later waits in such a place until a script moves it.
+    await expect(page.locator('[hidden][id^="S:"]')).toHaveCount(0);
+    await expect(page.getByText("Loading", { exact: true })).toHaveCount(0);
+  }
+  for (const path of ["/claims/9999-9999", "/catalogue"])
+    expect([path, (await page.request.get(path)).status()]).toEqual([path, 404]);
+});
+
+test("an alert is found, opened and read without script", async ({ page }) => {
+  await signInAs(page, ADA);
+  await page.goto("/judging?view=toJudge");
+  const row = page.locator("main tbody tr", { hasText: "Saltmarsh" }).last();
+  const number = (await row.locator('a[href^="/claims/"]').innerText()).trim();
+  await page.goto(`/claims/${number}`);
+  await page.getByRole("button", { name: "Take this claim" }).click();
+  await page.goto(`/claims/${number}/ask`);
+  await page.locator('[name="question"]').fill("Which air gap did you measure?");
+  await page.getByRole("button", { name: "Send query" }).click();
+  await page.waitForURL(new RegExp(`/claims/${number}$`, "u"));
+  await page.goto("/account");
+  await page.getByRole("button", { name: "Sign out" }).click();
+
+  await signInAs(page, LOU);
+  await page.getByRole("link", { name: /^Alerts .*unread/u }).click();
+  await page.waitForURL(/\/alerts$/u);
+  const alert = page.locator("main li", { hasText: number }).first();
+  await expect(alert).toContainText("has a question. Answer by");
+  await expect(alert).toContainText("Unread");
+  await alert.getByRole("link", { name: number }).click();
+  await page.waitForURL(new RegExp(`/claims/${number}$`, "u"));
+  await page.goto("/alerts");
+  await expect(alert).not.toContainText("Unread");
+  await expect(alert).toContainText("Read");
+
+  const readAll = page.getByRole("button", { name: "Mark all as read" });
+  if ((await readAll.count()) > 0) await readAll.click();
+  await page.goto("/alerts");
+  await expect(page.getByText("Unread", { exact: true })).toHaveCount(0);
+  await expect(page.getByRole("link", { name: "Alerts", exact: true })).toBeVisible();
+});
