@@ -12,6 +12,10 @@ const everyAnswer = [
   { key: "Permissions-Policy", value: "camera=(self), geolocation=(), microphone=(), payment=(), usb=()" },
 ];
 
+/** Where an answer does not say itself how long it may be kept, a redirection above all, nobody keeps it. */
+const keptByNobody = [{ key: "Cache-Control", value: "private, no-store" }];
+const NOT_OF_ANYONE = "/((?!_next/static|_next/image|favicon.ico|icon.svg).*)";
+
 /** @type {import("next").NextConfig} */
 const config = {
   poweredByHeader: false,
@@ -23,7 +27,13 @@ const config = {
   images: { unoptimized: true },
   // Sequelize asks for drivers it does not use when it is bundled; the others load files beside themselves.
   serverExternalPackages: ["sequelize", "formidable", "graphile-worker", "@node-rs/argon2", "sharp", "pino"],
-  headers: () => Promise.resolve([{ source: "/:path*", headers: everyAnswer }]),
+  // Verbs stand in the log by their names, which shortening would take from them.
+  experimental: { serverMinification: false },
+  headers: () =>
+    Promise.resolve([
+      { source: "/:path*", headers: everyAnswer },
+      { source: NOT_OF_ANYONE, headers: keptByNobody },
+    ]),
 };
 
 export default withNextIntl(config);

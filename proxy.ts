@@ -1,4 +1,5 @@
 import { NextResponse, type NextRequest } from "next/server";
+import { requestIdOf } from "@/lib/web/request-id";
 
 const policy = (nonce: string) => {
   const development = process.env.NODE_ENV === "development";
@@ -23,6 +24,8 @@ export function proxy(request: NextRequest) {
   const nonce = Buffer.from(crypto.randomUUID()).toString("base64");
   const headers = new Headers(request.headers);
   headers.set("x-nonce", nonce);
+  // Whatever is done and logged for this page, in however many places, has one id.
+  headers.set("x-request-id", requestIdOf(request.headers));
   headers.set("content-security-policy", policy(nonce));
   const response = NextResponse.next({ request: { headers } });
   response.headers.set("content-security-policy", policy(nonce));

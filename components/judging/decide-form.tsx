@@ -21,10 +21,17 @@ type Line = {
   name: string;
   serial: string | null;
   suggestion: VerdictOutcome | null;
-  /** Whether it is covered and why, step by step. */
-  cover: ReactNode;
+  /** What the bench found, whether it is covered and why: read before the verdict is given. */
+  beside: ReactNode;
 };
-type DecideFormProps = { action: FormAction; number: string; revision: number; lines: readonly Line[] };
+type DecideFormProps = {
+  action: FormAction;
+  number: string;
+  revision: number;
+  lines: readonly Line[];
+  /** True where a line has no finding: the verdict then says why it needs none. */
+  asksWhyNoFinding: boolean;
+};
 type LineProps = {
   line: Line;
   place: number;
@@ -44,7 +51,7 @@ const QUESTIONS = ["outcome", "shares", "reasonCode", "reason", "letter", "retur
 const BESIDE = "grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]";
 
 /** The verdict of each line, whose doing it was in exact shares, the reason, and the letter the workshop reads. */
-export function DecideForm({ action, number, revision, lines }: DecideFormProps) {
+export function DecideForm({ action, number, revision, lines, asksWhyNoFinding }: DecideFormProps) {
   const t = useTranslations("live.decide");
   const [state, send] = useActionState(action, null);
   const refused = state && !state.ok ? state : null;
@@ -68,8 +75,8 @@ export function DecideForm({ action, number, revision, lines }: DecideFormProps)
       {lines.map((line, place) => (
         <div key={line.lineId} className={BESIDE}>
           <LineVerdict line={line} place={place} typed={refused?.typed} fields={fields} />
-          {/* On a phone the cover is read before the verdict is given. */}
-          <div className="min-w-0 max-xl:order-first">{line.cover}</div>
+          {/* On a phone it is read before the verdict is given. */}
+          <div className="min-w-0 max-xl:order-first">{line.beside}</div>
         </div>
       ))}
       <div className={BESIDE}>
@@ -84,14 +91,16 @@ export function DecideForm({ action, number, revision, lines }: DecideFormProps)
               defaultValue={textIn(refused?.typed, "letter") ?? ""}
               error={fields.letter}
             />
-            <TextField
-              name="returnWaivedReason"
-              label={t("returnWaived")}
-              hint={t("returnWaivedHint")}
-              maxLength={1000}
-              defaultValue={textIn(refused?.typed, "returnWaivedReason") ?? ""}
-              error={fields.returnWaivedReason}
-            />
+            {asksWhyNoFinding ? (
+              <TextField
+                name="returnWaivedReason"
+                label={t("returnWaived")}
+                hint={t("returnWaivedHint")}
+                maxLength={1000}
+                defaultValue={textIn(refused?.typed, "returnWaivedReason") ?? ""}
+                error={fields.returnWaivedReason}
+              />
+            ) : null}
             <SubmitRow>
               <SubmitButton>{t("submit")}</SubmitButton>
             </SubmitRow>

@@ -1,6 +1,7 @@
 import type { ReactNode } from "react";
 import type { Locale } from "@/lib/kernel/locale";
 import type { RuleView } from "@/lib/rule-book/rule-view";
+import { CreditTable } from "./credit-table";
 import { EvidenceListTable } from "./evidence-list-table";
 import { LimitsTable } from "./limits-table";
 import { ServiceLevelsTable } from "./service-levels-table";
@@ -15,6 +16,7 @@ const DRAWING: Drawing = {
   evidenceList: ({ body, family }) => <EvidenceListTable list={body} family={family} />,
   limits: ({ body }, locale) => <LimitsTable limits={body} locale={locale} />,
   serviceLevels: ({ body }, locale) => <ServiceLevelsTable levels={body} locale={locale} />,
+  credit: ({ body }, locale) => <CreditTable rules={body} locale={locale} />,
 };
 
 const isOfKind = <K extends Kind>(kind: K, rule: RuleView): rule is RuleOf<K> => rule.kind === kind;

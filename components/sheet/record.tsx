@@ -27,7 +27,10 @@ export function Record({ sheet, locale, timeZone }: SheetProps) {
             key={entry.seq}
             what={
               kinds.has(entry.kind)
-                ? kinds(entry.kind, { revision: textIn(entry.detail, "revision", locale) ?? "" })
+                ? kinds(entry.kind, {
+                    revision: textIn(entry.detail, "revision", locale) ?? "",
+                    note: textIn(entry.detail, "note", locale) ?? "",
+                  })
                 : entry.kind
             }
             who={

@@ -4,6 +4,7 @@ import type { SheetView } from "@/lib/claims/sheet/view";
 import type { FormAction } from "@/lib/kernel/action-result";
 import { MoveButton } from "./move-button";
 import { ReasonDrawer } from "./reason-drawer";
+import { VerdictActions, type AfterVerdict } from "./verdict-actions";
 
 type Actions = {
   take: FormAction;
@@ -11,8 +12,7 @@ type Actions = {
   putBack: FormAction;
   park: FormAction;
   withdraw: FormAction;
-  contest: FormAction;
-};
+} & AfterVerdict;
 type SheetActionsProps = {
   sheet: SheetView;
   base: `/claims/${string}`;
@@ -79,16 +79,7 @@ export function SheetActions({ sheet, base, colleagues, actions }: SheetActionsP
           submit={t("withdraw")}
         />
       ) : null}
-      {can("contest") ? (
-        <ReasonDrawer
-          action={actions.contest}
-          number={number}
-          trigger={t("contest")}
-          label={t("contestReason")}
-          field="reason"
-          submit={t("contest")}
-        />
-      ) : null}
+      <VerdictActions sheet={sheet} actions={actions} />
       {sheet.canTakeOver ? (
         <span className="flex flex-wrap items-center gap-3">
           <span className="text-ink-2">{t("heldBy", { name: sheet.holderName ?? "" })}</span>

@@ -58,7 +58,7 @@ export function VerdictCard({ verdict, sheet, locale, timeZone }: SheetProps & {
           </details>
         </section>
       ))}
-      {sheet.state === "decided" && sheet.contestUntil ? (
+      {sheet.isContestOpen && sheet.contestUntil ? (
         <p className="font-semibold">
           {t("contestUntil", { day: formatDay(calendarDay(sheet.contestUntil), locale) })}
         </p>

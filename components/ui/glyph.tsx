@@ -32,6 +32,12 @@ const GLYPHS = {
   onward: <path d="M3.5 10h13M11.6 5l5 5-5 5" />,
   ascending: <path d="M10 16.5v-13M5.2 8.2 10 3.5l4.8 4.7" />,
   descending: <path d="M10 3.5v13M5.2 11.8l4.8 4.7 4.8-4.7" />,
+  bell: (
+    <>
+      <path d="M4.2 14.4c1.2-1.2 1.5-2.6 1.5-5.2a4.3 4.3 0 0 1 8.6 0c0 2.6.3 4 1.5 5.2Z" />
+      <path d="M8.2 17a2 2 0 0 0 3.6 0M10 4.9V3" />
+    </>
+  ),
   bars: <path d="M2.8 5.4h14.4M2.8 10h14.4M2.8 14.6h14.4" />,
 } as const satisfies Record<string, ReactNode>;
 

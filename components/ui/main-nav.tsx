@@ -8,6 +8,7 @@ import type { ComponentProps, ReactNode } from "react";
 import { buttonStyle } from "./button-style";
 import { closeOnEscape } from "./close-on-escape";
 import { Glyph } from "./glyph";
+import { LinkPending } from "./link-pending";
 
 export type Place = { href: ComponentProps<typeof Link>["href"]; label: ReactNode; count?: number };
 type MainNavProps = { places: readonly Place[]; help: Place; hasTools: boolean };
@@ -74,13 +75,14 @@ function BarLink({ place, isCurrent }: PlaceLinkProps) {
       href={place.href}
       aria-current={isCurrent ? "page" : undefined}
       className={clsx(
-        "flex min-h-target items-center gap-1.5 border-b-3 px-2 pt-1 pb-1.5 hover:border-edge focus-visible:-outline-offset-3",
+        "relative flex min-h-target items-center gap-1.5 border-b-3 px-2 pt-1 pb-1.5 hover:border-edge focus-visible:-outline-offset-3",
         isCurrent
           ? "border-ink font-semibold text-ink hover:border-ink"
           : "border-transparent text-ink-2 hover:text-ink forced-colors:border-[Canvas]",
       )}
     >
       {place.label} <Count value={place.count} />
+      <LinkPending />
     </Link>
   );
 }
@@ -91,13 +93,14 @@ function ListLink({ place, isCurrent }: PlaceLinkProps) {
       href={place.href}
       aria-current={isCurrent ? "page" : undefined}
       className={clsx(
-        "flex min-h-14 items-center justify-between gap-4 border-l-4 px-4 focus-visible:-outline-offset-3",
+        "relative flex min-h-14 items-center justify-between gap-4 border-l-4 px-4 focus-visible:-outline-offset-3",
         isCurrent
           ? "border-petrol bg-well font-semibold"
           : "border-transparent forced-colors:border-[Canvas]",
       )}
     >
       {place.label} <Count value={place.count} />
+      <LinkPending />
     </Link>
   );
 }

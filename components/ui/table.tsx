@@ -102,7 +102,8 @@ type TdProps = Omit<ComponentProps<"td">, "className"> & {
 /** Its value stands in a box of its own, so that a phone can set label and value side by side. */
 export const Td = ({ label, isNumeric = false, children, ...props }: TdProps) => (
   <td role="cell" data-label={label} {...props} className={clsx(isNumeric && "ledger-number")}>
-    {children ? <div className="ledger-value">{children}</div> : null}
+    {/* A nought is a value, and an empty cell would hide it. */}
+    {children || children === 0 ? <div className="ledger-value">{children}</div> : null}
   </td>
 );
 

@@ -1,16 +1,16 @@
 import "server-only";
+import { Op } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { writeToAudit } from "@/lib/people/audit-service";
 import { allows } from "@/lib/people/rights-queries";
+import { Organisation } from "@/models/organisation";
+import { TradingAccount } from "@/models/trading-account";
 import type { NewAccount } from "./schema";
 
 /** `wasKnown`: the tax number led to a workshop that was already here, under the name it has itself. */
 export type Opened = { readonly number: string; readonly wasKnown: boolean };
-type Found = { id: string };
-
-const MINE = "select account_number as number from trading_accounts where seller_id = $1";
 
 const lockAccounts = (work: Work) =>
   rows(work, "select pg_advisory_xact_lock(hashtextextended('accounts:' || $1, 0))", [
@@ -19,14 +19,21 @@ const lockAccounts = (work: Work) =>
 
 type Buyer = { readonly id: string; readonly wasKnown: boolean };
 
-const chosenBuyer = async (work: Work, buyerId: string): Promise<Buyer | null> => {
-  const [found] = await rows<Found>(
-    work,
-    "select id from organisations where id = $1 and buys and id <> $2",
-    [buyerId, work.actor.organisationId],
-  );
+const chosenBuyer = async ({ transaction, actor }: Work, buyerId: string): Promise<Buyer | null> => {
+  const found = await Organisation.findOne({
+    attributes: ["id"],
+    where: { id: { [Op.eq]: buyerId, [Op.ne]: actor.organisationId }, buys: true },
+    transaction,
+  });
   return found ? { id: found.id, wasKnown: false } : null;
 };
+
+/** The account of this number, or with this buyer, that the actor's organisation keeps already. */
+const accountWith = (
+  { transaction, actor }: Work,
+  by: { accountNumber: string } | { buyerId: string },
+): Promise<TradingAccount | null> =>
+  TradingAccount.findOne({ where: { sellerId: actor.organisationId, ...by }, transaction });
 
 /** The workshop that was typed in, or the one its tax number belongs to. */
 async function openedWorkshop(work: Work, input: NewAccount): Promise<Buyer | null> {
@@ -51,20 +58,20 @@ export const openAccount = (actor: Actor, input: NewAccount): Promise<Outcome<Op
     const { number, buyerId, currency } = input;
     if (buyerId !== "" && input.name !== "") return refuse("buyerTwice", {}, "buyerId");
     await lockAccounts(work);
-    const [taken] = await rows(work, `${MINE} and account_number = $2`, [actor.organisationId, number]);
-    if (taken) return refuse("accountNumberTaken", { number }, "number");
+    if (await accountWith(work, { accountNumber: number }))
+      return refuse("accountNumberTaken", { number }, "number");
     const buyer = buyerId === "" ? await openedWorkshop(work, input) : await chosenBuyer(work, buyerId);
     if (!buyer) return refuse("buyerUnknown", {}, "buyerId");
-    const [held] = await rows<{ number: string }>(work, `${MINE} and buyer_id = $2`, [
-      actor.organisationId,
-      buyer.id,
-    ]);
+    const held = await accountWith(work, { buyerId: buyer.id });
     if (held)
-      return refuse("accountExists", { number: held.number }, buyerId === "" ? "taxNumber" : "buyerId");
-    await rows(
-      work,
-      "insert into trading_accounts (seller_id, buyer_id, account_number, currency) values ($1, $2, $3, $4)",
-      [actor.organisationId, buyer.id, number, currency],
+      return refuse(
+        "accountExists",
+        { number: held.accountNumber },
+        buyerId === "" ? "taxNumber" : "buyerId",
+      );
+    await TradingAccount.create(
+      { sellerId: actor.organisationId, buyerId: buyer.id, accountNumber: number, currency },
+      { transaction: work.transaction },
     );
     await writeToAudit(work, "account.opened", {
       number,

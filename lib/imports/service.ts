@@ -1,5 +1,5 @@
 import "server-only";
-import { UniqueConstraintError } from "sequelize";
+import { fn, UniqueConstraintError } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
 import { rows, undoing, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { LIMITS, mostBytes } from "@/lib/kernel/limits";
@@ -7,6 +7,7 @@ import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { importKey } from "@/lib/storage/keys";
 import { copyOnce, readAll, remove } from "@/lib/storage/objects";
 import { receiveFile, type Received, type ReceiveRefusal } from "@/lib/storage/receive";
+import { InvoiceImport } from "@/models/invoice-import";
 import type { Check } from "./check";
 import { headingsIn } from "./heading";
 import { checkFile, findImport, mayImport, storedFile } from "./queries";
@@ -52,26 +53,27 @@ const keyOf = (actor: Actor, sha256: string): string => `${importKey(sha256)}/${
 
 /** Notes the file once: the same bytes sent again are the import they were. */
 async function noteFile(work: Work, received: Received, file: CsvFile): Promise<ImportSent | null> {
+  const { transaction, actor } = work;
+  const { sha256 } = received;
   const [made] = await rows<{ id: string }>(
     work,
     `insert into invoice_imports (seller_id, sha256, file_name, object_key, mapping, line_count, created_by_id)
      values ($1, $2, $3, $4, $5, $6, $7) on conflict (seller_id, sha256) do nothing returning id`,
     [
-      work.actor.organisationId,
-      received.sha256,
+      actor.organisationId,
+      sha256,
       received.name,
-      keyOf(work.actor, received.sha256),
+      keyOf(actor, sha256),
       JSON.stringify(mappingOf(file)),
       file.rows.length,
-      work.actor.userId,
+      actor.userId,
     ],
   );
   if (made) return { importId: made.id, wasSentBefore: false };
-  const [known] = await rows<{ id: string }>(
-    work,
-    "select id from invoice_imports where seller_id = $1 and sha256 = $2",
-    [work.actor.organisationId, received.sha256],
-  );
+  const known = await InvoiceImport.findOne({
+    where: { sellerId: actor.organisationId, sha256 },
+    transaction,
+  });
   return known ? { importId: known.id, wasSentBefore: true } : null;
 }
 
@@ -119,15 +121,13 @@ type Imported = { readonly importId: string };
 const ONE_AT_A_TIME =
   "select pg_try_advisory_xact_lock(hashtextextended('invoice-import ' || $1, 0)) as mine";
 
-/** The file's state, held until the transaction ends; null where it is nobody's or somebody else's. */
-async function stateForChange(work: Work, importId: string): Promise<string | null> {
-  const [found] = await rows<{ state: string }>(
-    work,
-    "select state from invoice_imports where id = $1 and seller_id = $2 for update",
-    [importId, work.actor.organisationId],
-  );
-  return found?.state ?? null;
-}
+/** The file's row, held until the transaction ends; null where it is nobody's or somebody else's. */
+const importForChange = ({ transaction, actor }: Work, id: string): Promise<InvoiceImport | null> =>
+  InvoiceImport.findOne({
+    where: { id, sellerId: actor.organisationId },
+    transaction,
+    lock: transaction.LOCK.UPDATE,
+  });
 
 async function importFile(
   work: Work,
@@ -137,17 +137,15 @@ async function importFile(
   // Two files of one distributor at a time could each find the same invoice line missing.
   const [lock] = await rows<{ mine: boolean }>(work, ONE_AT_A_TIME, [work.actor.organisationId]);
   if (!lock?.mine) return refuse("importRunning");
-  const state = await stateForChange(work, importId);
-  if (state === null) return refuse("notFound");
-  if (state === "imported") return ok({ importId });
+  const kept = await importForChange(work, importId);
+  if (!kept) return refuse("notFound");
+  if (kept.state === "imported") return ok({ importId });
   const check = await checkFile(work, file);
   if (check.problemLineCount > 0) return refuse("importHasProblems", { count: check.problemLineCount });
   await writeLines(work, check.fresh);
-  await rows(
-    work,
-    `update invoice_imports set state = 'imported', imported_at = now(),
-       mapping = mapping || jsonb_build_object('result', $2::jsonb) where id = $1 returning id`,
-    [importId, JSON.stringify(resultOf(check))],
+  await kept.update(
+    { state: "imported", importedAt: fn("now"), mapping: { ...kept.mapping, result: resultOf(check) } },
+    { transaction: work.transaction },
   );
   return ok({ importId });
 }

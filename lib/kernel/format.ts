@@ -47,6 +47,10 @@ export const formatNumber = (
 ): string =>
   numberFormat(locale, { minimumFractionDigits: least, maximumFractionDigits: most }).format(value);
 
+/** A decimal kept as text, as people write it and never through a float: "20.000" gives "20", "5.500" gives "5.5", "5,5". */
+export const formatDecimal = (decimal: string, locale: Locale): string =>
+  numberFormat(locale, { maximumFractionDigits: 6 }).format(decimal as Intl.StringNumericLiteral);
+
 /** A ratio as a percentage: 0.125 gives "12.5%", "12,5 %". */
 export const formatPercent = (
   ratio: number,

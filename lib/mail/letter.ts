@@ -1,7 +1,9 @@
 import "server-only";
 import { createTranslator, type Messages as AnyMessages } from "use-intl/core";
+import { readAmountText, readableCreditValues } from "@/lib/credits/amount-text";
+import { explainedCredit } from "@/lib/credits/explained-shape";
 import { parseCalendarDay } from "@/lib/kernel/calendar-day";
-import { formatDay } from "@/lib/kernel/format";
+import { formatDay, formatMoney } from "@/lib/kernel/format";
 import { formatTag, type Locale } from "@/lib/kernel/locale";
 import { loadMessages } from "@/lib/web/messages";
 
@@ -17,10 +19,30 @@ function valuesOf(params: Readonly<Record<string, unknown>>, locale: Locale): Va
   for (const [name, value] of Object.entries(params)) {
     if (typeof value === "number") values[name] = value;
     if (typeof value !== "string") continue;
+    const amount = name === "amount" ? readAmountText(value) : null;
+    if (amount) {
+      values[name] = formatMoney(amount, locale);
+      continue;
+    }
     const day = parseCalendarDay(value.slice(0, 10));
     values[name] = day && /^\d{4}-\d\d-\d\d(T.*)?$/u.test(value) ? formatDay(day, locale) : value;
   }
   return values;
+}
+
+type Words = (key: string, values?: Values) => string;
+
+/** The chain of a credit as lines of text: what it comes to, then each step with its figure and where it is from. */
+function chainOf(sent: unknown, t: Words, locale: Locale): string {
+  const credit = explainedCredit.safeParse(sent).data;
+  if (!credit) return "";
+  const { amount = "" } = readableCreditValues({ amount: credit.total }, locale);
+  const lines = credit.steps.map(({ rule, input, result, source }) => {
+    const { figure = "" } = readableCreditValues({ figure: result }, locale);
+    const sentence = t(`creditSteps.${rule}`, readableCreditValues(input, locale));
+    return t(source ? "mails.chain.cited" : "mails.chain.step", { sentence, figure, source: source ?? "" });
+  });
+  return [t("mails.chain.title", { amount }), ...lines].join("\n");
 }
 
 type Page = {
@@ -48,7 +70,7 @@ export function letterFor(
   locale: Locale,
 ): Promise<Letter> {
   const messages: AnyMessages = loadMessages(locale);
-  const t: (key: string, values?: Values) => string = createTranslator({
+  const t: Words = createTranslator({
     locale: formatTag(locale),
     messages,
     onError: (error) => {
@@ -64,7 +86,8 @@ export function letterFor(
     outcomeWords: typeof params.outcome === "string" ? t(`ui.mark.claim.${params.outcome}`) : "",
   };
   const subject = t(`mails.${kind}.subject`, withWords);
-  const paragraphs = [t("mails.greeting", withWords), t(`mails.${kind}.body`, withWords), wanted].filter(
+  const body = t(`mails.${kind}.body`, withWords);
+  const paragraphs = [t("mails.greeting", withWords), body, wanted, chainOf(params.credit, t, locale)].filter(
     (text) => text !== "",
   );
   const href = typeof params.link === "string" ? params.link : null;

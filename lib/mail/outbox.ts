@@ -1,4 +1,5 @@
 import "server-only";
+import type { ExplainedCredit } from "@/lib/credits/explained";
 import { rows, type Work } from "@/lib/db/unit-of-work";
 
 /**
@@ -28,7 +29,29 @@ export type MailParams = {
     outcome: string;
     letter: string;
     contestUntil: string;
+    /** What is given, with its chain; null where nothing is. */
+    credit: ExplainedCredit | null;
   };
+  /** With the note as a PDF: the worker makes it from the frozen document. `amount` is such as "145.55 GBP". */
+  creditNoteIssued: {
+    link: string;
+    number: string;
+    noteId: string;
+    noteNumber: string;
+    distributor: string;
+    amount: string;
+  };
+  creditNoteCountered: MailParams["creditNoteIssued"] & { counterNumber: string; reason: string };
+  partCalledIn: {
+    link: string;
+    number: string;
+    returnNumber: string;
+    distributor: string;
+    sendTo: string;
+    instructions: string;
+    sendBy: string;
+  };
+  partExamined: { link: string; number: string; finding: string; note: string };
 };
 
 export type MailKind = keyof MailParams;

@@ -9,6 +9,7 @@ export type Outgoing = {
   readonly text: string;
   readonly html: string;
   readonly requestId: string | null;
+  readonly attachments?: readonly { filename: string; content: Uint8Array; contentType: string }[];
 };
 
 let transport: ReturnType<typeof createTransport> | undefined;
@@ -33,7 +34,15 @@ const oneLine = (text: string) =>
     .slice(0, 200);
 
 /** Hands one mail to the mail server. Throws where it is not taken. */
-export async function sendLetter({ id, to, subject, text, html, requestId }: Outgoing): Promise<void> {
+export async function sendLetter({
+  id,
+  to,
+  subject,
+  text,
+  html,
+  requestId,
+  attachments = [],
+}: Outgoing): Promise<void> {
   transport ??= open();
   await transport.sendMail({
     from: setting("MAIL_FROM"),
@@ -41,6 +50,7 @@ export async function sendLetter({ id, to, subject, text, html, requestId }: Out
     subject: oneLine(subject),
     text,
     html,
+    attachments: attachments.map(({ content, ...file }) => ({ ...file, content: Buffer.from(content) })),
     messageId: `<${id}@partproof>`,
     headers: requestId ? { "X-Request-Id": requestId } : {},
   });

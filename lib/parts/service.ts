@@ -4,13 +4,14 @@ import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { writeToAudit } from "@/lib/people/audit-service";
 import { allows } from "@/lib/people/rights-queries";
+import { Maker } from "@/models/maker";
+import { Part } from "@/models/part";
 import { listSuccessors } from "./catalogue-queries";
 import { isFamilyCode } from "./families";
 import type { ChangedPart, NewPart } from "./schema";
 import { leadsBack } from "./supersession";
 
 export type Kept = { readonly partNumber: string };
-type Found = { id: string };
 
 /** One catalogue is changed by one person at a time, so that no two changes close a ring of successors together. */
 const lockCatalogue = (work: Work) =>
@@ -18,13 +19,9 @@ const lockCatalogue = (work: Work) =>
     work.actor.organisationId,
   ]);
 
-const partIdOf = async (work: Work, partNumber: string): Promise<string | null> => {
-  const [part] = await rows<Found>(work, "select id from parts where seller_id = $1 and part_number = $2", [
-    work.actor.organisationId,
-    partNumber,
-  ]);
-  return part?.id ?? null;
-};
+/** A part of the actor's catalogue by its number. */
+const findPart = ({ transaction, actor }: Work, partNumber: string): Promise<Part | null> =>
+  Part.findOne({ where: { sellerId: actor.organisationId, partNumber }, transaction });
 
 type SuccessorRefusal = "supersedingUnknown" | "supersedingRing";
 
@@ -36,23 +33,19 @@ async function successorIdOf(
   if (supersededBy === "") return ok(null);
   const asked = { partNumber, successor: supersededBy };
   if (leadsBack(await listSuccessors(work), asked)) return refuse("supersedingRing", {}, "supersededBy");
-  const id = await partIdOf(work, supersededBy);
-  return id === null ? refuse("supersedingUnknown", { number: supersededBy }, "supersededBy") : ok(id);
+  const part = await findPart(work, supersededBy);
+  return part ? ok(part.id) : refuse("supersedingUnknown", { number: supersededBy }, "supersededBy");
 }
 
 /** The maker of that name in the actor's catalogue; one that is not there yet is entered. */
-async function makerIdFor(work: Work, name: string): Promise<string | null> {
-  const { organisationId } = work.actor;
+async function makerIdFor(work: Work, name: string): Promise<string> {
+  const { transaction, actor } = work;
   const sameName =
     "select id from makers where seller_id = $1 and lower(name) = lower($2) order by name limit 1";
-  const [known] = await rows<Found>(work, sameName, [organisationId, name]);
+  const [known] = await rows<{ id: string }>(work, sameName, [actor.organisationId, name]);
   if (known) return known.id;
-  const [made] = await rows<Found>(
-    work,
-    "insert into makers (seller_id, name) values ($1, $2) returning id",
-    [organisationId, name],
-  );
-  return made?.id ?? null;
+  const made = await Maker.create({ sellerId: actor.organisationId, name }, { transaction });
+  return made.id;
 }
 
 type AddRefusal = "notAllowed" | "familyUnknown" | "partNumberTaken" | SuccessorRefusal;
@@ -64,23 +57,21 @@ export const addPart = (actor: Actor, input: NewPart): Promise<Outcome<Kept, Add
     if (!isFamilyCode(input.family)) return refuse("familyUnknown", {}, "family");
     await lockCatalogue(work);
     const { partNumber, name, family } = input;
-    if (await partIdOf(work, partNumber))
+    if (await findPart(work, partNumber))
       return refuse("partNumberTaken", { number: partNumber }, "partNumber");
     const successor = await successorIdOf(work, input);
     if (!successor.ok) return successor;
-    await rows(
-      work,
-      `insert into parts (seller_id, maker_id, part_number, name, family, serial_tracked, superseded_by_id)
-       values ($1, $2, $3, $4, $5, $6, $7)`,
-      [
-        actor.organisationId,
-        await makerIdFor(work, input.maker),
+    await Part.create(
+      {
+        sellerId: actor.organisationId,
+        makerId: await makerIdFor(work, input.maker),
         partNumber,
         name,
         family,
-        input.tracking === "serial",
-        successor.value,
-      ],
+        serialTracked: input.tracking === "serial",
+        supersededById: successor.value,
+      },
+      { transaction: work.transaction },
     );
     const { maker, tracking, supersededBy } = input;
     await writeToAudit(work, "part.added", { partNumber, name, family, maker, tracking, supersededBy });
@@ -94,16 +85,14 @@ export const changePart = (actor: Actor, input: ChangedPart): Promise<Outcome<Ke
   unitOfWork(actor, async (work): Promise<Outcome<Kept, ChangeRefusal>> => {
     if (!(await allows(work, "keepCatalogue"))) return refuse("notAllowed");
     await lockCatalogue(work);
-    const id = await partIdOf(work, input.partNumber);
-    if (id === null) return refuse("notFound");
+    const part = await findPart(work, input.partNumber);
+    if (!part) return refuse("notFound");
     const successor = await successorIdOf(work, input);
     if (!successor.ok) return successor;
-    await rows(work, "update parts set name = $2, superseded_by_id = $3 where seller_id = $4 and id = $1", [
-      id,
-      input.name,
-      successor.value,
-      actor.organisationId,
-    ]);
+    await part.update(
+      { name: input.name, supersededById: successor.value },
+      { transaction: work.transaction },
+    );
     await writeToAudit(work, "part.changed", { ...input });
     return ok({ partNumber: input.partNumber });
   });

@@ -6,6 +6,9 @@ import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { publicUrl } from "@/lib/web/settings";
 import { newToken, sha256Of } from "@/lib/web/sha256";
+import { Membership } from "@/models/membership";
+import { MembershipRole } from "@/models/membership-role";
+import { Organisation as OrganisationRow } from "@/models/organisation";
 import { readAddress } from "./address";
 import { writeToAudit } from "./audit-service";
 import type { Invitation, MemberChange } from "./member-schema";
@@ -23,12 +26,8 @@ export type Member = { readonly personId: string };
 type House = Organisation & { readonly name: string };
 
 /** The actor's own organisation, for what it offers and how it signs. */
-export async function houseOf(work: Work): Promise<House | null> {
-  const [house] = await rows<House>(work, "select name, sells, buys from organisations where id = $1", [
-    work.actor.organisationId,
-  ]);
-  return house ?? null;
-}
+export const houseOf = ({ transaction, actor }: Work): Promise<House | null> =>
+  OrganisationRow.findByPk(actor.organisationId, { attributes: ["name", "sells", "buys"], transaction });
 
 /** A fresh link for this address, mailed to it in its owner's language; who invites never sees it. */
 async function mailInvitation(work: Work, email: string, organisation: string): Promise<void> {
@@ -52,12 +51,14 @@ async function mailInvitation(work: Work, email: string, organisation: string): 
 }
 
 /** Gives a member roles they do not have yet. */
-export const giveRoles = (work: Work, personId: string, roles: readonly Role[]): Promise<unknown> =>
-  rows(
-    work,
-    `insert into membership_roles (organisation_id, user_id, role) select $1, $2, unnest($3::text[])
-     on conflict do nothing`,
-    [work.actor.organisationId, personId, roles],
+export const giveRoles = (
+  { transaction, actor: { organisationId } }: Work,
+  userId: string,
+  roles: readonly Role[],
+): Promise<unknown> =>
+  MembershipRole.bulkCreate(
+    roles.map((role) => ({ organisationId, userId, role })),
+    { ignoreDuplicates: true, transaction },
   );
 
 type InviteRefusal =
@@ -93,11 +94,14 @@ export const invitePerson = (actor: Actor, input: Invitation): Promise<Outcome<M
 
 /** Letters to one person in the last day; the person's row is held, so that two requests at once count each other. */
 async function lettersToday(work: Work, personId: string): Promise<number> {
-  const { organisationId } = work.actor;
-  await rows(work, "select 1 from memberships where organisation_id = $1 and user_id = $2 for update", [
-    organisationId,
-    personId,
-  ]);
+  const { transaction, actor } = work;
+  const { organisationId } = actor;
+  await Membership.findOne({
+    attributes: ["userId"],
+    where: { organisationId, userId: personId },
+    lock: transaction.LOCK.UPDATE,
+    transaction,
+  });
   const [sent] = await rows<{ count: number }>(
     work,
     `select count(*)::integer as count from audit_log where organisation_id = $1 and detail ->> 'personId' = $2

@@ -1,7 +1,10 @@
 import "server-only";
+import { fn, Op } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
-import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
+import { unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { MembershipRole } from "@/models/membership-role";
+import { Membership } from "@/models/membership";
 import { writeToAudit } from "./audit-service";
 import { giveRoles, houseOf, type Member } from "./invite-service";
 import { hasAnotherKeeper, type Keeper } from "./keepers";
@@ -16,9 +19,14 @@ import { allows } from "./rights-queries";
  * here, and the second finds theirs gone: so one always stays.
  */
 async function keepsPeople(work: Work): Promise<boolean> {
-  await rows(work, "select user_id from memberships where organisation_id = $1 order by user_id for update", [
-    work.actor.organisationId,
-  ]);
+  const { transaction, actor } = work;
+  await Membership.findAll({
+    attributes: ["userId"],
+    where: { organisationId: actor.organisationId },
+    order: ["userId"],
+    lock: transaction.LOCK.UPDATE,
+    transaction,
+  });
   return allows(work, "keepPeople");
 }
 
@@ -55,11 +63,14 @@ export const changeRoles = (actor: Actor, input: RolesChange): Promise<Outcome<M
     if (isLastKeeper && !input.roles.includes("administrator"))
       return refuse("lastAdministrator", {}, "roles");
 
-    await rows(
-      work,
-      `delete from membership_roles where organisation_id = $1 and user_id = $2 and role <> all($3::text[])`,
-      [actor.organisationId, person.id, input.roles],
-    );
+    await MembershipRole.destroy({
+      where: {
+        organisationId: actor.organisationId,
+        userId: person.id,
+        role: { [Op.notIn]: input.roles },
+      },
+      transaction: work.transaction,
+    });
     await giveRoles(work, person.id, input.roles);
     await writeToAudit(work, "person.rolesChanged", {
       personId: person.id,
@@ -69,11 +80,10 @@ export const changeRoles = (actor: Actor, input: RolesChange): Promise<Outcome<M
     return ok({ personId: person.id });
   });
 
-const setDisabled = (work: Work, personId: string, isDisabled: boolean) =>
-  rows(
-    work,
-    `update memberships set disabled_at = case when $3 then now() end where organisation_id = $1 and user_id = $2`,
-    [work.actor.organisationId, personId, isDisabled],
+const setDisabled = ({ transaction, actor }: Work, personId: string, isDisabled: boolean) =>
+  Membership.update(
+    { disabledAt: isDisabled ? fn("now") : null },
+    { where: { organisationId: actor.organisationId, userId: personId }, transaction },
   );
 
 type OffRefusal = "notAllowed" | "notFound" | "notYourself" | "lastAdministrator";

@@ -40,6 +40,28 @@ const lineOf = ({ requestId, userId, organisationId }: Actor, startedAt: number)
   durationMs: Math.round(performance.now() - startedAt),
 });
 
+/** Does what a person asked for and says in the log that it was done, or why not. */
+export async function told<T, Code extends string>(
+  actor: Actor,
+  verb: string,
+  act: () => Promise<Outcome<T, Code>>,
+): Promise<Outcome<T, Code>> {
+  const startedAt = performance.now();
+  try {
+    const outcome = await act();
+    log.info({ ...lineOf(actor, startedAt), verb, refused: outcome.ok ? undefined : outcome.code });
+    return outcome;
+  } catch (fault) {
+    log.error({
+      ...lineOf(actor, startedAt),
+      event: "fault",
+      verb,
+      fault: fault instanceof Error ? fault.stack : String(fault),
+    });
+    throw fault;
+  }
+}
+
 /** Every server action is one call of this: origin, session, shape, the domain's verb, the wording. */
 export function action<Shape extends z.ZodType, T>(
   shape: Shape,
@@ -60,30 +82,20 @@ export function action<Shape extends z.ZodType, T>(
       const t: Sentences = await getTranslations({ locale: actor.locale, namespace: "forms" });
       return { ok: false, fields: fieldSentences(input.error, t), typed };
     }
-    const startedAt = performance.now();
+    let outcome: Outcome<T, RefusalCode>;
     try {
-      const outcome = await verb(actor, input.data);
-      log.info({
-        ...lineOf(actor, startedAt),
-        verb: verb.name,
-        refused: outcome.ok ? undefined : outcome.code,
-      });
-      if (!outcome.ok) {
-        const message = await wordingFor(outcome, actor.locale);
-        return outcome.field
-          ? { ok: false, fields: { [outcome.field]: message }, typed }
-          : { ok: false, message, fields: {}, typed };
-      }
-      if (toPath) revalidatePath(toPath(outcome.value));
-      return outcome;
-    } catch (fault) {
-      log.error({
-        ...lineOf(actor, startedAt),
-        event: "fault",
-        fault: fault instanceof Error ? fault.stack : String(fault),
-      });
+      outcome = await told(actor, verb.name, () => verb(actor, input.data));
+    } catch {
       return { ok: false, message: problems("fault", { id: actor.requestId }), fields: {}, typed };
     }
+    if (!outcome.ok) {
+      const message = await wordingFor(outcome, actor.locale);
+      return outcome.field
+        ? { ok: false, fields: { [outcome.field]: message }, typed }
+        : { ok: false, message, fields: {}, typed };
+    }
+    if (toPath) revalidatePath(toPath(outcome.value));
+    return outcome;
   };
 }
 

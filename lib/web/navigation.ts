@@ -8,10 +8,16 @@ export type Place = { readonly key: keyof typeof navigation; readonly href: Rout
 export const PLACES: readonly Place[] = [
   { key: "startClaim", href: "/claims/new", right: "startClaim" },
   { key: "workshopToday", href: "/workshop-today", right: "seeOwnClaims" },
+  { key: "goodsIn", href: "/goods-in", right: "receiveParts" },
   { key: "toJudge", href: "/judging", right: "seeReceivedClaims" },
+  { key: "lifeCurves", href: "/life-curves", right: "seeLifeCurves" },
+  { key: "credits", href: "/credits", right: "issueCredits" },
+  { key: "creditNotes", href: "/credit-notes", right: "seeCreditNotes" },
+  { key: "dayBook", href: "/day-book", right: "seeDayBook" },
   { key: "invoiceLines", href: "/invoice-lines", right: "importInvoiceLines" },
   { key: "catalogue", href: "/catalogue", right: "keepCatalogue" },
   { key: "accounts", href: "/accounts", right: "keepCatalogue" },
+  { key: "installers", href: "/installers", right: "keepInstallers" },
   { key: "ruleBook", href: "/rule-book", right: "seeRuleBook" },
   { key: "people", href: "/people", right: "keepPeople" },
 ];

@@ -9,7 +9,8 @@ import { log } from "./log";
 import { isFromOurPages } from "./origin";
 import { problemResponse, type FieldProblem } from "./problem";
 import { sha256Of } from "./sha256";
-import { currentSession, requestIdOf, type Session } from "./session";
+import { requestIdOf } from "./request-id";
+import { currentSession, type Session } from "./session";
 import { wordingFor, type RefusalCode } from "./wording";
 
 const STATUS: Partial<Record<RefusalCode, number>> = {
@@ -182,11 +183,12 @@ export function route<Params, Body>(
 ): Route<Params> {
   return async (request, context) => {
     const started = performance.now();
-    const requestId = requestIdOf(request.headers);
+    let requestId = requestIdOf(request.headers);
     let session: Session | null = null;
     let response: Response;
     try {
       session = await currentSession();
+      requestId = session?.actor.requestId ?? requestId;
       response = session
         ? await serve(options, handler, { session, request, params: await context.params })
         : await refusal("signedOut", 401, { locale: "en", requestId });
@@ -201,7 +203,7 @@ export function route<Params, Body>(
     }
     log.info({
       event: "request",
-      requestId: session?.actor.requestId ?? requestId,
+      requestId,
       route: options.name,
       method: request.method,
       status: response.status,

@@ -6,9 +6,10 @@ import { cache } from "react";
 import type { Actor } from "@/lib/access/actor";
 import { hasRight, type Organisation, type Right } from "@/lib/access/rights";
 import { isRole } from "@/lib/access/roles";
-import { beforeSignIn, newRequestId } from "@/lib/db/unit-of-work";
+import { beforeSignIn } from "@/lib/db/unit-of-work";
 import { isLocale } from "@/lib/kernel/locale";
 import { SESSION_COOKIE } from "./cookie";
+import { requestIdOf } from "./request-id";
 import { setting } from "./settings";
 
 /** A person at work: who, for which organisation, and how they like to see it. */
@@ -39,12 +40,6 @@ type ContextRow = {
   buys: boolean;
   time_zone: string;
   currency: string;
-};
-
-/** The id every line of the log, the audit row and the mail of this request carry. */
-export const requestIdOf = (incoming: Headers): string => {
-  const given = incoming.get("x-request-id");
-  return given && /^[\w-]{8,64}$/.test(given) ? given : newRequestId();
 };
 
 const present = (id: string, row: ContextRow, requestId: string): Session => ({

@@ -21,6 +21,11 @@ const COLUMN: Readonly<Record<string, string>> = {
   timeline_entries: "detail = '[]'",
   claim_messages: "body = 'Other'",
   revision_evidence: "revision_id = gen_random_uuid()",
+  credit_notes: "number = 'Other'",
+  credit_note_lines: "net_minor = 1",
+  credit_allocations: "reference = 'Other'",
+  ledger_entries: "entry_on = '2020-01-01'",
+  ledger_postings: "amount_minor = 1",
   evidence_files: "sha256 = repeat('0', 64)",
 };
 

@@ -1,63 +1,106 @@
-import { beforeAll, describe, expect, it } from "vitest";
-import { PassThrough } from "node:stream";
-import { fileClaim } from "@/lib/claims/sending/service";
-import { askWorkshop, takeClaim } from "@/lib/claims/judging/service";
-import { logTo } from "@/lib/web/log";
-import { actorAt } from "../support/actor";
+import "../support/heard-log";
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { z } from "zod";
+import { heardLines, heardText, type HeardLine } from "../support/heard-log";
 import { adminQuery } from "../support/database";
-import { draftReady, excuseMissingRows } from "./draft-ready";
-import { twoShops, workerOf } from "./shops";
+import { runTask } from "../support/worker-round";
+import type { Asked } from "./trace-requests";
 
-let world: Awaited<ReturnType<typeof twoShops>>;
+const { openOffice, sampleRequests } = await import("./trace-requests");
+const { sendMails } = await import("@/lib/jobs/tasks/send-mails");
+
+const ROUNDS = 25;
+const mailShape = z.object({ text: z.string(), headers: z.record(z.string(), z.string()) });
+
+type Mail = z.infer<typeof mailShape>;
+let office: Awaited<ReturnType<typeof openOffice>>;
+let sample: Asked[] = [];
+let mails: Mail[] = [];
+let audited: { request_id: string; actor_id: string; organisation_id: string }[] = [];
+let waiting: { id: string; request_id: string; sent: boolean; params: Record<string, unknown> }[] = [];
+
+const caught = async (): Promise<Mail[]> => {
+  const answer = await fetch(`${process.env["MAILBOX_URL"]}/api/mails`);
+  return z.object({ mails: z.array(mailShape) }).parse(await answer.json()).mails;
+};
+
 beforeAll(async () => {
-  world = await twoShops();
-});
+  office = await openOffice();
+  sample = await sampleRequests(office, ROUNDS);
+  await runTask(sendMails, ROUNDS);
+  mails = await caught();
+  audited = await adminQuery("select request_id, actor_id, organisation_id from audit_log");
+  waiting = await adminQuery("select id, request_id, sent_at is not null as sent, params from outbox");
+}, 120_000);
+afterAll(() => process.stdout.write(`trace: ${sample.length} requests, ${heardLines().length} lines\n`));
 
-describe("the id of a request", () => {
-  it("stands on the mail that the request asked for, so that a mail leads back to who caused it", async () => {
-    const [shop] = world.shops;
-    const unit = await world.sell(shop);
-    const claim = await draftReady(shop, { unitId: unit.id, partId: world.part.id });
-    const technician = workerOf(shop);
-    await excuseMissingRows(technician, claim.number);
-    await fileClaim(technician, { number: claim.number });
-    const assessor = actorAt(world.seller, world.assessor, ["assessor"]);
-    await takeClaim(assessor, { number: claim.number });
-    await askWorkshop(assessor, { number: claim.number, question: "Which air gap?", rowIds: [] });
-    const mails = await adminQuery(
-      "select kind, request_id from outbox where params->>'number' = $1 order by created_at",
-      [`${claim.number.slice(0, 4)}-${claim.number.slice(4)}`],
+const linesOf = (id: string, ...events: string[]): HeardLine[] =>
+  heardLines().filter(({ requestId, event }) => requestId === id && events.includes(String(event)));
+
+describe("200 requests by forms and by the API, with all they left behind", () => {
+  it("each say once in the log who asked, for whom, what and how long it took, in UTC", () => {
+    expect(new Set(sample.map(({ id }) => id)).size).toBe(200);
+    for (const { id, who, what } of sample) {
+      const lines = linesOf(id, "request", "action", "resetAsked");
+      expect(lines, what).toHaveLength(1);
+      const [line = {}] = lines;
+      expect(line["time"], what).toMatch(/^\d{4}-\d\d-\d\dT\d\d:\d\d:\d\d\.\d{3}Z$/u);
+      if (!who) continue;
+      expect(line["userId"], what).toBe(who.person.id);
+      expect(line["organisationId"], what).toBe(who.organisation.id);
+      expect(line["refused"], what).toBeUndefined();
+      expect(String(line["route"] ?? line["verb"]), what).toMatch(/\w{4}/u);
+      expect(line["durationMs"], what).toBeGreaterThanOrEqual(0);
+    }
+  });
+
+  it("are named by every row of the audit, with the same person and organisation as in the log", () => {
+    const wanted = sample.filter(({ isAudited }) => isAudited);
+    expect(audited.map(({ request_id }) => request_id).toSorted()).toEqual(
+      wanted.map(({ id }) => id).toSorted(),
     );
-    const asked = mails.filter(({ kind }) => kind === "queryAsked");
-    expect(asked.length).toBeGreaterThan(0);
-    expect(new Set(asked.map(({ request_id }) => request_id))).toEqual(new Set([assessor.requestId]));
-  });
-});
-
-describe("a line of the log", () => {
-  const linesOf = (event: Record<string, unknown>): string[] => {
-    const out = new PassThrough();
-    const told = logTo(out);
-    // Tests are quiet unless somebody listens.
-    told.level = "info";
-    told.warn(event);
-    return String(out.read()).split("\n").filter(Boolean);
-  };
-  const linesFor = (typed: string): string[] => linesOf({ typed });
-
-  it("is in UTC and says its level; what is secret is not in it", () => {
-    const [line = ""] = linesOf({ password: "cedar-1", session: { token: "amber-2", cookie: "flint-3" } });
-    expect(JSON.parse(line)).toMatchObject({ level: "warn", time: expect.stringMatching(/Z$/u) });
-    expect(line).not.toMatch(/cedar|amber|flint/u);
+    for (const { request_id, actor_id, organisation_id } of audited) {
+      const [line] = linesOf(request_id, "action");
+      expect([line?.["userId"], line?.["organisationId"]]).toEqual([actor_id, organisation_id]);
+    }
   });
 
-  it.each(['x\n{"level":"error"}', "x\r\nforged", "\u001b[31mred", "\u2028next", 'x"}\n{"a":"'])(
-    "stays one line whatever was typed: %j",
-    (typed) => {
-      const lines = linesFor(typed);
-      expect(lines).toHaveLength(1);
-      expect(JSON.parse(lines[0] ?? "")).toMatchObject({ typed });
-      expect(lines[0]).not.toContain("\u001b");
-    },
-  );
+  it("are named by every mail: in the outbox, in the worker's log and in the mail that arrived", () => {
+    const wanted = sample.filter(({ isMailed }) => isMailed).map(({ id }) => id);
+    expect(new Set(waiting.map(({ request_id }) => request_id))).toEqual(new Set(wanted));
+    expect(waiting.filter(({ sent }) => !sent)).toEqual([]);
+    for (const { id, request_id } of waiting) {
+      expect(linesOf(request_id, "mailSent").filter(({ mail }) => mail === id)).toHaveLength(1);
+      const arrived = mails.filter(({ headers }) => headers["message-id"] === `<${id}@partproof>`);
+      expect(arrived.map(({ headers }) => headers["x-request-id"])).toEqual([request_id]);
+    }
+  });
+
+  it("leave no line without a request to go back to", () => {
+    const ids = new Set(sample.map(({ id }) => id));
+    expect(heardLines().filter(({ requestId }) => !ids.has(String(requestId)))).toEqual([]);
+  });
+
+  it("tell the log no secret, no token, no cookie, no address, and nothing anybody wrote", () => {
+    const text = heardText();
+    const links = waiting.map(
+      ({ params }) =>
+        String(params["link"] ?? "")
+          .split("/")
+          .at(-1) ?? "",
+    );
+    const tokens = links.filter((end) => end.length > 30);
+    expect(tokens.length).toBeGreaterThanOrEqual(2 * ROUNDS);
+    const settings = Object.entries(process.env).flatMap(([name, value = ""]) =>
+      /SECRET|PASSWORD|DATABASE_URL|ENCRYPTION|ACCESS_KEY/u.test(name) ? [value] : [],
+    );
+    expect(settings.length).toBeGreaterThan(6);
+    const canaries = [
+      ...tokens,
+      ...settings,
+      ...Object.values(office.sessions),
+      ...["@example.test", "Kim Lorne", "Which air gap", "Seen on the bench", "partproof.session", "eyJ"],
+    ];
+    expect(canaries.filter((canary) => canary !== "" && text.includes(canary))).toEqual([]);
+  });
 });

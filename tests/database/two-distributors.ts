@@ -20,6 +20,8 @@ import {
   type Between,
 } from "../support/build";
 import { asRole } from "../support/database";
+import { fillCredit } from "./fill-credit";
+import { fillReturn } from "./fill-return";
 
 export type Member = { readonly id: string; readonly person: { readonly id: string; readonly name: string } };
 type Distributor = Member & { readonly part: { readonly id: string } };
@@ -56,6 +58,14 @@ async function fillOrganisation({ id, person }: Member) {
     organisation_id: id,
     token_hash: sha256(),
     expires_at: "2036-01-01T00:00:00Z",
+  });
+  await insertRow("alerts", {
+    organisation_id: id,
+    user_id: person.id,
+    kind: "claimFiled",
+    claim_number: "41073826",
+    dedupe_key: unlike("key"),
+    params: "{}",
   });
   await buildSite({ id });
   await asRole("web", { actor: person.id, org: id }, "select guarded.append_audit('signedIn', '{}')");
@@ -141,6 +151,9 @@ async function fillClaim(between: Between, assessor: { readonly id: string }, pa
     reason: "The lining came off.",
     coverage: "{}",
   });
+  const given = { claim, line, verdict: { id: String(verdict["id"]) }, person: assessor };
+  await fillCredit(between, given);
+  await fillReturn({ claim, line, seller, workshop: shop, person: assessor });
   const author = { author_id: person.id, author_name: "Robin", author_organisation_id: shop.id };
   await insertRow("claim_messages", {
     ...ofClaim,

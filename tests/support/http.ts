@@ -29,10 +29,13 @@ vi.doMock("next-intl/server", async () => {
     throw fault;
   };
   return {
-    getTranslations: ({ locale, namespace }: { locale: Locale; namespace: string }) =>
-      Promise.resolve(
+    getTranslations: (asked: string | { locale: Locale; namespace: string }) => {
+      const { locale, namespace } =
+        typeof asked === "string" ? { locale: "en" as const, namespace: asked } : asked;
+      return Promise.resolve(
         createTranslator({ locale, namespace, messages: loadMessages(locale), onError: throwIt }),
-      ),
+      );
+    },
   };
 });
 
@@ -98,6 +101,16 @@ async function cookieFor(session: string): Promise<string> {
   const secret = process.env["NEXTAUTH_SECRET"] ?? "";
   const token = await encode({ token: { sid: session }, secret, maxAge: 3600 });
   return `partproof.session=${token}`;
+}
+
+/** Does something as part of a request with these headers: what a form action sees of it. */
+export async function inRequest<T>(
+  { session, headers }: Omit<Ask, "body">,
+  act: () => Promise<T>,
+): Promise<T> {
+  const sent = new Headers(headers ?? FROM_OUR_PAGES());
+  if (session !== undefined) sent.set("cookie", await cookieFor(session));
+  return asking.run(new Request(here(), { method: "POST", headers: sent }), act);
 }
 
 /** Sends a request to the route that has this address, as the framework would. Throws where there is none. */

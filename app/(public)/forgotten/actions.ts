@@ -9,7 +9,7 @@ import { readAddress } from "@/lib/people/address";
 import { addressOf } from "@/lib/web/address";
 import { formValues } from "@/lib/web/form-values";
 import { isFromOurPages } from "@/lib/web/origin";
-import { requestIdOf } from "@/lib/web/session";
+import { requestIdOf } from "@/lib/web/request-id";
 
 /** Asks for a link. What is no address is said; whether an address has an account never is. */
 export async function askForResetAction(_previous: unknown, form: FormData): Promise<ActionResult> {

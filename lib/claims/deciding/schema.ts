@@ -35,7 +35,8 @@ export const decideInput = z.strictObject({
     )
     .refine((lines) => lines.length > 0),
   letter: z.string().trim().min(1, "missing").max(4000, "tooLong"),
-  returnWaivedReason: z.string().trim().min(1, "missing").max(1000, "tooLong"),
+  /** Why no finding is needed; empty where every part was examined. */
+  returnWaivedReason: z.string().trim().max(1000, "tooLong").default(""),
 });
 
 export type DecideInput = z.infer<typeof decideInput>;

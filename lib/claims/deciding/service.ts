@@ -1,8 +1,11 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import type { Credit } from "@/lib/credits/credit";
+import { frozenText } from "@/lib/credits/frozen-credit-shape";
 import { rows, type Work } from "@/lib/db/unit-of-work";
 import { addDays } from "@/lib/kernel/calendar-day";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { creditInMail } from "@/lib/credits/explained";
 import { mailClaimPeople } from "@/lib/mail/outbox";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
@@ -13,7 +16,10 @@ import { todayOf } from "../judging/service";
 import { moveClaim } from "../moves/service";
 import { printClaimNumber } from "../number";
 import { claimPath } from "../paths";
+import type { ReturnState } from "../lifecycle";
 import { creditedShare, outcomeOfLines, REASONS, type Attribution } from "../verdict";
+import { creditOfVerdict, setCreditStates } from "./credit-service";
+import { checkReturns, restsOnNoFinding } from "./finding-waits";
 import type { DecideInput } from "./schema";
 
 type LineRefusal =
@@ -22,9 +28,11 @@ type LineRefusal =
   | "upheldNotWhole"
   | "partNotShared"
   | "reasonOfOtherOutcome"
-  | "linesIncomplete";
+  | "linesIncomplete"
+  | "findingAwaited"
+  | "returnReasonMissing";
 type Seen = { facts: ClaimFacts; sha256: string };
-type LineIds = { id: string; lineNumber: number };
+type LineIds = { id: string; lineNumber: number; returnState: ReturnState };
 
 const attributionOf = (shares: DecideInput["lines"][number]["shares"]): Attribution =>
   Object.fromEntries(Object.entries(shares).filter(([, share]) => share !== ""));
@@ -41,8 +49,12 @@ function checkLines(input: DecideInput, lines: readonly LineIds[]): Outcome<true
     if (!allowed.includes(line.reasonCode))
       return refuse("reasonOfOtherOutcome", {}, `lines.${index}.reasonCode`);
   }
-  return ok(true);
+  return checkReturns(lines, input.returnWaivedReason);
 }
+
+/** Why a line was decided without a finding; null where its part was examined. */
+const waivedFor = ({ returnWaivedReason }: DecideInput, line: LineIds | undefined): string | null =>
+  line && restsOnNoFinding(line.returnState) ? returnWaivedReason : null;
 
 async function findSeen(work: Work, claim: Claim): Promise<Seen> {
   const [revision] = await rows<{ facts: unknown; sha256: string }>(
@@ -65,51 +77,90 @@ async function coverLine(
 }
 
 type Given = { input: DecideInput; lines: readonly LineIds[]; seen: Seen };
-type Written = { verdictId: string; contestDays: number };
+type Written = { verdictId: string; contestDays: number; credit: Credit };
+type AnsweredLine = DecideInput["lines"][number] &
+  CoveredLine & { lineNumber: number; attribution: Attribution; waived: string | null };
 
-/** The verdict with its lines: what was seen, what rule, what the cover was, word for word and for good. */
-async function writeVerdict(work: Work, claim: Claim, { input, lines, seen }: Given): Promise<Written> {
-  const parties = [claim.sellerId, claim.workshopId] as const;
+async function coverLines(work: Work, claim: Claim, { input, lines, seen }: Given): Promise<AnsweredLine[]> {
+  const answered: AnsweredLine[] = [];
+  for (const line of input.lines) {
+    const decided = lines.find(({ id }) => id === line.lineId);
+    const lineNumber = decided?.lineNumber ?? 0;
+    const cover = await coverLine(work, claim, { facts: seen.facts, lineNumber });
+    const attribution = attributionOf(line.shares);
+    answered.push({ ...line, ...cover, lineNumber, attribution, waived: waivedFor(input, decided) });
+  }
+  return answered;
+}
+
+async function insertVerdict(work: Work, claim: Claim, given: Given & { credit: Credit }): Promise<string> {
+  const { input, seen, credit } = given;
   const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
   const [verdict] = await rows<{ id: string }>(
     work,
-    `insert into verdicts (claim_id, seller_id, workshop_id, revision, revision_sha256, outcome, letter, decided_by_id, reverses_id)
+    `insert into verdicts (claim_id, seller_id, workshop_id, revision, revision_sha256, outcome, letter, decided_by_id, reverses_id,
+       credit, credit_net_minor, credit_total_minor)
      values ($1, $2, $3, $4, $5, $6, $7, $8,
-       (select v.id from verdicts v where v.claim_id = $1 order by v.decided_at desc limit 1)) returning id`,
-    [claim.id, ...parties, input.revision, seen.sha256, outcome, input.letter, work.actor.userId],
+       (select v.id from verdicts v where v.claim_id = $1 order by v.decided_at desc limit 1), $9, $10, $11) returning id`,
+    [
+      claim.id,
+      claim.sellerId,
+      claim.workshopId,
+      input.revision,
+      seen.sha256,
+      outcome,
+      input.letter,
+      work.actor.userId,
+      frozenText(credit),
+      String(credit.netMinor),
+      String(credit.totalMinor),
+    ],
   );
+  if (!verdict) throw new Error(`the verdict on claim ${claim.number} was not kept`);
+  return verdict.id;
+}
+
+/** The verdict with its lines: what was seen, what rule, what cover and credit were, word for word and for good. */
+async function writeVerdict(work: Work, claim: Claim, given: Given): Promise<Written> {
+  const answered = await coverLines(work, claim, given);
+  const toCredit = { facts: given.seen.facts, lines: answered, on: todayOf(work.actor) };
+  const credit = await creditOfVerdict(work, claim, toCredit);
+  const verdictId = await insertVerdict(work, claim, { ...given, credit });
   let contestDays = 0;
-  for (const line of input.lines) {
-    const lineNumber = lines.find(({ id }) => id === line.lineId)?.lineNumber ?? 0;
-    const { coverage, terms } = await coverLine(work, claim, { facts: seen.facts, lineNumber });
-    contestDays = Math.max(contestDays, terms?.body.contestDays ?? DAYS_TO_CONTEST);
-    const attribution = JSON.stringify(attributionOf(line.shares));
-    await rows(
-      work,
-      `insert into verdict_lines (verdict_id, line_id, seller_id, workshop_id, outcome, attribution, reason_code, reason,
-         rule_version_id, coverage, return_waived_reason)
-       values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11)`,
-      [
-        verdict?.id,
-        line.lineId,
-        ...parties,
-        line.outcome,
-        attribution,
-        line.reasonCode,
-        line.reason,
-        terms?.id ?? null,
-        JSON.stringify(coverage),
-        input.returnWaivedReason,
-      ],
-    );
-    await rows(
-      work,
-      `update claim_lines set verdict = $2, attribution = $3, return_state = 'notNeeded', return_waived_reason = $4,
-         credit_state = case when $2 = 'declined' then 'none' else 'due' end where id = $1 returning id`,
-      [line.lineId, line.outcome, attribution, input.returnWaivedReason],
-    );
+  for (const line of answered) {
+    contestDays = Math.max(contestDays, line.terms?.body.contestDays ?? DAYS_TO_CONTEST);
+    await writeLine(work, claim, { ...line, verdictId });
   }
-  return { verdictId: verdict?.id ?? "", contestDays };
+  await setCreditStates(work, claim, credit);
+  return { verdictId, contestDays, credit };
+}
+
+async function writeLine(work: Work, claim: Claim, line: AnsweredLine & { verdictId: string }) {
+  const attribution = JSON.stringify(line.attribution);
+  await rows(
+    work,
+    `insert into verdict_lines (verdict_id, line_id, seller_id, workshop_id, outcome, attribution, reason_code, reason,
+       rule_version_id, coverage, return_waived_reason)
+     values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11)`,
+    [
+      line.verdictId,
+      line.lineId,
+      claim.sellerId,
+      claim.workshopId,
+      line.outcome,
+      attribution,
+      line.reasonCode,
+      line.reason,
+      line.terms?.id ?? null,
+      JSON.stringify(line.coverage),
+      line.waived,
+    ],
+  );
+  await rows(
+    work,
+    `update claim_lines set verdict = $2, attribution = $3, return_waived_reason = $4 where id = $1 returning id`,
+    [line.lineId, line.outcome, attribution, line.waived],
+  );
 }
 
 /** Where no terms were in force there still is a time to object. */
@@ -127,14 +178,15 @@ export const decideClaim = (actor: Actor, input: DecideInput) =>
       if (claim.revision !== input.revision) return refuse("staleVersion");
       const lines = await rows<LineIds>(
         work,
-        `select id, line_number as "lineNumber" from claim_lines where claim_id = $1 order by line_number`,
+        `select id, line_number as "lineNumber", return_state as "returnState" from claim_lines
+         where claim_id = $1 order by line_number`,
         [claim.id],
       );
       const checked = checkLines(input, lines);
       if (!checked.ok) return checked;
 
       const seen = await findSeen(work, claim);
-      const { verdictId, contestDays } = await writeVerdict(work, claim, { input, lines, seen });
+      const { verdictId, contestDays, credit } = await writeVerdict(work, claim, { input, lines, seen });
       const outcome = outcomeOfLines(input.lines.map((line) => line.outcome));
       const contestUntil = addDays(todayOf(actor), contestDays);
       await mailClaimPeople(
@@ -150,6 +202,7 @@ export const decideClaim = (actor: Actor, input: DecideInput) =>
             outcome,
             letter: input.letter,
             contestUntil,
+            credit: creditInMail(credit),
           },
         },
       );

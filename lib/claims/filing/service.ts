@@ -10,6 +10,7 @@ import { claimNumberFrom } from "@/lib/labels/check-digit";
 import { findSoldLine, findSoldUnit } from "@/lib/parts/queries";
 import { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
+import { ClaimLine } from "@/models/claim-line";
 import { changedDraft, emptyDraft, emptyLine, type ClaimDraft, type DraftLine } from "../draft";
 import { storedDraft, type DraftChange } from "../draft-shape";
 import { moveClaim, type Moved } from "../moves/service";
@@ -206,9 +207,10 @@ export const withdrawClaim = (actor: Actor, { number, reason }: { number: string
 
 /** A claim that ended without a verdict lets go of its units, so that they can be claimed again. */
 const releaseUnits = (work: Work, claimId: string): Promise<unknown> =>
-  rows(work, "update claim_lines set holds_unit = false where claim_id = $1 and holds_unit returning id", [
-    claimId,
-  ]);
+  ClaimLine.update(
+    { holdsUnit: false },
+    { where: { claimId, holdsUnit: true }, transaction: work.transaction },
+  );
 
 /**
  * Adds the other part of a pair to a draft ("add the other one"): a second line for a unit of the same distributor.

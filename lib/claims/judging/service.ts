@@ -7,6 +7,8 @@ import { mailClaimPeople } from "@/lib/mail/outbox";
 import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
 import { publicUrl } from "@/lib/web/settings";
 import type { Claim } from "@/models/claim";
+import { ClaimQuery } from "@/models/claim-query";
+import { clockStanding } from "../clock/distributor-clock";
 import { gaveTheVerdict } from "../lifecycle";
 import { claimForChange, moveClaim } from "../moves/service";
 import { printClaimNumber } from "../number";
@@ -120,11 +122,10 @@ export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
       on: todayOf(actor),
     });
     const lapsesOn = addDays(todayOf(actor), terms?.body.queryLapseDays ?? DAYS_TO_ANSWER);
-    await rows(
-      work,
-      `insert into claim_queries (claim_id, seller_id, workshop_id, round, items, question, asked_by_id)
-       values ($1, $2, $3, $4, $5, $6, $7)`,
-      [claim.id, claim.sellerId, claim.workshopId, round, JSON.stringify(wanted), question, actor.userId],
+    const { id: claimId, sellerId, workshopId } = claim;
+    await ClaimQuery.create(
+      { claimId, sellerId, workshopId, round, items: wanted, question, askedById: actor.userId },
+      { transaction: work.transaction },
     );
     await mailClaimPeople(
       work,
@@ -144,7 +145,7 @@ export const askWorkshop = (actor: Actor, { number, question, rowIds }: Ask) =>
       },
     );
     return ok({
-      changes: { clockStoppedAt: new Date(), queryLapsesOn: lapsesOn },
+      changes: { ...clockStanding(claim, new Date()), queryLapsesOn: lapsesOn },
       detail: { round, question, rowIds: wanted, answerBy: lapsesOn },
     });
   });

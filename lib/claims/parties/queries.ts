@@ -1,20 +1,14 @@
 import "server-only";
-import { rows, type Work } from "@/lib/db/unit-of-work";
+import type { Work } from "@/lib/db/unit-of-work";
+import { Organisation } from "@/models/organisation";
+
+const partyOf = ({ transaction }: Work, organisationId: string): Promise<Organisation | null> =>
+  Organisation.findByPk(organisationId, { attributes: ["name", "timeZone"], transaction });
 
 /** The short name of an organisation the actor belongs to or trades with. */
-export async function nameOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ name: string }>(work, "select name from organisations where id = $1", [
-    organisationId,
-  ]);
-  return found?.name ?? "";
-}
+export const nameOf = async (work: Work, organisationId: string): Promise<string> =>
+  (await partyOf(work, organisationId))?.name ?? "";
 
 /** The IANA time zone such an organisation works in. */
-export async function zoneOf(work: Work, organisationId: string): Promise<string> {
-  const [found] = await rows<{ zone: string }>(
-    work,
-    "select time_zone as zone from organisations where id = $1",
-    [organisationId],
-  );
-  return found?.zone ?? "UTC";
-}
+export const zoneOf = async (work: Work, organisationId: string): Promise<string> =>
+  (await partyOf(work, organisationId))?.timeZone ?? "UTC";

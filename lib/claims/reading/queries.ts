@@ -2,7 +2,7 @@ import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import type { Coverage } from "@/lib/coverage/coverage";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
-import { calendarDay } from "@/lib/kernel/calendar-day";
+import { calendarDay, dayInZone } from "@/lib/kernel/calendar-day";
 import { familyOf } from "@/lib/parts/families";
 import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
 import { coverageOfLine, lineToCover } from "../cover/queries";
@@ -110,5 +110,8 @@ export const findClaimSheet = (actor: Actor, number: string): Promise<SheetView 
   unitOfWork(actor, async (work) => {
     const sheet = await sheetRows(work, number);
     if (!sheet || !seesClaim(actor, sheet.claim)) return null;
-    return presentSheet(actor, sheet, await workOut(work, sheet));
+    return presentSheet(actor, sheet, {
+      ...(await workOut(work, sheet)),
+      todayOn: dayInZone(new Date(), actor.timeZone),
+    });
   });

@@ -1,7 +1,9 @@
 import "server-only";
 import { rows, type Work } from "@/lib/db/unit-of-work";
+import { calendarDay, type CalendarDay } from "@/lib/kernel/calendar-day";
 import { normaliseSerial } from "@/lib/labels/serial";
 import type { Claim } from "@/models/claim";
+import { Fitting } from "@/models/fitting";
 import type { ClaimDraft } from "../draft";
 import type { ClaimFacts, FactLine } from "../facts-shape";
 
@@ -42,48 +44,25 @@ async function keepInstaller(work: Work, name: string): Promise<string | null> {
   return made?.id ?? null;
 }
 
-type Fitting = {
-  unitId: string;
-  vehicleId: string | null;
-  position: string;
-  fittedOn: string;
-  removedOn: string | null;
-  installerId: string | null;
-};
+type Fitted = Pick<Fitting, "unitId" | "vehicleId" | "position" | "fittedOn" | "removedOn" | "installerId">;
 
 /** The unit's fitting in this workshop: the running one is corrected, otherwise a new one begins. */
-async function keepFitting(work: Work, sellerId: string, fitting: Fitting): Promise<string | null> {
-  const values = [
-    sellerId,
-    work.actor.organisationId,
-    fitting.unitId,
-    fitting.vehicleId,
-    fitting.position,
-    fitting.fittedOn,
-    fitting.removedOn,
-    fitting.installerId,
-  ];
-  const [corrected] = await rows<{ id: string }>(
-    work,
-    `update fittings set vehicle_id = $4, position = $5, fitted_on = $6, removed_on = coalesce($7, removed_on),
-       installer_id = coalesce($8, installer_id)
-     where id = (select id from fittings where seller_id = $1 and workshop_id = $2 and unit_id = $3
-       order by fitted_on desc limit 1) returning id`,
-    values,
-  );
-  if (corrected) return corrected.id;
-  const [made] = await rows<{ id: string }>(
-    work,
-    `insert into fittings (seller_id, workshop_id, unit_id, vehicle_id, position, fitted_on, removed_on, installer_id)
-     values ($1, $2, $3, $4, $5, $6, $7, $8) returning id`,
-    values,
-  );
-  return made?.id ?? null;
+async function keepFitting({ transaction, actor }: Work, sellerId: string, fitted: Fitted): Promise<void> {
+  const whose = { sellerId, workshopId: actor.organisationId, unitId: fitted.unitId };
+  const known = await Fitting.findOne({ where: whose, order: [["fittedOn", "DESC"]], transaction });
+  const removedOn = fitted.removedOn ?? known?.removedOn ?? null;
+  const installerId = fitted.installerId ?? known?.installerId ?? null;
+  const kept = { ...fitted, removedOn, installerId };
+  await (known
+    ? known.update(kept, { transaction })
+    : Fitting.create({ ...whose, ...kept }, { transaction }));
 }
 
 /** A removal before the fitting cannot be: the day is then left open for the distributor to ask about. */
-const removalOf = (line: FactLine, facts: ClaimFacts): string | null =>
-  facts.repairedOn && line.fittedOn && facts.repairedOn >= line.fittedOn ? facts.repairedOn : null;
+const removalOf = (line: FactLine, facts: ClaimFacts): CalendarDay | null =>
+  facts.repairedOn && line.fittedOn && facts.repairedOn >= line.fittedOn
+    ? calendarDay(facts.repairedOn)
+    : null;
 
 /**
  * Keeps what a claim tells about units in service: the vehicle, who fitted the part and when, and that the replacement's
@@ -95,7 +74,7 @@ export async function recordService(
   { facts, draft }: { facts: ClaimFacts; draft: ClaimDraft },
 ): Promise<void> {
   const vehicleId = await keepVehicle(work, facts);
-  await rows(work, "update claims set vehicle_id = $2 where id = $1 returning id", [claim.id, vehicleId]);
+  await claim.update({ vehicleId }, { transaction: work.transaction });
   for (const line of facts.lines) {
     const installerId = await keepInstaller(work, draft.lines[line.lineNumber - 1]?.installer ?? "");
     if (line.unit && line.fittedOn)
@@ -103,7 +82,7 @@ export async function recordService(
         unitId: line.unit.id,
         vehicleId,
         position: line.position,
-        fittedOn: line.fittedOn,
+        fittedOn: calendarDay(line.fittedOn),
         removedOn: removalOf(line, facts),
         installerId,
       });
@@ -112,7 +91,7 @@ export async function recordService(
         unitId: line.replacement.unitId,
         vehicleId,
         position: line.position,
-        fittedOn: line.replacement.fittedOn,
+        fittedOn: calendarDay(line.replacement.fittedOn),
         removedOn: null,
         installerId: null,
       });

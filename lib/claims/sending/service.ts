@@ -1,4 +1,5 @@
 import "server-only";
+import { fn } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
 import { rows, type Work } from "@/lib/db/unit-of-work";
 import { calendarDay } from "@/lib/kernel/calendar-day";
@@ -11,6 +12,10 @@ import { publicUrl } from "@/lib/web/settings";
 import { sha256Of } from "@/lib/web/sha256";
 import type { Claim } from "@/models/claim";
 import { ClaimDraft as DraftRow } from "@/models/claim-draft";
+import { ClaimLine } from "@/models/claim-line";
+import { ClaimQuery } from "@/models/claim-query";
+import { ClaimRevision } from "@/models/claim-revision";
+import { clockRunning, type DistributorClock } from "../clock/distributor-clock";
 import { storedDraft } from "../draft-shape";
 import { canonicalText, type ClaimFacts } from "../facts-shape";
 import { draftContext } from "../filing/queries";
@@ -47,18 +52,16 @@ async function sendRevision(
 async function writeRevision(work: Work, claim: Claim, facts: ClaimFacts) {
   const text = canonicalText(facts);
   const revision = claim.revision + 1;
-  const parties = [claim.id, claim.sellerId, claim.workshopId] as const;
-  const [made] = await rows<{ id: string }>(
-    work,
-    `insert into claim_revisions (claim_id, seller_id, workshop_id, revision, facts, sha256, sent_by_id)
-     values ($1, $2, $3, $4, $5, $6, $7) returning id`,
-    [...parties, revision, text, sha256Of(text), work.actor.userId],
+  const { id: claimId, sellerId, workshopId } = claim;
+  const made = await ClaimRevision.create(
+    { claimId, sellerId, workshopId, revision, facts, sha256: sha256Of(text), sentById: work.actor.userId },
+    { transaction: work.transaction },
   );
   await rows(
     work,
     `insert into revision_evidence (revision_id, evidence_id, seller_id, workshop_id)
      select $1, e.id, e.seller_id, e.workshop_id from evidence_files e where e.id = any ($2::uuid[]) and e.claim_id = $3`,
-    [made?.id, facts.evidence.map((file) => file.id), claim.id],
+    [made.id, facts.evidence.map((file) => file.id), claimId],
   );
   await rows(
     work,
@@ -67,7 +70,7 @@ async function writeRevision(work: Work, claim: Claim, facts: ClaimFacts) {
      select $1, $2, $3, $4, r.kind, r."rawText", r.unit, r."canonicalValue", r."temperatureCelsius", r.instrument, 'workshop'
      from jsonb_to_recordset($5::jsonb) as r (kind text, "rawText" text, unit text, "canonicalValue" numeric,
        "temperatureCelsius" numeric, instrument text)`,
-    [...parties, revision, JSON.stringify(facts.readings)],
+    [claimId, sellerId, workshopId, revision, JSON.stringify(facts.readings)],
   );
 }
 
@@ -125,10 +128,15 @@ export const fileClaim = (actor: Actor, { number }: { number: string }) =>
     });
   });
 
-const pausedMinutes = (claim: Claim, now: Date): number =>
-  claim.clockStoppedAt
-    ? Math.max(0, Math.round((now.getTime() - claim.clockStoppedAt.getTime()) / 60_000))
-    : 0;
+/** The clock after an answer: it runs again, unless a part that was called in is still with the workshop. */
+async function clockAfterAnswer(work: Work, claim: Claim, now: Date): Promise<DistributorClock> {
+  const awaited = await ClaimLine.findOne({
+    where: { claimId: claim.id, returnState: "awaited" },
+    transaction: work.transaction,
+  });
+  const running = clockRunning(claim, now);
+  return awaited ? { ...running, clockStoppedAt: now } : running;
+}
 
 /** Answers a query by sending the next revision; the distributor's clock runs again, later by as long as it stood. */
 export const answerQuery = (actor: Actor, { number }: { number: string }) =>
@@ -137,11 +145,9 @@ export const answerQuery = (actor: Actor, { number }: { number: string }) =>
     const sent = await sendRevision(claim, work, now);
     if (!sent.ok) return sent;
     const revision = claim.revision + 1;
-    const paused = pausedMinutes(claim, now);
-    await rows(
-      work,
-      "update claim_queries set answered_at = now(), answered_revision = $2 where claim_id = $1 and answered_at is null returning id",
-      [claim.id, revision],
+    await ClaimQuery.update(
+      { answeredAt: fn("now"), answeredRevision: revision },
+      { where: { claimId: claim.id, answeredAt: null }, transaction: work.transaction },
     );
     await flagDoubts(work, claim, sent.value);
     await mailClaimPeople(
@@ -163,10 +169,8 @@ export const answerQuery = (actor: Actor, { number }: { number: string }) =>
         ...changesOf(claim, sent.value, now),
         holderId: null,
         heldUntil: null,
-        clockStoppedAt: null,
-        clockStoppedMinutes: claim.clockStoppedMinutes + paused,
+        ...(await clockAfterAnswer(work, claim, now)),
         queryLapsesOn: null,
-        answerDueAt: claim.answerDueAt && new Date(claim.answerDueAt.getTime() + paused * 60_000),
       },
       detail: { revision },
     });

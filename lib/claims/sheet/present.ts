@@ -1,9 +1,13 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import type { Coverage } from "@/lib/coverage/coverage";
+import { thawedCredit } from "@/lib/credits/frozen-credit-shape";
+import { isBenchRow } from "@/lib/evidence/bench-rows";
+import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { currencyFrom } from "@/lib/kernel/currency";
 import { money, type Money } from "@/lib/kernel/money";
 import type { Limits } from "@/lib/rule-book/limits-shape";
+import { isContestOpen } from "../contesting/open";
 import { claimFacts, type ClaimFacts, type FactLine } from "../facts-shape";
 import { gaveTheVerdict, movesOpenTo } from "../lifecycle";
 import { printClaimNumber } from "../number";
@@ -25,6 +29,9 @@ export type WorkedOut = {
   readonly limits: Limits | null;
   readonly caseLine: CaseLine | null;
 };
+
+/** The day it is now where the reader works. */
+type Today = { readonly todayOn: CalendarDay };
 
 const amount = (minor: string, currency: string): Money => money(BigInt(minor), currencyFrom(currency));
 const iso = (at: Date | null): string | null => at?.toISOString() ?? null;
@@ -115,6 +122,7 @@ const presentVerdict = (verdict: SheetVerdict): VerdictView => ({
   outcome: verdict.outcome,
   letter: verdict.letter,
   decidedAt: verdict.decidedAt.toISOString(),
+  credit: thawedCredit(verdict.credit),
   lines: verdict.lines.map(presentVerdictLine),
 });
 
@@ -173,8 +181,20 @@ const presentRecord = (sheet: SheetRows, isSeller: boolean) => ({
   })),
 });
 
+/** The moves of the table; objecting and accepting only while the days of the verdict last. */
+function presentMoves(actor: Actor, claim: SheetClaim, todayOn: CalendarDay) {
+  const moves = movesOpenTo(actor, claim);
+  const isOpen = isContestOpen(claim, todayOn);
+  const canContest = moves.includes("contest") && isOpen;
+  return {
+    isContestOpen: isOpen,
+    moves: canContest ? moves : moves.filter((move) => move !== "contest"),
+    canAccept: canContest,
+  };
+}
+
 /** The sheet as one party may see it: the only way from rows to a page. */
-export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOut): SheetView {
+export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOut & Today): SheetView {
   const { claim } = sheet;
   const facts = factsOf(sheet);
   const isSeller = actor.organisationId === claim.sellerId;
@@ -187,7 +207,7 @@ export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOu
     state: claim.state,
     outcome: claim.outcome,
     side: isSeller ? "distributor" : "workshop",
-    moves: movesOpenTo(actor, claim),
+    ...presentMoves(actor, claim, workedOut.todayOn),
     ...presentHolder(claim, actor, isSeller),
     sellerName: claim.sellerName,
     workshopName: claim.workshopName,
@@ -213,11 +233,12 @@ export function presentSheet(actor: Actor, sheet: SheetRows, workedOut: WorkedOu
       ),
     ),
     rows: workedOut.rows,
-    otherFiles: files.filter((file) => !rowIds.has(file.rowId)),
+    otherFiles: files.filter((file) => !rowIds.has(file.rowId) && !isBenchRow(file.rowId)),
     limits: workedOut.limits,
     caseLine: workedOut.caseLine,
     ...presentRecord(sheet, isSeller),
     verdicts: sheet.verdicts.map(presentVerdict),
+    notes: sheet.notes,
     flags: sheet.flags.map(({ kind, lineNumber, detail }) => ({ kind, lineNumber, detail })),
   };
 }

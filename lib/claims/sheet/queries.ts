@@ -35,6 +35,7 @@ export type SheetClaim = {
   queryLapsesOn: CalendarDay | null;
   decidedById: string | null;
   contestUntil: CalendarDay | null;
+  contestWaivedAt: Date | null;
   createdAt: Date;
 };
 
@@ -84,8 +85,11 @@ export type SheetVerdict = {
   outcome: VerdictOutcome;
   letter: string;
   decidedAt: Date;
+  credit: unknown;
   lines: SheetVerdictLine[];
 };
+/** A credit note that was issued for the claim; one at most stands. */
+export type SheetNote = { number: string; sellerId: string; verdictId: string; isStanding: boolean };
 export type SheetEvidence = {
   id: string;
   rowId: string;
@@ -127,6 +131,7 @@ export type SheetRows = {
   revisions: SheetRevision[];
   queries: SheetQuery[];
   verdicts: SheetVerdict[];
+  notes: SheetNote[];
   evidence: SheetEvidence[];
   flags: SheetFlag[];
   messages: SheetMessage[];
@@ -142,7 +147,7 @@ const CLAIM = `
     c.held_until as "heldUntil", c.parked_with_id as "parkedWithId", pk.name as "parkedWithName",
     c.parked_question as "parkedQuestion", c.filed_at as "filedAt", c.answer_due_at as "answerDueAt",
     c.clock_stopped_at as "clockStoppedAt", c.query_lapses_on as "queryLapsesOn", c.decided_by_id as "decidedById",
-    c.contest_until as "contestUntil", c.created_at as "createdAt"
+    c.contest_until as "contestUntil", c.contest_waived_at as "contestWaivedAt", c.created_at as "createdAt"
   from claims c
     join organisations s on s.id = c.seller_id
     join organisations w on w.id = c.workshop_id
@@ -162,7 +167,7 @@ const REVISIONS = `select r.revision, r.facts, r.sha256, r.sent_at as "sentAt", 
 const QUERIES = `select round, items, question, asked_at as "askedAt", answered_at as "answeredAt",
   answered_revision as "answeredRevision" from claim_queries where claim_id = $1 order by round`;
 
-const VERDICTS = `select v.id, v.revision, v.outcome, v.letter, v.decided_at as "decidedAt",
+const VERDICTS = `select v.id, v.revision, v.outcome, v.letter, v.decided_at as "decidedAt", v.credit,
   (select json_agg(json_build_object('lineNumber', l.line_number, 'outcome', x.outcome, 'attribution', x.attribution,
      'reasonCode', x.reason_code, 'reason', x.reason, 'ruleNumber', b.rule_number, 'ruleTitle', b.title,
      'ruleValidFrom', b.valid_from, 'coverage', x.coverage, 'returnWaivedReason', x.return_waived_reason)
@@ -170,6 +175,10 @@ const VERDICTS = `select v.id, v.revision, v.outcome, v.letter, v.decided_at as 
    from verdict_lines x join claim_lines l on l.id = x.line_id
      left join rule_book_versions b on b.id = x.rule_version_id where x.verdict_id = v.id) as lines
   from verdicts v where v.claim_id = $1 order by v.decided_at desc`;
+
+const NOTES = `select n.number, n.seller_id as "sellerId", n.verdict_id as "verdictId",
+  not exists (select 1 from credit_notes x where x.counters_id = n.id) as "isStanding"
+  from credit_notes n where n.claim_id = $1 and n.kind = 'credit' order by n.issued_at desc`;
 
 const EVIDENCE = `select id, row_id as "rowId", kind, media_type as "mediaType", original_name as "originalName",
   size_bytes as "sizeBytes", sha256, view_state as "viewState", width_px as "widthPx", height_px as "heightPx", captured,
@@ -201,6 +210,7 @@ export async function sheetRows(work: Work, number: string): Promise<SheetRows |
     revisions: await of<SheetRevision>(REVISIONS),
     queries: await of<SheetQuery>(QUERIES),
     verdicts: await of<SheetVerdict>(VERDICTS),
+    notes: await of<SheetNote>(NOTES),
     evidence: await of<SheetEvidence>(EVIDENCE),
     flags: await of<SheetFlag>(FLAGS),
     messages: await of<SheetMessage>(MESSAGES),

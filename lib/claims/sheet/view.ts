@@ -1,4 +1,5 @@
 import type { Coverage } from "@/lib/coverage/coverage";
+import type { Credit } from "@/lib/credits/credit";
 import type { Money } from "@/lib/kernel/money";
 import type { ClaimFacts } from "../facts-shape";
 import type { ClaimMove, ClaimState, CreditState, ReturnState, VerdictOutcome } from "../lifecycle";
@@ -105,6 +106,8 @@ export type VerdictView = {
   readonly outcome: VerdictOutcome;
   readonly letter: string;
   readonly decidedAt: string;
+  /** What it gives in money, with its steps; null for a verdict from before credits were reckoned. */
+  readonly credit: Credit | null;
   readonly lines: readonly VerdictLineView[];
 };
 
@@ -160,6 +163,10 @@ export type SheetView = {
   readonly outcome: VerdictOutcome | null;
   readonly side: Side;
   readonly moves: readonly ClaimMove[];
+  /** Whether the workshop may still object to the verdict, whoever looks. */
+  readonly isContestOpen: boolean;
+  /** Whether this person may give up the days that are left to object. */
+  readonly canAccept: boolean;
   readonly canTakeOver: boolean;
   readonly sellerName: string;
   readonly workshopName: string;
@@ -195,6 +202,13 @@ export type SheetView = {
   }[];
   readonly queries: readonly QueryView[];
   readonly verdicts: readonly VerdictView[];
+  /** Credit notes issued for the claim, newest first. */
+  readonly notes: readonly {
+    readonly number: string;
+    readonly sellerId: string;
+    readonly verdictId: string;
+    readonly isStanding: boolean;
+  }[];
   readonly flags: readonly FlagView[];
   readonly messages: readonly MessageView[];
   readonly timeline: readonly EntryView[];

@@ -3,7 +3,9 @@ import { setTimeout } from "node:timers/promises";
 import type { Actor } from "@/lib/access/actor";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
+import { log } from "@/lib/web/log";
 import { hashPassword, passwordFits } from "@/lib/web/password";
+import { User } from "@/models/user";
 import { readAddress } from "../address";
 import { attemptKeys, beginAttempt, clearAttempts } from "../attempt-service";
 import { passwordFault, type PasswordChangeInput, type PasswordFault, type Preferences } from "../schema";
@@ -17,6 +19,8 @@ const ANSWER_AFTER_MS = 300;
 /** Mails a link for a new password, and no more than ten to one account in 15 minutes. Never says which it was. */
 export async function askForReset({ email, address, requestId }: LinkRequest): Promise<void> {
   const answerAt = setTimeout(ANSWER_AFTER_MS);
+  // Said before it is known whether there is an account, so that the log does not tell either.
+  log.info({ event: "resetAsked", requestId });
   if (await beginAttempt(attemptKeys(`reset:${readAddress(email)}`, `resetFrom:${address}`)))
     await requestReset(email, requestId);
   await answerAt;
@@ -28,13 +32,10 @@ export const savePreferences = (
   { locale, theme, density }: Preferences,
 ): Promise<Outcome<null, never>> =>
   unitOfWork(actor, async (work) => {
-    const kept = density === "byDevice" ? null : density;
-    await rows(work, "update users set locale = $1, theme = $2, density = $3 where id = $4", [
-      locale,
-      theme,
-      kept,
-      actor.userId,
-    ]);
+    await User.update(
+      { locale, theme, density: density === "byDevice" ? null : density },
+      { where: { id: actor.userId }, transaction: work.transaction },
+    );
     return ok(null);
   });
 

@@ -72,4 +72,17 @@ export const bodies: { readonly [Kind in RuleKind]: RuleBody<Kind> } = {
     answerWorkingDays: 5,
     priorityWeights: { safetyCritical: 50, batchUnderWatch: 30, timeLeft: 10, repeatFailure: 20, age: 1 },
   },
+  credit: {
+    rounding: "halfUp",
+    notePrefix: "LP-",
+    settledBy: {
+      part: "creditNote",
+      labour: "workshopInvoice",
+      diagnosis: "workshopInvoice",
+      consumables: "creditNote",
+      carriage: "outsideTax",
+    },
+    handling: { amountMinor: 4_50, reason: "Goods-in and test" },
+    currency: "GBP",
+  },
 };

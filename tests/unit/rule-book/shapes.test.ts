@@ -5,7 +5,7 @@ import { evidenceRowsFor } from "@/lib/rule-book/evidence-list-shape";
 import { RULE_SHAPES, ruleBody, type RuleBody, type RuleKind } from "@/lib/rule-book/shapes";
 import { bodies } from "./bodies";
 
-const kinds: readonly RuleKind[] = ["terms", "evidenceList", "limits", "serviceLevels"];
+const kinds: readonly RuleKind[] = ["terms", "evidenceList", "limits", "serviceLevels", "credit"];
 /** The messages of the first body that does not fit, or none. */
 const faults = (kind: RuleKind, body: unknown) =>
   RULE_SHAPES[kind].safeParse(body).error?.issues.map((issue) => issue.message) ?? [];

@@ -13,18 +13,36 @@ import { CLAIM_STATES, CREDIT_STATES, MOVES, RETURN_STATES, VERDICT_OUTCOMES } f
 import { JUDGING_VIEWS, WORKSHOP_VIEWS } from "@/lib/claims/lists/schema";
 import { DRAFT_STEPS } from "@/lib/claims/paths";
 import type { EvidenceFileView, Judgement, LineView, Side } from "@/lib/claims/sheet/view";
+import { ALERT_KINDS } from "@/lib/alerts/kinds";
 import { CAUSES, REASONS } from "@/lib/claims/verdict";
 import { COVERAGE_STEPS } from "@/lib/coverage/steps";
 import { REASONS as COVERAGE_REASONS } from "@/lib/coverage/reasons";
 import type { Coverage } from "@/lib/coverage/coverage";
+import { CREDIT_KINDS, SETTLEMENTS } from "@/lib/credits/credit-input";
+import { CREDIT_STEPS, NOT_GIVEN_REASONS } from "@/lib/credits/steps";
+import { ACCOUNTS, ALLOCATION_WAYS } from "@/lib/credits/ledger";
+import type { NoteDocument } from "@/lib/credits/note-document";
+import { TAX_CATEGORIES } from "@/lib/credits/tax";
+import type { Proof } from "@/lib/day-book/book/proof";
+import type { BookEntry } from "@/lib/day-book/book/running";
+import { ISSUE_REFUSALS, NOTE_VIEWS } from "@/lib/day-book/views";
 import { DEFAULT_EVIDENCE_LISTS } from "@/lib/evidence/default-lists";
 import type { ReadingRefusal } from "@/lib/evidence/reading";
 import { SCAN_WARNINGS } from "@/lib/labels/scan";
 import type { MailKind } from "@/lib/mail/outbox";
 import { FAMILY_LIST } from "@/lib/parts/families";
+import type { Grade, GradeReason } from "@/lib/reliability/batch-grade";
+import { CSV_COLUMNS } from "@/lib/reports/life-curves/csv";
+import { COUNTINGS, START_CHOICES } from "@/lib/reports/life-curves/schema";
+import { NO_WEIBULL, type Weibull } from "@/lib/reports/life-curves/view";
 import type { LinkPurpose } from "@/lib/people/account/view";
 import { PREFERRED_DENSITIES, PREFERRED_LANGUAGES, PREFERRED_THEMES } from "@/lib/people/schema";
 import type { PasswordFault } from "@/lib/people/schema";
+import { BENCH_PLANS } from "@/lib/returns/bench-plan";
+import { DANGER_SIGNS, DISPOSALS, FINDING_KINDS, PARCEL_CONDITIONS } from "@/lib/returns/kinds";
+import { PART_ENTRIES, SETTLING_MOVES } from "@/lib/returns/lifecycle";
+import { MATCH_REASONS } from "@/lib/returns/match";
+import { RETURN_NOTES } from "@/lib/returns/schema";
 import { PLACES } from "@/lib/web/navigation";
 
 type Dynamic = { readonly before: string; readonly members: readonly string[]; readonly after: string };
@@ -82,6 +100,10 @@ const MAILS = membersOf<MailKind>({
   claimLapsed: true,
   queryAnswered: true,
   claimDecided: true,
+  creditNoteIssued: true,
+  creditNoteCountered: true,
+  partCalledIn: true,
+  partExamined: true,
 });
 
 /** What the distributor alone is told; most of it is written by functions of the database. */
@@ -96,8 +118,49 @@ export const FLAG_KINDS = [
   "documentSeenBefore",
 ] as const;
 
+const LEDGER_KINDS = membersOf<BookEntry["kind"]>({
+  noteIssued: true,
+  noteCountered: true,
+  allocated: true,
+  allocationTakenBack: true,
+});
+const PROOFS = membersOf<Proof>({
+  notesDiffer: true,
+  openDiffers: true,
+  owedDiffers: true,
+  postingsDiffer: true,
+});
+const NOTE_KINDS = membersOf<NoteDocument["kind"]>({ credit: true, counter: true });
+
+const GRADES = membersOf<Grade>({ act: true, lookInto: true, quiet: true, notYetKnown: true });
+const GRADE_REASONS = membersOf<GradeReason>({
+  alone: true,
+  expectedLow: true,
+  tooYoung: true,
+  strong: true,
+  firstLook: true,
+  fewFailures: true,
+  raised: true,
+  within: true,
+});
+const WEIBULL_SAYS = membersOf<Extract<Weibull, { kind: "fit" }>["says"]>({
+  early: true,
+  steady: true,
+  wearing: true,
+  unclear: true,
+});
+
 /** Entries of the timeline that are no move. */
-const OTHER_ENTRIES = ["takenOver", "parked", "reminded"];
+const OTHER_ENTRIES = [
+  "takenOver",
+  "parked",
+  "reminded",
+  "accepted",
+  "noteIssued",
+  "noteCountered",
+  "noteAllocated",
+  "allocationTakenBack",
+];
 
 /** Each state of a claim as its mark says it: a decided one by its outcome. */
 const MARKED_STATES = [...CLAIM_STATES.filter((state) => state !== "decided"), ...VERDICT_OUTCOMES];
@@ -126,7 +189,15 @@ export const DYNAMIC_KEYS: readonly Dynamic[] = [
   each("ui.mark.credit.", [...keysOf(CREDIT_MARKS), ...CREDIT_STATES]),
   each("ui.mark.signal.", keysOf(SIGNAL_MARKS)),
   each("ui.mark.match.", keysOf(MATCH_MARKS)),
-  each("sheet.record.kinds.", [...keysOf(MOVES), ...OTHER_ENTRIES]),
+  each("ui.mark.signal.", GRADES),
+  each("lifeCurves.reasons.", GRADE_REASONS),
+  each("lifeCurves.weibull.says.", WEIBULL_SAYS),
+  each("lifeCurves.weibull.none.", NO_WEIBULL),
+  each("lifeCurves.switches.counts.", COUNTINGS),
+  each("lifeCurves.switches.starts.", START_CHOICES),
+  each("lifeCurves.counted.", COUNTINGS),
+  each("lifeCurves.csv.", CSV_COLUMNS),
+  each("sheet.record.kinds.", [...keysOf(MOVES), ...OTHER_ENTRIES, ...Object.values(PART_ENTRIES)]),
   each("sheet.flags.", FLAG_KINDS),
   each("sheet.line.positions.", POSITIONS),
   each("draft.line.positions.", POSITIONS),
@@ -143,9 +214,32 @@ export const DYNAMIC_KEYS: readonly Dynamic[] = [
   each("live.lists.workshop.", WORKSHOP_VIEWS),
   each("live.lists.empty.", SIDES),
   each("live.lists.columns.", SIDES),
+  each("alerts.kinds.", [...ALERT_KINDS, "other"]),
+  each("alerts.", ["allRead"]),
   each("coverage.answers.", [...ANSWERS, "outsideWithGoodwill"]),
   each("coverage.reasons.", keysOf(COVERAGE_REASONS)),
   each("steps.", keysOf(COVERAGE_STEPS)),
+  each("creditSteps.", keysOf(CREDIT_STEPS)),
+  each("creditSteps.kinds.", CREDIT_KINDS),
+  each("creditSteps.settledBy.", SETTLEMENTS),
+  each("creditSteps.notGiven.", NOT_GIVEN_REASONS),
+  each("dayBook.kinds.", LEDGER_KINDS),
+  each("dayBook.accounts.", ACCOUNTS),
+  each("dayBook.proof.fails.", PROOFS),
+  each("credits.issued.view.", NOTE_VIEWS),
+  each("credits.issued.nothing.", NOTE_VIEWS),
+  each("credits.allocations.hows.", ALLOCATION_WAYS),
+  each("credits.document.categories.", TAX_CATEGORIES),
+  ...["title", "total", "direction"].map((name) => each(`credits.document.${name}.`, NOTE_KINDS)),
+  each(
+    "credits.elsewhere.",
+    SETTLEMENTS.filter((settledBy) => settledBy !== "creditNote"),
+  ),
+  each(
+    "credits.invoiceUs.",
+    SETTLEMENTS.filter((settledBy) => settledBy !== "creditNote"),
+  ),
+  each("refusals.", ISSUE_REFUSALS),
   each("draft.steps.", DRAFT_STEPS),
   each("draft.titles.", DRAFT_STEPS),
   each("evidence.readingRefusals.", READING_REFUSALS),
@@ -180,4 +274,23 @@ export const DYNAMIC_KEYS: readonly Dynamic[] = [
     ".name",
   ),
   ...FAMILY_KEYS,
+  each("returns.findings.", FINDING_KINDS),
+  each("returns.disposals.", DISPOSALS),
+  each("returns.settle.moves.", SETTLING_MOVES),
+  each(
+    "returns.steps.",
+    Object.values(BENCH_PLANS).flatMap((plan) =>
+      plan.flatMap((step) => (step.does === "read" ? [] : [step.id])),
+    ),
+  ),
+  each("goodsIn.conditions.", PARCEL_CONDITIONS),
+  each("goodsIn.signs.", DANGER_SIGNS),
+  each("goodsIn.match.reasons.", MATCH_REASONS),
+  each("goodsIn.notes.", RETURN_NOTES),
+  each("goodsIn.columns.", ["due", "place"]),
+  ...["title", "none"].map((name) => each("goodsIn.", ["due", "toExamine"], `.${name}`)),
+  each(
+    "ruleBook.readings.",
+    FAMILY_LIST.flatMap(({ readings }) => readings.map(({ code }) => code)),
+  ),
 ];

@@ -9,7 +9,7 @@ import { isUnread } from "@/lib/claims/filing/problems";
 import { addLine, discardDraft, removeLine, saveDraft } from "@/lib/claims/filing/service";
 import { claimPath, draftStepPath, DRAFT_STEPS, isDraftStep } from "@/lib/claims/paths";
 import { answerQuery, fileClaim } from "@/lib/claims/sending/service";
-import { guardOrigin } from "@/lib/web/action";
+import { guardOrigin, told } from "@/lib/web/action";
 import { formValues } from "@/lib/web/form-values";
 import { requireActor } from "@/lib/web/session";
 
@@ -24,7 +24,7 @@ export async function saveStepAction(form: FormData): Promise<void> {
   if (!isDraftStep(step)) redirect("/workshop-today");
   const change = draftChange.safeParse(changeFromFields(formValues(form)));
   if (!change.success) redirect(`${draftStepPath({ number }, step)}?show=all`);
-  const saved = await saveDraft(actor, number, change.data);
+  const saved = await told(actor, "saveDraft", () => saveDraft(actor, number, change.data));
   if (!saved.ok) redirect(claimPath({ number }));
 
   const checked = await checkDraft(actor, number);
@@ -41,14 +41,14 @@ export async function sendAction(form: FormData): Promise<void> {
   await guardOrigin();
   const number = digitsOf(form);
   const send = form.get("as") === "answer" ? answerQuery : fileClaim;
-  const sent = await send(actor, { number });
+  const sent = await told(actor, send.name, () => send(actor, { number }));
   redirect(sent.ok ? `${claimPath({ number })}?sent=1` : `${draftStepPath({ number }, "check")}?show=all`);
 }
 
 export async function discardAction(form: FormData): Promise<void> {
   const actor = await requireActor();
   await guardOrigin();
-  await discardDraft(actor, { number: digitsOf(form) });
+  await told(actor, "discardDraft", () => discardDraft(actor, { number: digitsOf(form) }));
   redirect("/workshop-today");
 }
 
@@ -56,7 +56,7 @@ export async function addLineAction(form: FormData): Promise<void> {
   const actor = await requireActor();
   await guardOrigin();
   const number = digitsOf(form);
-  const added = await addLine(actor, number, String(form.get("unitId") ?? ""));
+  const added = await told(actor, "addLine", () => addLine(actor, number, String(form.get("unitId") ?? "")));
   redirect(
     added.ok
       ? draftStepPath({ number }, "part")
@@ -68,6 +68,6 @@ export async function removeLineAction(form: FormData): Promise<void> {
   const actor = await requireActor();
   await guardOrigin();
   const number = digitsOf(form);
-  await removeLine(actor, number, Number(form.get("place")));
+  await told(actor, "removeLine", () => removeLine(actor, number, Number(form.get("place"))));
   redirect(draftStepPath({ number }, "part"));
 }

@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import { notFound, redirect } from "next/navigation";
+import { CreditCard } from "@/components/credits/credit-card";
 import { CaseLineView } from "@/components/sheet/case-line";
 import { ConditionCard } from "@/components/sheet/condition-card";
 import { EvidenceCard } from "@/components/sheet/evidence-card";
@@ -15,17 +16,22 @@ import { listColleagues } from "@/lib/claims/judging/queries";
 import { claimDigits } from "@/lib/claims/number";
 import { claimPath, draftStepPath } from "@/lib/claims/paths";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
+import { labelQuery } from "@/lib/returns/schema";
 import { requireSession } from "@/lib/web/session";
 import {
+  acceptAction,
   contestAction,
   parkAction,
   putBackAction,
+  reopenAction,
   takeAction,
   takeOverAction,
   withdrawAction,
 } from "./actions";
+import { CalledIn } from "./called-in";
 
-type Props = { params: Promise<{ number: string }>; searchParams: Promise<{ sent?: string }> };
+type Search = { sent?: string; cells?: string };
+type Props = { params: Promise<{ number: string }>; searchParams: Promise<Search> };
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
   const { number } = await params;
@@ -34,7 +40,7 @@ export async function generateMetadata({ params }: Props): Promise<Metadata> {
 
 /** The one page of a claim: facts, evidence, talk, money and record, each side seeing what is its own. */
 export default async function ClaimSheetPage({ params, searchParams }: Props) {
-  const [session, { number }, { sent }] = await Promise.all([requireSession(), params, searchParams]);
+  const [session, { number }, { sent, cells }] = await Promise.all([requireSession(), params, searchParams]);
   const { actor } = session;
   const digits = claimDigits(number);
   const sheet = digits.length === 8 ? await findClaimSheet(actor, digits) : null;
@@ -48,8 +54,11 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
     park: parkAction,
     withdraw: withdrawAction,
     contest: contestAction,
+    accept: acceptAction,
+    reopen: reopenAction,
   };
   const isJustSent = Boolean(sent) && sheet.side === "workshop";
+  const [verdict] = sheet.verdicts;
   const shared = { sheet, locale: actor.locale, timeZone: actor.timeZone };
   return (
     <>
@@ -65,7 +74,9 @@ export default async function ClaimSheetPage({ params, searchParams }: Props) {
       <CaseLineView {...shared} />
       <div className="grid items-start gap-6 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
         <div className="grid min-w-0 gap-6">
-          {sheet.verdicts[0] ? <VerdictCard {...shared} verdict={sheet.verdicts[0]} /> : null}
+          {verdict ? <VerdictCard {...shared} verdict={verdict} /> : null}
+          {verdict?.credit ? <CreditCard {...shared} credit={verdict.credit} verdictId={verdict.id} /> : null}
+          <CalledIn session={session} sheet={sheet} cells={labelQuery.parse({ cells }).cells} />
           {sheet.lines.map((line) => (
             <LineCard
               key={line.lineNumber}

@@ -8,11 +8,14 @@ import { Card } from "@/components/ui/card";
 import { TextLink } from "@/components/ui/link-button";
 import { PageHeader } from "@/components/ui/page-header";
 import { Serial } from "@/components/ui/serial";
+import { restsOnNoFinding } from "@/lib/claims/deciding/finding-waits";
 import { claimPath } from "@/lib/claims/paths";
 import { findClaimSheet } from "@/lib/claims/reading/queries";
 import { claimDigits } from "@/lib/claims/number";
+import { listReturnsOfClaim } from "@/lib/returns/card-queries";
 import { requireSession } from "@/lib/web/session";
 import { decideAction } from "../judging-actions";
+import { BenchFound, WaitsForBench } from "./found";
 
 export async function generateMetadata(): Promise<Metadata> {
   const t = await getTranslations("judging.decide");
@@ -28,6 +31,9 @@ export default async function DecidePage({ params }: { params: Promise<{ number:
   ]);
   const sheet = await findClaimSheet(actor, claimDigits(number));
   if (!sheet?.moves.includes("decide")) notFound();
+  const returns = await listReturnsOfClaim(actor, claimDigits(number));
+  const findings = new Map(returns.flatMap(({ lines }) => lines.map((line) => [line.lineId, line.finding])));
+  const reader = { locale: actor.locale, timeZone: actor.timeZone };
   return (
     <>
       <PageHeader
@@ -42,7 +48,8 @@ export default async function DecidePage({ params }: { params: Promise<{ number:
         title={t("title")}
         note={t("revision", { revision: sheet.revision })}
       />
-      <CaseLineView sheet={sheet} locale={actor.locale} timeZone={actor.timeZone} />
+      <CaseLineView sheet={sheet} {...reader} />
+      <WaitsForBench sheet={sheet} />
       <DecideForm
         action={decideAction}
         number={sheet.number}
@@ -53,12 +60,18 @@ export default async function DecidePage({ params }: { params: Promise<{ number:
           name: line.partName,
           serial: line.serial,
           suggestion: line.coverage?.answer === "covered" ? "upheld" : null,
-          cover: line.coverage ? (
-            <Card title={t("cover")} note={line.serial ? <Serial value={line.serial} /> : line.partName}>
-              <CoverageSteps coverage={line.coverage} locale={actor.locale} />
-            </Card>
-          ) : null,
+          beside: (
+            <div className="grid gap-6">
+              <BenchFound line={line} finding={findings.get(line.lineId)} sheet={sheet} {...reader} />
+              {line.coverage ? (
+                <Card title={t("cover")} note={line.serial ? <Serial value={line.serial} /> : line.partName}>
+                  <CoverageSteps coverage={line.coverage} locale={actor.locale} />
+                </Card>
+              ) : null}
+            </div>
+          ),
         }))}
+        asksWhyNoFinding={sheet.lines.some(({ returnState }) => restsOnNoFinding(returnState))}
       />
     </>
   );
