@@ -25,9 +25,7 @@ export type Balance = {
 };
 
 /** What an entry adds to what its workshop is owed: a payable is a credit, so below zero in the ledger. */
-const owedBy = ({
-  postings,
-}: Pick<BookEntry, "postings">): { currency: Currency; minor: bigint } | null => {
+const owedBy = ({ postings }: Pick<BookEntry, "postings">): { currency: Currency; minor: bigint } | null => {
   const payable = postings.filter(({ account }) => account === "workshopPayable");
   const [first] = payable;
   if (!first) return null;

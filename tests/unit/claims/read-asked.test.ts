@@ -27,7 +27,12 @@ describe("what is asked for besides the part", () => {
 
   it("names each field that cannot be read, and keeps reading the others", () => {
     const { asked, refused } = readAsked(
-      draft({ labourMinutes: "1h", diagnosisAsked: "1.234,50", consumablesAsked: "-3", carriageAsked: "9.999" }),
+      draft({
+        labourMinutes: "1h",
+        diagnosisAsked: "1.234,50",
+        consumablesAsked: "-3",
+        carriageAsked: "9.999",
+      }),
       "EUR",
     );
     expect(asked).toBeNull();
