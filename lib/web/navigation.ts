@@ -1,5 +1,6 @@
 import type { Route } from "next";
 import type { Right } from "@/lib/access/rights";
+import type { Role } from "@/lib/access/roles";
 import type navigation from "@/messages/en/navigation.json";
 
 export type Place = { readonly key: keyof typeof navigation; readonly href: Route; readonly right: Right };
@@ -21,3 +22,25 @@ export const PLACES: readonly Place[] = [
   { key: "ruleBook", href: "/rule-book", right: "seeRuleBook" },
   { key: "people", href: "/people", right: "keepPeople" },
 ];
+
+/** Where each role's own work waits; who has several roles starts at the first of these that is open to them. */
+const HOMES: readonly (readonly [role: Role, key: Place["key"]])[] = [
+  ["technician", "workshopToday"],
+  ["workshopManager", "workshopToday"],
+  ["assessor", "toJudge"],
+  ["goodsIn", "goodsIn"],
+  ["accounts", "credits"],
+  ["accounts", "creditNotes"],
+  ["analyst", "lifeCurves"],
+  ["administrator", "invoiceLines"],
+  ["administrator", "people"],
+];
+
+/** The first page of a person: where their work is, else the first place that is open to them; null where none is. */
+export function homeOf(roles: ReadonlySet<Role>, isOpen: (right: Right) => boolean): Route | null {
+  const open = PLACES.filter(({ key, right }) => key !== "startClaim" && isOpen(right));
+  const own = HOMES.filter(([role]) => roles.has(role)).flatMap(([, home]) =>
+    open.filter(({ key }) => key === home),
+  );
+  return (own[0] ?? open[0])?.href ?? null;
+}
