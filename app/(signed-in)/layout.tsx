@@ -42,7 +42,7 @@ export default async function SignedInLayout({ children }: { children: ReactNode
             <AlertsLink unread={unread} />
             <LinkButton href="/account" kind="quiet" small>
               <span className="truncate max-sm:sr-only">{session.actor.name}</span>
-              <span aria-hidden="true" className="sm:hidden">
+              <span aria-hidden="true" className="min-w-8 text-center sm:hidden">
                 {initialsOf(session.actor.name)}
               </span>
             </LinkButton>
