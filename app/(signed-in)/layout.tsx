@@ -40,12 +40,15 @@ export default async function SignedInLayout({ children }: { children: ReactNode
         tools={
           <>
             <AlertsLink unread={unread} />
-            <LinkButton href="/account" kind="quiet" small>
-              <span className="truncate max-sm:sr-only">{session.actor.name}</span>
-              <span aria-hidden="true" className="min-w-8 text-center sm:hidden">
-                {initialsOf(session.actor.name)}
-              </span>
-            </LinkButton>
+            {/* On a phone the alerts give way, not the initials: those are pressed with a thumb. */}
+            <span className="flex min-w-0 max-sm:shrink-0">
+              <LinkButton href="/account" kind="quiet" small>
+                <span className="truncate max-sm:sr-only">{session.actor.name}</span>
+                <span aria-hidden="true" className="min-w-8 text-center sm:hidden">
+                  {initialsOf(session.actor.name)}
+                </span>
+              </LinkButton>
+            </span>
           </>
         }
       />

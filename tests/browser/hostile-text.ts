@@ -65,6 +65,8 @@ const WRITTEN =
 const WRITTEN_MEMBER =
   /(name|note|reason|question|letter|installer|earlierWork|serial|frameSerial|vehicleModel|raw|text|instrument|address|title|written|remark|words|label|instructions)$/i;
 const NO_WORDS = new Set(["batches.code", "installers.code"]);
+/** Members whose reasons are codes of ours. */
+const CODED_MEMBERS = new Set(["notGiven"]);
 
 type Column = { table: string; column: string; type: "text" | "jsonb" };
 
@@ -82,6 +84,7 @@ const another = (): string => SHORT[(next += 1) % SHORT.length] ?? "";
 /** The same JSON with hostile words wherever words stood. */
 function withHostileWords(value: unknown, name = ""): unknown {
   if (typeof value === "string") return WRITTEN_MEMBER.test(name) && value !== "" ? another() : value;
+  if (CODED_MEMBERS.has(name)) return value;
   if (Array.isArray(value)) return value.map((one) => withHostileWords(one, name));
   if (typeof value !== "object" || value === null) return value;
   const isAnswers = name === "cannotGet";
