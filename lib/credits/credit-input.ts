@@ -36,7 +36,7 @@ export type InvoicedLine = TaxTreatment & {
 };
 
 /** A price without its invoice: taken from a dated list or typed, always with the reason. */
-export type TypedPrice = TaxTreatment & { readonly unitPriceMinor: bigint; readonly reason: string };
+type TypedPrice = TaxTreatment & { readonly unitPriceMinor: bigint; readonly reason: string };
 
 /** Shares by cause as text ("3/4"); a cause left out has none. */
 export const SHARE_CAUSES = ["maker", "carrier", "fitter", "user", "wear"] as const;

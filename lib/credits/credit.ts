@@ -19,13 +19,13 @@ import { creditStep } from "./steps";
 import type { TaxCategory, TaxGroup } from "./tax";
 
 export type { CreditInput, CreditKind, CreditLineInput, Handling, InvoicedLine } from "./credit-input";
-export type { RoundingName, Settlement, SettlementByKind, TypedPrice } from "./credit-input";
+export type { RoundingName, Settlement, SettlementByKind } from "./credit-input";
 export type { Allowance } from "./deduction";
 export type { NotGiven } from "./entry";
-export type { TaxCategory, TaxGroup, TaxTreatment } from "./tax";
+export type { TaxCategory, TaxGroup } from "./tax";
 
 /** The rounding rule of a setting. */
-export const ROUNDINGS: Readonly<Record<RoundingName, Rounding>> = {
+const ROUNDINGS: Readonly<Record<RoundingName, Rounding>> = {
   halfUp: roundHalfAwayFromZero,
   halfEven: roundHalfEven,
 };

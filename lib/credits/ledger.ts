@@ -32,7 +32,6 @@ export type Movement =
   | ({ readonly kind: "noteIssued" | "noteCountered" } & NoteSum)
   | ({ readonly kind: "allocated" | "allocationTakenBack"; readonly how: AllocationWay } & Sum)
   | ({ readonly kind: "recoveryCharged" | "recoveryTakenBack" } & Sum);
-export type MovementKind = Movement["kind"];
 
 const USED_FOR: Readonly<Record<AllocationWay, Account>> = {
   invoice: "appliedToInvoice",
@@ -79,7 +78,7 @@ const posted = (currency: Currency, sides: readonly (readonly [Account, bigint])
     .map(([account, amountMinor]) => ({ account, amountMinor, currency }));
 
 /** The same postings with their signs turned. */
-export const reversedPostings = (postings: readonly Posting[]): readonly Posting[] =>
+const reversedPostings = (postings: readonly Posting[]): readonly Posting[] =>
   postings.map((posting) => ({ ...posting, amountMinor: -posting.amountMinor }));
 
 /** What each account holds after these postings, by currency; an account nobody touched is left out. */

@@ -202,6 +202,7 @@ function writeGroups({ paper, note, locale, t, amount }: Writing): void {
     group.exemptionReason ?? "",
   ]);
   writeTable(paper, { columns: GROUPS, heads, rows });
+  if (note.elsewhere.length > 0) skip(paper, 2);
   for (const { settledBy, netMinor } of note.elsewhere)
     writeText(paper, t(`credits.elsewhere.${settledBy}`, { amount: amount(netMinor) }), {
       face: paper.document.fonts.text,

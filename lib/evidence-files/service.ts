@@ -33,21 +33,28 @@ export type EvidenceRefusal =
 /** Whose file it is by its row: the bench has rows of its own, everything else is the workshop's. */
 const takenBy = (rowId: string): "workshop" | "goodsIn" => (isBenchRow(rowId) ? "goodsIn" : "workshop");
 
-/** The claim an upload is for, locked, if it is this side's and still takes files: a draft, or a part at the bench. */
+/** A claim of the side that takes such files, locked until the transaction ends; null where it is none of theirs. */
+const claimForFile = (
+  { transaction, actor }: Work,
+  claimId: string,
+  rowId: string,
+): Promise<Claim | null> => {
+  const side = takenBy(rowId) === "goodsIn" ? "sellerId" : "workshopId";
+  return Claim.findOne({
+    where: { id: claimId, [side]: actor.organisationId },
+    transaction,
+    lock: transaction.LOCK.UPDATE,
+  });
+};
+
+/** The claim an upload is for, locked, if it still takes files: a draft, or a part at the bench. */
 async function openClaim(
   work: Work,
   { claimId, rowId }: Target,
 ): Promise<Outcome<Claim, "notFound" | "moveNotOpen">> {
-  const isBench = takenBy(rowId) === "goodsIn";
-  const { transaction, actor } = work;
-  const side = isBench ? { sellerId: actor.organisationId } : { workshopId: actor.organisationId };
-  const claim = await Claim.findOne({
-    where: { id: claimId, ...side },
-    transaction,
-    lock: transaction.LOCK.UPDATE,
-  });
+  const claim = await claimForFile(work, claimId, rowId);
   if (!claim) return refuse("notFound");
-  const isOpen = isBench
+  const isOpen = isBenchRow(rowId)
     ? await isAtBench(work, claim, lineOfBenchRow(rowId))
     : claim.state === "draft" || claim.state === "answerNeeded";
   return isOpen ? ok(claim) : refuse("moveNotOpen");
@@ -185,6 +192,16 @@ export async function receiveEvidence(actor: Actor, request: Request) {
   }
 }
 
+/** Whether a sent revision or a finding holds the file. */
+async function isHeld(work: Work, id: string): Promise<boolean> {
+  const [held] = await rows(
+    work,
+    `select 1 from revision_evidence where evidence_id = $1 union all select 1 from findings where evidence_id = $1 limit 1`,
+    [id],
+  );
+  return held !== undefined;
+}
+
 /**
  * Takes back a file that no sent revision and no finding holds. Each side takes back its own alone. The bytes stay until
  * retention ends; nobody is shown them any more.
@@ -193,28 +210,15 @@ export const withdrawEvidence = (actor: Actor, id: string) =>
   undoing<{ id: string }, "notFound" | "notAllowed" | "evidenceSent">(actor, async (work) => {
     if (!isEvidenceId(id)) return refuse("notFound");
     const { transaction } = work;
-    const known = await EvidenceFile.findByPk(id, { attributes: ["id", "rowId"], transaction });
+    const known = await EvidenceFile.findByPk(id, { transaction });
     if (!known) return refuse("notFound");
     if (!mayWrite(actor, known.rowId)) return refuse("notAllowed");
-    const asked = [id, actor.organisationId, takenBy(known.rowId)];
-    // Under the claim's lock, in a statement of its own: a revision that is being sent just now keeps its files.
-    await rows(
-      work,
-      `select c.id from claims c join evidence_files e on e.claim_id = c.id
-       where e.id = $1 and e.taken_by = $3 and case $3 when 'goodsIn' then c.seller_id else c.workshop_id end = $2
-       for update of c`,
-      asked,
-    );
-    const [file] = await rows<{ id: string; isSent: boolean }>(
-      work,
-      `select e.id, exists (select 1 from revision_evidence r where r.evidence_id = e.id)
-         or exists (select 1 from findings f where f.evidence_id = e.id) as "isSent"
-       from evidence_files e where e.id = $1 and e.taken_by = $3 and e.withdrawn_at is null
-         and case $3 when 'goodsIn' then e.seller_id else e.workshop_id end = $2 for update of e`,
-      asked,
-    );
+    // What holds it is asked under the claim's lock: a revision that is being sent just now keeps its files.
+    const claim = await claimForFile(work, known.claimId, known.rowId);
+    const kept = { id, takenBy: takenBy(known.rowId), withdrawnAt: null };
+    const file = claim && (await EvidenceFile.findOne({ where: kept, transaction }));
     if (!file) return refuse("notFound");
-    if (file.isSent) return refuse("evidenceSent");
-    await known.update({ withdrawnAt: fn("now") }, { transaction });
+    if (await isHeld(work, id)) return refuse("evidenceSent");
+    await file.update({ withdrawnAt: fn("now") }, { transaction });
     return ok({ id });
   });

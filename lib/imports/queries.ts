@@ -5,6 +5,7 @@ import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { dayInZone } from "@/lib/kernel/calendar-day";
 import { LIMITS, mostBytes } from "@/lib/kernel/limits";
 import { readAll } from "@/lib/storage/objects";
+import { Organisation } from "@/models/organisation";
 import { checked, readLines, type Check } from "./check";
 import { presentImport, presentPreview } from "./present";
 import type { CsvFile } from "./csv-file";
@@ -39,9 +40,8 @@ const MOST_LISTED = 50;
 /** Whether this person may import: the right, in an organisation that sells. */
 export async function mayImport(work: Work): Promise<boolean> {
   if (!hasRight(work.actor.roles, "importInvoiceLines", { sells: true, buys: false })) return false;
-  const [own] = await rows<{ sells: boolean }>(work, "select sells from organisations where id = $1", [
-    work.actor.organisationId,
-  ]);
+  const { transaction, actor } = work;
+  const own = await Organisation.findByPk(actor.organisationId, { attributes: ["sells"], transaction });
   return own?.sells === true;
 }
 

@@ -1,5 +1,5 @@
 import "server-only";
-import { fn } from "sequelize";
+import { fn, Op } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
 import { printClaimNumber } from "@/lib/claims/number";
 import { claimPath } from "@/lib/claims/paths";
@@ -21,6 +21,8 @@ import type { DisposeInput, FindingInput } from "./schema";
 
 type Refused =
   "readingUnread" | "runLogBeingRead" | "noFaultTooShort" | "noFaultInQuarantine" | "familyUnknown";
+
+const MINUTE_MS = 60_000;
 
 type Measured = {
   readonly runMinutes: number | null;
@@ -122,13 +124,17 @@ const mailHolder = (work: Work, { claim, input }: Written, findingId: string) =>
 const isJustFound =
   ({ kind, note }: FindingInput) =>
   async (work: Work, lines: readonly PartRow[]): Promise<boolean> => {
-    const [same] = await rows(
-      work,
-      `select 1 from findings where line_id = any ($1::uuid[]) and found_by_id = $2 and kind = $3 and note = $4
-         and found_at > now() - interval '1 minute' limit 1`,
-      [lines.map(({ lineId }) => lineId), work.actor.userId, kind, note],
-    );
-    return same !== undefined;
+    const same = await Finding.findOne({
+      where: {
+        lineId: lines.map(({ lineId }) => lineId),
+        foundById: work.actor.userId,
+        kind,
+        note,
+        foundAt: { [Op.gt]: new Date(Date.now() - MINUTE_MS) },
+      },
+      transaction: work.transaction,
+    });
+    return same !== null;
   };
 
 const onlyLine = ({ lines }: Found): PartRow => {

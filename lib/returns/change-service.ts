@@ -3,18 +3,17 @@ import type { Actor } from "@/lib/access/actor";
 import { clockRunning } from "@/lib/claims/clock/distributor-clock";
 import type { ReturnState } from "@/lib/claims/lifecycle";
 import { todayOf } from "@/lib/claims/judging/service";
-import { claimForChange } from "@/lib/claims/moves/service";
 import { appendToTimeline } from "@/lib/claims/timeline/service";
 import { rows, undoing, type Work } from "@/lib/db/unit-of-work";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { ok, refuse, type Outcome } from "@/lib/kernel/outcome";
 import { familyOf } from "@/lib/parts/families";
 import type { PartFamily } from "@/lib/parts/family";
-import type { Claim } from "@/models/claim";
+import { Claim } from "@/models/claim";
 import { ClaimLine } from "@/models/claim-line";
+import { PartReturn } from "@/models/part-return";
 import { makesMove, PART_ENTRIES, PART_MOVES, partMovesOpenTo, type PartMove } from "./lifecycle";
 
-export type ReturnRow = { readonly id: string; readonly number: string; readonly dueOn: CalendarDay };
 export type PartRow = {
   readonly lineId: string;
   readonly lineNumber: number;
@@ -27,7 +26,7 @@ export type PartRow = {
 /** What a change works on: the claim, locked; the return; those of its lines that the move is open for. */
 export type Found = {
   readonly claim: Claim;
-  readonly returned: ReturnRow;
+  readonly returned: PartReturn;
   readonly lines: readonly PartRow[];
 };
 
@@ -41,9 +40,6 @@ export type Change = {
 export type Changed = { readonly number: string; readonly claimNumber: string };
 
 type Refused = "notFound" | "moveNotOpen";
-
-const RETURN = `select r.id, r.number, r.due_on as "dueOn", c.number as "claimNumber" from part_returns r
-  join claims c on c.id = r.claim_id where r.number = $1`;
 
 // A line may have been called in before: it belongs to the newest return it is on.
 const LINES = `select l.id as "lineId", l.line_number as "lineNumber", l.return_state as "returnState",
@@ -107,8 +103,10 @@ export const changeReturn = <Code extends string>(
 ): Promise<Outcome<Changed, Code | Refused>> =>
   undoing<Changed, Code | Refused>(actor, async (work) => {
     const { number, move } = asked;
-    const [returned] = await rows<ReturnRow & { claimNumber: string }>(work, RETURN, [number]);
-    const claim = returned && (await claimForChange(work, returned.claimNumber));
+    const { transaction } = work;
+    const returned = await PartReturn.findOne({ where: { number }, transaction });
+    const claim =
+      returned && (await Claim.findByPk(returned.claimId, { transaction, lock: transaction.LOCK.UPDATE }));
     if (!claim) return refuse("notFound");
     if (!makesMove(actor, claim, move)) return refuse("moveNotOpen");
 

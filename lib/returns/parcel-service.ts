@@ -1,5 +1,5 @@
 import "server-only";
-import { fn } from "sequelize";
+import { fn, Op } from "sequelize";
 import type { Actor } from "@/lib/access/actor";
 import { hasRight } from "@/lib/access/rights";
 import { rows, undoing, type Work } from "@/lib/db/unit-of-work";
@@ -15,49 +15,40 @@ type Parcel = Omit<ParcelInput, "condition"> & { readonly condition: ParcelCondi
 export const receivesParts = ({ roles }: Actor): boolean =>
   hasRight(roles, "receiveParts", { sells: true, buys: false });
 
+/** What was noted of a parcel, by whom, as columns of its row. */
+const asWritten = ({ userId, organisationId }: Actor, parcel: Parcel) => ({
+  sellerId: organisationId,
+  receivedById: userId,
+  numberWritten: parcel.numberWritten,
+  senderWritten: parcel.sender,
+  partWritten: parcel.part,
+  serialWritten: parcel.serial,
+  condition: parcel.condition,
+  note: parcel.note,
+});
+
 /** Writes a parcel down as it arrived; with the return it belongs to where that is known. */
 export async function insertParcel(work: Work, parcel: Parcel, returnId: string | null): Promise<string> {
-  const { userId, organisationId } = work.actor;
-  const matched = returnId === null ? {} : { returnId, matchedAt: new Date(), matchedById: userId };
-  const made = await ParcelRow.create(
-    {
-      sellerId: organisationId,
-      receivedById: userId,
-      numberWritten: parcel.numberWritten,
-      senderWritten: parcel.sender,
-      partWritten: parcel.part,
-      serialWritten: parcel.serial,
-      condition: parcel.condition,
-      note: parcel.note,
-      ...matched,
-    },
-    { transaction: work.transaction },
-  );
+  const { transaction, actor } = work;
+  const matched = returnId === null ? {} : { returnId, matchedAt: new Date(), matchedById: actor.userId };
+  const made = await ParcelRow.create({ ...asWritten(actor, parcel), ...matched }, { transaction });
   return made.id;
 }
 
+const MINUTE_MS = 60_000;
+
 /** The same parcel written down by the same person within the last minute: the button was pressed twice. */
 async function justNoted(work: Work, parcel: Parcel): Promise<string | null> {
+  const { transaction, actor } = work;
   // Two presses at once wait for each other; nothing else waits for them.
   await rows(work, "select pg_advisory_xact_lock(hashtextextended($1, 0)) is null as locked", [
-    `parcel:${work.actor.userId}`,
+    `parcel:${actor.userId}`,
   ]);
-  const [same] = await rows<{ id: string }>(
-    work,
-    `select id from parcels where received_by_id = $1 and seller_id = $2 and arrived_at > now() - interval '1 minute'
-       and (number_written, sender_written, part_written, serial_written, condition, note) = ($3, $4, $5, $6, $7, $8)
-     order by arrived_at desc limit 1`,
-    [
-      work.actor.userId,
-      work.actor.organisationId,
-      parcel.numberWritten,
-      parcel.sender,
-      parcel.part,
-      parcel.serial,
-      parcel.condition,
-      parcel.note,
-    ],
-  );
+  const same = await ParcelRow.findOne({
+    where: { ...asWritten(actor, parcel), arrivedAt: { [Op.gt]: new Date(Date.now() - MINUTE_MS) } },
+    order: [["arrivedAt", "DESC"]],
+    transaction,
+  });
   return same?.id ?? null;
 }
 

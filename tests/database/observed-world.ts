@@ -37,7 +37,7 @@ export type UnitPlan = {
 };
 
 export const FIRST_TERMS = { months: 12, shelf: 6, filing: 30, from: "2024-01-01" };
-export const LATER_TERMS = { months: 24, shelf: 6, filing: 45, from: "2025-01-01" };
+const LATER_TERMS = { months: 24, shelf: 6, filing: 45, from: "2025-01-01" };
 
 const bodyOf = ({ months, shelf, filing }: typeof FIRST_TERMS) =>
   JSON.stringify({

@@ -10,9 +10,11 @@ import { adminQuery } from "../support/database";
 type Actor = ReturnType<typeof actorAt>;
 let organisation: { readonly id: string };
 let keeper: Actor;
+/** Enough that two transactions meet where nothing keeps them apart. */
+const ROUNDS = 10;
 
 beforeAll(async () => {
-  organisation = await buildDistributor();
+  organisation = await buildDistributor({ buys: true });
   const person = await buildPerson(organisation, ["administrator"]);
   keeper = actorAt(organisation, person, ["administrator"]);
 });
@@ -20,7 +22,7 @@ beforeAll(async () => {
 const workshop = (number: string, taxNumber: string) => ({
   number,
   buyerId: "",
-  currency: "EUR",
+  currency: "EUR" as const,
   name: unlike("Workshop"),
   legalName: "Workshop Ltd",
   address: "1 Mill Lane",
@@ -128,6 +130,25 @@ describe("a member", () => {
     expect(await changeRoles(keeper, asked)).toMatchObject({ ok: true });
     expect(await rolesOf(member.id)).toEqual(["analyst", "goodsIn"]);
     expect(await rolesOf(other.id)).toEqual(["goodsIn"]);
+  });
+
+  it("stays administrator where two take the role from each other at the same moment: one of the two", async () => {
+    for (let round = 0; round < ROUNDS; round += 1) {
+      const house = await buildDistributor();
+      const [one, other] = [
+        await buildPerson(house, ["administrator"]),
+        await buildPerson(house, ["administrator"]),
+      ];
+      const take = (by: typeof one, from: typeof one) =>
+        changeRoles(actorAt(house, by, ["administrator"]), { personId: from.id, roles: ["goodsIn"] });
+      const answers = await Promise.all([take(one, other), take(other, one)]);
+      expect(answers.map(({ ok }) => ok).toSorted()).toEqual([false, true]);
+      const left = await adminQuery(
+        "select user_id from membership_roles where organisation_id = $1 and role = 'administrator'",
+        [house.id],
+      );
+      expect(left).toHaveLength(1);
+    }
   });
 
   it("is switched off and on again by itself", async () => {

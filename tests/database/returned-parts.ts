@@ -29,7 +29,7 @@ export const otherTechnician = () => workerOf(world.shops[1]);
 
 export type Held = { id: string; number: string; lineIds: string[]; serial: string };
 
-export const linesOf = (claimId: string) =>
+const linesOf = (claimId: string) =>
   adminQuery<{ id: string; return_state: string; line_number: number }>(
     "select id, return_state, line_number from claim_lines where claim_id = $1 order by line_number",
     [claimId],

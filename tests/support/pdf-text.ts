@@ -77,6 +77,28 @@ export async function pdfRuns(bytes: Uint8Array): Promise<Run[]> {
   });
 }
 
+export type DrawnRule = {
+  readonly page: number;
+  readonly from: number;
+  readonly to: number;
+  readonly y: number;
+};
+
+const LINE = /([-\d.]+) ([-\d.]+) m\s+([-\d.]+) ([-\d.]+) l\s/gu;
+
+/** Every rule from left to right that a page draws, in points. */
+export async function pdfRules(bytes: Uint8Array): Promise<DrawnRule[]> {
+  const pdf = await PDFDocument.load(bytes, { updateMetadata: false });
+  return pdf.getPages().flatMap((page, at) =>
+    [...streamsOf(page, pdf.context).matchAll(LINE)].map(([, from, y, to]) => ({
+      page: at + 1,
+      from: Number(from),
+      to: Number(to),
+      y: Number(y),
+    })),
+  );
+}
+
 /** The text of a PDF, each base line a line, from the top of the first page to the foot of the last. */
 export async function pdfText(bytes: Uint8Array): Promise<string> {
   const lines = new Map<string, Run[]>();

@@ -86,13 +86,9 @@ type Ask = { number: string; question: string; rowIds: readonly string[] };
 /** Days the workshop has before a query lapses; the terms of the filing day say so, and 30 where there are none. */
 const DAYS_TO_ANSWER = 30;
 
-const nextRound = async (work: Work, claimId: string): Promise<number> => {
-  const [last] = await rows<{ round: number }>(
-    work,
-    "select coalesce(max(round), 0) + 1 as round from claim_queries where claim_id = $1",
-    [claimId],
-  );
-  return Number(last?.round ?? 1);
+const nextRound = async ({ transaction }: Work, claimId: string): Promise<number> => {
+  const last = await ClaimQuery.findOne({ where: { claimId }, order: [["round", "DESC"]], transaction });
+  return (last?.round ?? 0) + 1;
 };
 
 /** Of the rows asked for, those of the claim's Evidence list: a row without a name would keep the mail from being written. */

@@ -16,6 +16,8 @@ export type NoteItem = {
   readonly sellerId: string;
   readonly kind: "credit" | "counter";
   readonly issuedOn: CalendarDay;
+  /** Whether the actor's organisation issued it or was given it; one that sells and buys has both. */
+  readonly side: "issued" | "received";
   /** The other side: the workshop for the distributor, the distributor for the workshop. */
   readonly partner: string;
   readonly claimNumber: string;
@@ -59,7 +61,7 @@ const LIST = (view: NoteView) => `
     and ($2::date is null or (n.issued_on, n.sequence) < ($2::date, $3::integer))
   order by n.issued_on desc, n.sequence desc limit ${NOTES_PAGE_SIZE + 1}`;
 
-const present = (row: NoteRow): NoteItem => {
+const present = (row: NoteRow, organisationId: string): NoteItem => {
   const currency = currencyFrom(row.currency);
   const [total, allocated] = [BigInt(row.totalMinor), BigInt(row.allocatedMinor)];
   const isUsable = row.kind === "credit" && !row.isCountered;
@@ -68,6 +70,7 @@ const present = (row: NoteRow): NoteItem => {
     sellerId: row.sellerId,
     kind: row.kind,
     issuedOn: row.issuedOn,
+    side: row.sellerId === organisationId ? "issued" : "received",
     partner: row.partner,
     claimNumber: printClaimNumber(row.claimNumber),
     total: money(total, currency),
@@ -93,7 +96,10 @@ export const listNotes = (actor: Actor, { view, before, isOwnOnly = false }: Ask
     const found = await rows<NoteRow>(work, LIST(view), [actor.organisationId, day, sequence, isOwnOnly]);
     const shown = found.slice(0, NOTES_PAGE_SIZE);
     const last = found.length > NOTES_PAGE_SIZE ? shown.at(-1) : undefined;
-    return { notes: shown.map(present), nextBefore: last ? `${last.issuedOn}.${last.sequence}` : null };
+    return {
+      notes: shown.map((row) => present(row, actor.organisationId)),
+      nextBefore: last ? `${last.issuedOn}.${last.sequence}` : null,
+    };
   });
 
 export type AllocationView = {

@@ -3,7 +3,7 @@ import { creditFor, type CreditLineInput } from "@/lib/credits/credit";
 import { counterDocument, noteDocument } from "@/lib/credits/note-document";
 import { creditNotePdf } from "@/lib/documents/credit-note";
 import { calendarDay } from "@/lib/kernel/calendar-day";
-import { pdfRuns, pdfText } from "../../support/pdf-text";
+import { pdfRules, pdfRuns, pdfText } from "../../support/pdf-text";
 import { bodies } from "../rule-book/bodies";
 
 const terms = { terms: bodies.terms, version: "G 1 (2024-01-01)" };
@@ -83,6 +83,10 @@ const note = noteDocument({
   })),
 });
 
+/** As the database keeps a rate: three decimals. */
+const withThousandths = (input: Readonly<Record<string, string | number>>) =>
+  "taxRate" in input ? { ...input, taxRate: Number(input.taxRate).toFixed(3) } : input;
+
 describe("the PDF of a credit note", () => {
   it("says in English what a bookkeeper looks for, with every figure", async () => {
     const text = await pdfText(await creditNotePdf(note, "en"));
@@ -138,5 +142,53 @@ describe("the PDF of a credit note", () => {
     expect(runs.filter(({ text }) => text.includes("\ufffd"))).toEqual([]);
     // A4 is 595 by 842 points.
     expect(runs.filter(({ x, y }) => x < 40 || x > 555 || y < 25 || y > 815)).toEqual([]);
+  });
+
+  it("has rules that touch no letter, on every sheet and in both languages", async () => {
+    for (const bytes of [await creditNotePdf(note, "en"), await creditNotePdf(note, "de")]) {
+      const [rules, runs] = [await pdfRules(bytes), await pdfRuns(bytes)];
+      expect(rules.length).toBeGreaterThan(8);
+      // Capitals reach 0.7 of the size over the base line, letters 0.25 under it; two points of air on either side.
+      const touched = rules.flatMap((rule) =>
+        runs.filter(
+          ({ page, x, y, size }) =>
+            page === rule.page &&
+            x < rule.to &&
+            x >= rule.from - 1 &&
+            rule.y > y - size * 0.25 - 2 &&
+            rule.y < y + size * 0.7 + 2,
+        ),
+      );
+      expect(touched.map(({ text }) => text)).toEqual([]);
+    }
+  });
+
+  it("names the columns again on the next sheet, and leaves no rule or heading alone at a foot", async () => {
+    const [line] = note.lines;
+    if (!line) throw new Error("No line");
+    const long = { ...note, lines: Array.from({ length: 24 }, (_, at) => ({ ...line, position: at + 1 })) };
+    const bytes = await creditNotePdf(long, "en");
+    const runs = await pdfRuns(bytes);
+    const sheets = [...new Set(runs.flatMap(({ page, text }) => (text === "No." ? [page] : [])))];
+    expect(sheets).toEqual([1, 2]);
+    const feet = runs.filter(({ y }) => y < 40).map(({ y }) => y);
+    for (const { page, y } of await pdfRules(bytes)) {
+      const below = runs.filter((run) => run.page === page && run.y < y && !feet.includes(run.y));
+      expect(below.length).toBeGreaterThan(0);
+    }
+  });
+
+  it("prints a rate without zeros behind it, wherever it stands", async () => {
+    const kept = {
+      ...note,
+      steps: note.steps.map((step) => ({ ...step, input: withThousandths(step.input) })),
+    };
+    const [english, german] = [
+      await pdfText(await creditNotePdf(kept, "en")),
+      await pdfText(await creditNotePdf(kept, "de")),
+    ];
+    expect(english).toContain("Tax in group S: 20% of");
+    expect(german).toContain("Steuer in Gruppe S: 20 % von");
+    expect(`${english}${german}`).not.toMatch(/20[.,]0/u);
   });
 });

@@ -3,18 +3,11 @@ import { describe, expect, it } from "vitest";
 import { GRADE_LIMITS } from "@/lib/reliability/batch-grade";
 import { batchScreen, type BatchRow, type ScreenedBatch } from "@/lib/reliability/batch-screen";
 import { expectedExposure, type GroupedObservation } from "@/lib/reliability/expected-exposure";
-import { gammaPrior, shrunkenRatio } from "@/lib/reliability/gamma-prior";
-import { logRank } from "@/lib/reliability/log-rank";
 import { compareRates } from "@/lib/reliability/rates";
-import { anyLives, uniformFrom, unitByUnit, weibullLife } from "./made-lives";
+import { among } from "./batch-rows";
+import { uniformFrom, weibullLife } from "./made-lives";
 
 const OPTIONS = { confidence: 0.95 };
-
-/** Nine batches of four expected and four seen each, and one of interest. */
-const among = (batch: Partial<BatchRow>): BatchRow[] => [
-  { id: "B", failures: 4, exposure: 4, ...batch },
-  ...Array.from({ length: 9 }, (_, at): BatchRow => ({ id: `other ${at}`, failures: 4, exposure: 4 })),
-];
 
 const screened = (batch: Partial<BatchRow>, options: object = {}): ScreenedBatch => {
   const found = batchScreen(among(batch), { ...OPTIONS, ...options }).batches[0];
@@ -183,105 +176,6 @@ describe("grades", () => {
       p: null,
     });
     expect(batchScreen([], OPTIONS)).toEqual({ batches: [], prior: null });
-  });
-});
-
-describe("the shrunken ratio", () => {
-  const failures = [4, 0, 7, 2, 15, 3, 1, 0, 6, 22];
-  const expected = [5.2, 1.1, 3.9, 4, 6.5, 3.3, 2.8, 0.7, 8.8, 9.1];
-  const made = failures.map((one, at) => ({ failures: one, expected: expected[at] ?? 0 }));
-
-  it("has the prior that a general maximiser finds for the negative binomial likelihood (SciPy 1.17.1)", () => {
-    const prior = gammaPrior(made);
-    expect(prior?.shape).toBeCloseTo(3.35154246, 4);
-    expect(prior?.mean).toBeCloseTo(1.16758703, 6);
-  });
-
-  it("lies between a batch's own ratio and the mean, nearer to its own the more is expected", () => {
-    const prior = { mean: 2, shape: 3 };
-    const ratios = [1, 10, 100].map((size) => shrunkenRatio(prior, { failures: 4 * size, expected: size }));
-    expect(ratios).toEqual([7 / 2.5, 43 / 11.5, 403 / 101.5]);
-  });
-
-  it("is the mean where batches differ no more than chance has them, and absent without a failure", () => {
-    expect(gammaPrior(Array.from({ length: 9 }, () => ({ failures: 4, expected: 4 })))).toEqual({
-      mean: 1,
-      shape: null,
-    });
-    expect(gammaPrior([{ failures: 0, expected: 3 }])).toBeNull();
-    const { prior, batches } = batchScreen(among({}), OPTIONS);
-    expect(prior).toEqual({ mean: 1, shape: null });
-    expect(batches.map(({ shrunken }) => shrunken)).toEqual(Array.from({ length: 10 }, () => 1));
-  });
-
-  it("ranks a large bad batch above a tiny one with a worse ratio", () => {
-    const rows = [...among({ failures: 30, exposure: 8 }), { id: "tiny", failures: 1, exposure: 0.05 }];
-    const of = (id: string) => batchScreen(rows, OPTIONS).batches.find((batch) => batch.id === id);
-    expect(of("tiny")?.ratio).toBeGreaterThan(of("B")?.ratio ?? Infinity);
-    expect(of("B")?.shrunken).toBeGreaterThan(of("tiny")?.shrunken ?? Infinity);
-  });
-});
-
-describe("expected exposure", () => {
-  const threeGroups = fc
-    .tuple(anyLives, anyLives, anyLives)
-    .map((groups) =>
-      groups.flatMap((rows, at) =>
-        rows.map((row): GroupedObservation => ({ ...row, group: "abc"[at] ?? "" })),
-      ),
-    );
-
-  it("sums, over the ages at which others are at risk, units at risk times the pooled hazard", () =>
-    fc.assert(
-      fc.property(threeGroups, (rows) => {
-        const units = rows.flatMap((row) =>
-          unitByUnit([row], 1).map((unit) => ({ ...unit, group: row.group })),
-        );
-        const ages = [...new Set(units.flatMap(({ ageDays, failed }) => (failed ? [ageDays] : [])))];
-        for (const { id, failures, exposure } of expectedExposure(rows)) {
-          let [seen, sum] = [0, 0];
-          for (const age of ages) {
-            const atRisk = units.filter((unit) => (unit.entryDays ?? -1) < age && age <= unit.ageDays);
-            const own = atRisk.filter(({ group }) => group === id);
-            if (own.length === atRisk.length) continue;
-            const failing = (of: typeof units) =>
-              of.filter(({ failed, ageDays }) => failed && ageDays === age).length;
-            seen += failing(own);
-            sum += (own.length * failing(atRisk)) / atRisk.length;
-          }
-          expect(failures).toBe(seen);
-          expect(exposure).toBeCloseTo(sum, 9);
-        }
-      }),
-    ));
-
-  it("agrees with the log-rank expectation where everybody is at risk at every failure", () => {
-    const rows = [
-      { group: "a", ageDays: 10, failed: true, count: 2 },
-      { group: "a", ageDays: 90, failed: false, count: 8 },
-      { group: "b", ageDays: 20, failed: true, count: 1 },
-      { group: "b", ageDays: 90, failed: false, count: 29 },
-    ];
-    const expected = logRank(["a", "b"].map((id) => rows.filter(({ group }) => group === id))).groups;
-    for (const [at, { exposure, failures }] of expectedExposure(rows).entries()) {
-      expect(exposure).toBeCloseTo(expected[at]?.expected ?? -1, 12);
-      expect(failures).toBe(expected[at]?.observed);
-    }
-  });
-
-  it("measures a batch left out by the hazard of the others, and lends them nothing of its own", () => {
-    const rows = [
-      { group: "bad", ageDays: 10, failed: true, count: 250 },
-      { group: "bad", ageDays: 90, failed: false, count: 250 },
-      { group: "a", ageDays: 10, failed: true, count: 2 },
-      { group: "a", ageDays: 90, failed: false, count: 98 },
-      { group: "b", ageDays: 90, failed: false, count: 100 },
-    ];
-    expect(expectedExposure(rows, { leftOut: ["bad"] })).toEqual([
-      { id: "bad", failures: 250, exposure: 5 },
-      { id: "a", failures: 2, exposure: 1 },
-      { id: "b", failures: 0, exposure: 1 },
-    ]);
   });
 });
 
