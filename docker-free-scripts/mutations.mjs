@@ -3,18 +3,13 @@ import { cpSync, existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } 
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { root } from "./machine.mjs";
-import { ACCESS } from "./mutations/access.mjs";
-import { FIGURES } from "./mutations/figures.mjs";
-import { FILES } from "./mutations/files.mjs";
-import { RECORDS } from "./mutations/records.mjs";
-import { RETURNS } from "./mutations/returns.mjs";
+import { MUTATIONS } from "./mutations/index.mjs";
 import { step, Stop } from "./report.mjs";
 import { testServices } from "./test-services.mjs";
 
 // The test of the tests: `npm run test:long [part of a name]`. Each defence of a table is taken away in a copy of the
 // project, and the tests that guard it must then fail. Works in copies alone: the project itself is never changed.
 
-const MUTATIONS = [...ACCESS, ...RECORDS, ...RETURNS, ...FILES, ...FIGURES];
 const PROJECTS = ["unit", "database"];
 
 const folder = mkdtempSync(join(tmpdir(), "partproof-mutations-"));

@@ -9,12 +9,32 @@ const claim =
   };
 const draft = (step) => claim("own", "onUs", { marks: ["draft"], rest: `/${step}` });
 
-/** Where the first such link on the list of goods-in leads. */
-const goodsIn = (selector) => async (page) => {
-  await page.goto("/goods-in");
-  const link = page.locator(`main a${selector}`).first();
+/** Where the first such link of a page leads. */
+const firstOn = (place, selector) => async (page) => {
+  await page.goto(place);
+  const link = page.locator(`main ${selector}`).first();
   return (await link.count()) > 0 ? await link.getAttribute("href") : undefined;
 };
+const goodsIn = (selector) => firstOn("/goods-in", `a${selector}`);
+
+/** The first claim of this workshop with a part that is called in and still to be sent. */
+const calledIn = async (page) => {
+  await page.goto("/workshop-today");
+  const links = page.locator('main a[href^="/claims/"]');
+  const paths = new Set(await links.evaluateAll((all) => all.map((link) => link.getAttribute("href"))));
+  for (const path of paths) {
+    const sheet = await page.request.get(path);
+    if ((await sheet.text()).includes('id="called-in"')) return path;
+  }
+  return undefined;
+};
+
+/** The first link of a page that leads below it. */
+const linkOn = (page, place) =>
+  page
+    .goto(place)
+    .then(() => page.locator(`main a[href^="${place}/"]:not([href$="/new"], [href$="/invite"])`).first())
+    .then(async (link) => ((await link.count()) > 0 ? await link.getAttribute("href") : undefined));
 
 /** Every screen by the person who lives in it. A path may be found out first; what has no claim to show is left out. */
 export const SCREENS = [
@@ -42,12 +62,30 @@ export const SCREENS = [
       "draft-check": draft("check"),
       "claim-answer-needed": claim("own", "onUs", { marks: ["answerNeeded"] }),
       "claim-with-the-distributor": claim("own", "onThem"),
+      "claim-part-called-in": calledIn,
       "claim-upheld": claim("own", "decided", { marks: ["upheld", "upheldInPart"] }),
       "claim-declined": claim("own", "decided", { marks: ["declined"] }),
       "nothing-found": "/workshop-today?view=all&q=nothing-like-it",
       alerts: "/alerts",
       account: "/account",
       help: "/help",
+    },
+  },
+  {
+    role: "manager",
+    email: "maren.holt@saltmarsh.example",
+    screens: {
+      today: "/workshop-today",
+      "claim-declined": claim("own", "decided", { marks: ["declined"] }),
+      "claim-settled": claim("own", "closed", { marks: ["settled"] }),
+      "credit-notes": "/credit-notes",
+      "credit-note": (page) => linkOn(page, "/credit-notes"),
+      installers: "/installers",
+      installer: (page) => linkOn(page, "/installers"),
+      "rule-book": "/rule-book",
+      "rule-book-credits": "/rule-book?sheet=credit",
+      people: "/people",
+      person: (page) => linkOn(page, "/people"),
     },
   },
   {
@@ -78,12 +116,26 @@ export const SCREENS = [
     },
   },
   {
+    role: "accounts",
+    email: "edwin.marsh@larkmoor.example",
+    screens: {
+      credits: "/credits",
+      "credits-all": "/credits?view=all",
+      "credit-notes": "/credit-notes",
+      "credit-note": firstOn("/credits?view=open", 'a[href^="/credit-notes/"]'),
+      "credit-note-used": firstOn("/credits?view=used", 'a[href^="/credit-notes/"]'),
+      "counter-note": firstOn("/credits?view=all", 'tr:has-text("Counter note") a[href^="/credit-notes/"]'),
+      "day-book": "/day-book",
+      "day-book-nothing-found": "/day-book?month=2019-01",
+    },
+  },
+  {
     role: "analyst",
     email: "nadia.brook@larkmoor.example",
     screens: {
       "life-curves": "/life-curves",
       "life-curves-upper": "/life-curves?axis=upper&count=upheld",
-      "life-curves-claims": "/life-curves/claims",
+      "life-curves-claims": firstOn("/life-curves", 'a[href^="/life-curves/claims"]'),
     },
   },
   {
@@ -100,13 +152,6 @@ export const SCREENS = [
     },
   },
 ];
-
-/** The first link of a page that leads below it. */
-const linkOn = (page, place) =>
-  page
-    .goto(place)
-    .then(() => page.locator(`main a[href^="${place}/"]:not([href$="/new"], [href$="/invite"])`).first())
-    .then(async (link) => ((await link.count()) > 0 ? await link.getAttribute("href") : undefined));
 
 /** A page and what is done on it before it is looked at. */
 const after = (place, act) => async (page) => {
@@ -139,27 +184,30 @@ export const MORE_SCREENS = [
     screens: { sent: claim("own", "onThem", { rest: "?sent=1" }) },
   },
   {
-    role: "manager",
-    email: "maren.holt@saltmarsh.example",
-    screens: {
-      today: "/workshop-today",
-      people: "/people",
-      person: (page) => linkOn(page, "/people"),
-      "claim-declined": claim("own", "decided", { marks: ["declined"] }),
-    },
-  },
-  {
     role: "german-technician",
     email: "jonas.ehrler@quayhead.example",
     screens: {
       today: "/workshop-today",
       "start-a-claim": "/claims/new",
       "draft-evidence": draft("evidence"),
+      "draft-fault": draft("fault"),
       "draft-check": draft("check"),
       "claim-answer-needed": claim("own", "onUs", { marks: ["answerNeeded"] }),
       "claim-with-the-distributor": claim("own", "onThem"),
+      "claim-part-called-in": calledIn,
       "claim-decided": claim("own", "decided"),
       account: "/account",
+    },
+  },
+  {
+    role: "german-manager",
+    email: "wiebke.sandner@quayhead.example",
+    screens: {
+      today: "/workshop-today",
+      "claim-decided": claim("own", "decided"),
+      "credit-notes": "/credit-notes",
+      installers: "/installers",
+      "rule-book": "/rule-book",
     },
   },
   {
@@ -188,6 +236,32 @@ export const MORE_SCREENS = [
       ),
       "finding-refused": after(goodsIn('[href*="/bench/"]'), press("Write the finding")),
     },
+  },
+  {
+    role: "accounts-acting",
+    email: "edwin.marsh@larkmoor.example",
+    screens: {
+      "credits-refused": after("/credits", press("Issue the ticked credit notes")),
+      "allocation-refused": after(
+        firstOn("/credits?view=open", 'a[href^="/credit-notes/"]'),
+        press("Allocate"),
+      ),
+    },
+  },
+  {
+    role: "german-accounts",
+    email: "holger.bruns@fenwright.example",
+    screens: {
+      "goods-in": "/goods-in",
+      credits: "/credits?view=all",
+      "credit-note": firstOn("/credits?view=all", 'a[href^="/credit-notes/"]'),
+      "day-book": "/day-book",
+    },
+  },
+  {
+    role: "german-analyst",
+    email: "imke.rahn@fenwright.example",
+    screens: { "life-curves": "/life-curves" },
   },
   {
     role: "administrator-acting",

@@ -105,7 +105,7 @@ export const FILES = [
     name: "room that is not counted again under the lock",
     guarantee: 32,
     file: "lib/evidence-files/service.ts",
-    from: "const space = await room(work, claim.value, arrived.file.sizeBytes);",
+    from: "const space = await room(work, claim.value, { rowId, moreBytes: arrived.file.sizeBytes });",
     to: "const space = ok(true);",
     tests: ["routes/upload-limits"],
     project: "database",

@@ -59,7 +59,7 @@ export const RECORDS = [
   {
     name: "an entry of the ledger that does not sum to nothing",
     guarantee: 42,
-    file: "migrations/20261201T1400-credits.ts",
+    file: "migrations/20261201T1500-ledger.ts",
     from: "group by p.currency having sum(p.amount_minor) <> 0",
     to: "group by p.currency having false",
     tests: ["database/day-book"],
