@@ -2,6 +2,7 @@ import { useTranslations } from "next-intl";
 import { Fact } from "@/components/ui/facts";
 import { Serial } from "@/components/ui/serial";
 import type { ClaimDraft } from "@/lib/claims/draft";
+import type { Currency } from "@/lib/kernel/currency";
 import type { PartFamily } from "@/lib/parts/family";
 import type { EvidenceRow } from "@/lib/rule-book/evidence-list-shape";
 import { CheckCard, Given } from "./check-card";
@@ -14,6 +15,7 @@ type CheckFactsProps = {
   lines: readonly ({ part: { name: string; number: string } } | null)[];
   evidence: readonly { rowId: string; originalName: string }[];
   rows: readonly EvidenceRow[];
+  currency: Currency;
 };
 
 /** Everything that goes out, read once more; each card leads back to its page in one press. */
@@ -46,7 +48,7 @@ function PartFacts({ number, draft, lines }: CheckFactsProps) {
   );
 }
 
-function FaultFacts({ number, draft, family }: CheckFactsProps) {
+function FaultFacts({ number, draft, family, currency }: CheckFactsProps) {
   const t = useTranslations("draft");
   const words = useTranslations("families");
   const symptom = family.symptoms.find(({ code }) => code === draft.symptom);
@@ -72,7 +74,7 @@ function FaultFacts({ number, draft, family }: CheckFactsProps) {
         <Given>{draft.earlierWork}</Given>
       </Fact>
       <Fact term={t("asked.title")}>
-        <Given>{askedInShort(draft, t)}</Given>
+        <Given>{hasAsked(draft) && <AskedInShort draft={draft} currency={currency} />}</Given>
       </Fact>
       <Fact term={t("fault.incident")}>
         <Given>{draft.incident && t(`fault.${draft.incident}`)}</Given>
@@ -83,13 +85,21 @@ function FaultFacts({ number, draft, family }: CheckFactsProps) {
 
 const ASKED = ["diagnosisAsked", "consumablesAsked", "carriageAsked"] as const;
 
-const askedInShort = (draft: ClaimDraft, t: ReturnType<typeof useTranslations<"draft">>): string =>
-  [
-    draft.labourMinutes && t("asked.labourShort", { minutes: draft.labourMinutes }),
-    ...ASKED.map((field) => draft[field] && `${t(`asked.${field}`)} ${draft[field]}`),
-  ]
-    .filter(Boolean)
-    .join("; ");
+const hasAsked = (draft: ClaimDraft): boolean =>
+  Boolean(draft.labourMinutes) || ASKED.some((field) => Boolean(draft[field]));
+
+/** What is asked for besides the part, as it was typed, one cost a line. */
+function AskedInShort({ draft, currency }: Pick<CheckFactsProps, "draft" | "currency">) {
+  const t = useTranslations("draft.asked");
+  return (
+    <ul>
+      {draft.labourMinutes ? <li>{t("labourShort", { minutes: draft.labourMinutes })}</li> : null}
+      {ASKED.filter((field) => draft[field]).map((field) => (
+        <li key={field}>{t("amountShort", { what: t(field), currency, amount: draft[field] })}</li>
+      ))}
+    </ul>
+  );
+}
 
 function EvidenceFacts({ number, draft, evidence, rows }: CheckFactsProps) {
   const t = useTranslations("draft.check");

@@ -1,10 +1,10 @@
 import { useTranslations } from "next-intl";
 import { TextLink } from "@/components/ui/link-button";
-import { SheetTable } from "@/components/ui/sheet-table";
+import { Card } from "@/components/ui/card";
 import { Mark } from "@/components/ui/status-mark";
-import { Row, RowHead, Td } from "@/components/ui/table";
+import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
 import { installerRecord, standsApart, type InstallerCounts } from "@/lib/claims/installers/record";
-import { formatPercent } from "@/lib/kernel/format";
+import { formatNumber, formatPercent } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
 
 type InstallerItem = InstallerCounts & {
@@ -14,7 +14,8 @@ type InstallerItem = InstallerCounts & {
   readonly leftOn: string | null;
 };
 
-const COLUMNS = ["name", "code", "fitted", "early", "found", "change"] as const;
+const COLUMNS = ["name", "code", "early", "fitted", "found", "change"] as const;
+const COUNTS = ["fitted", "found"] as const;
 
 const allOf = (installers: readonly InstallerItem[]): InstallerCounts => ({
   fitted: installers.reduce((sum, one) => sum + one.fitted, 0),
@@ -34,11 +35,22 @@ export function InstallerTable({
   const t = useTranslations("installers");
   const all = allOf(installers);
   return (
-    <SheetTable caption={t("caption")} heads={COLUMNS.map((column) => t(`columns.${column}`))}>
-      {installers.map((installer) => (
-        <InstallerRow key={installer.id} installer={installer} all={all} locale={locale} />
-      ))}
-    </SheetTable>
+    <Card isInCharge>
+      <Table caption={t("caption")} isHeadSticky>
+        <TableHead>
+          {COLUMNS.map((column) => (
+            <Th key={column} isNumeric={COUNTS.some((count) => count === column)}>
+              {t(`columns.${column}`)}
+            </Th>
+          ))}
+        </TableHead>
+        <TableBody>
+          {installers.map((installer) => (
+            <InstallerRow key={installer.id} installer={installer} all={all} locale={locale} />
+          ))}
+        </TableBody>
+      </Table>
+    </Card>
   );
 }
 
@@ -47,7 +59,7 @@ type RowProps = { installer: InstallerItem; all: InstallerCounts; locale: Locale
 function InstallerRow({ installer, all, locale }: RowProps) {
   const t = useTranslations("installers");
   const record = installerRecord(installer);
-  const percent = (share: number) => formatPercent(share, locale);
+  const percent = (share: number) => formatPercent(share, locale, { least: 1 });
   return (
     <Row>
       <RowHead>
@@ -65,7 +77,6 @@ function InstallerRow({ installer, all, locale }: RowProps) {
           {installer.code}
         </span>
       </Td>
-      <Td label={t("columns.fitted")}>{installer.fitted}</Td>
       <Td label={t("columns.early")}>
         {t("earlyOf", { early: installer.early, watched: installer.watched })}
         <span className="block text-small text-ink-2">
@@ -85,8 +96,13 @@ function InstallerRow({ installer, all, locale }: RowProps) {
           </span>
         ) : null}
       </Td>
-      <Td label={t("columns.found")}>{installer.foundFitting}</Td>
-      <Td label={t("columns.change")}>
+      <Td label={t("columns.fitted")} isNumeric>
+        {formatNumber(installer.fitted, locale)}
+      </Td>
+      <Td label={t("columns.found")} isNumeric>
+        {installer.foundFitting}
+      </Td>
+      <Td>
         <TextLink href={`/installers/${installer.id}`} aria-label={t("changeOne", { name: installer.name })}>
           {t("columns.change")}
         </TextLink>

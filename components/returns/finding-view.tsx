@@ -65,11 +65,16 @@ function ReadingList({ readings, locale }: { readings: readonly FindingReading[]
     <ul className="grid gap-1">
       {readings.map((reading) => (
         <li key={reading.kind}>
-          <span className="text-small text-ink-2">{names(reading.kind)}</span>{" "}
+          <span className="block text-small text-ink-2">{names(reading.kind)}</span>
           <span className="tabular-nums">
             <ReadingValue reading={reading} locale={locale} />
           </span>
-          {reading.instrument ? ` ${t("instrument", { instrument: reading.instrument })}` : null}
+          {reading.instrument ? (
+            <span className="text-small text-ink-2">
+              {" "}
+              {t("instrument", { instrument: reading.instrument })}
+            </span>
+          ) : null}
         </li>
       ))}
     </ul>

@@ -31,6 +31,7 @@ export function ReturnCard({ returned, claimPath, cells, isOfGoodsIn, hasForms, 
   const t = useTranslations("returns.card");
   const { locale, timeZone, limits, actions } = rest;
   const can = (move: PartMove) => returned.lines.some(({ moves }) => moves.includes(move));
+  const asksForDanger = returned.lines.some((line) => line.asksForDanger);
   const settling = SETTLING_MOVES.filter(can);
   const calledInOn = formatDay(dayInZone(new Date(returned.calledInAt), timeZone), locale);
   return (
@@ -38,7 +39,11 @@ export function ReturnCard({ returned, claimPath, cells, isOfGoodsIn, hasForms, 
       id={hasForms ? "called-in" : undefined}
       isInCharge={can("dispatch")}
       title={t("title")}
-      note={t("calledInOn", { printed: returned.printed, day: calledInOn })}
+      note={
+        can("dispatch")
+          ? t("calledInDay", { day: calledInOn })
+          : t("calledInOn", { printed: returned.printed, day: calledInOn })
+      }
       actions={isOfGoodsIn ? <TextLink href={returnPath(returned)}>{t("goToGoodsIn")}</TextLink> : undefined}
     >
       <div className="grid gap-5">
@@ -48,14 +53,14 @@ export function ReturnCard({ returned, claimPath, cells, isOfGoodsIn, hasForms, 
           <LabelLinks
             returnNumber={returned.number}
             claimPath={claimPath}
-            asksForDanger={returned.lines.some(({ asksForDanger }) => asksForDanger)}
+            asksForDanger={asksForDanger}
             cells={cells}
           />
         ) : null}
         {returned.lines.map((line) => (
           <ReturnLine key={line.lineId} line={line} limits={limits} locale={locale} timeZone={timeZone} />
         ))}
-        {hasForms && can("dispatch") ? (
+        {hasForms && can("dispatch") && !(asksForDanger && cells === "unsafe") ? (
           <DispatchForm action={actions.dispatch} number={returned.number} />
         ) : null}
         {hasForms && settling.length > 0 ? (

@@ -19,7 +19,7 @@ export function ReturnLine({ line, limits, locale, timeZone }: ReturnLineProps) 
   const t = useTranslations("returns.card");
   const words = useTranslations("returns");
   return (
-    <section className="grid gap-2 border-t border-rule pt-4">
+    <section className="grid gap-2 [section+&]:border-t [section+&]:border-rule [section+&]:pt-4">
       <h3 className="flex flex-wrap items-center gap-x-3 gap-y-1 text-18">
         {t("line", { line: line.lineNumber, part: line.partName })}
         <PartMark state={line.state === "notSentInTime" ? "notSent" : line.state} />
@@ -40,10 +40,10 @@ export function ReturnLine({ line, limits, locale, timeZone }: ReturnLineProps) 
           {t("place")} <span className="font-mono">{line.place}</span>
         </p>
       ) : null}
-      {line.disposedAs ? <p>{t("disposed", { how: words(`disposals.${line.disposedAs}`) })}</p> : null}
       {line.finding ? (
         <FindingView finding={line.finding} limits={limits} locale={locale} timeZone={timeZone} />
       ) : null}
+      {line.disposedAs ? <p>{t("disposed", { how: words(`disposals.${line.disposedAs}`) })}</p> : null}
     </section>
   );
 }

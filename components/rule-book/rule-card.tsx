@@ -19,7 +19,12 @@ export function RuleCard({
   const t = useTranslations("ruleBook");
   const families = useTranslations("families");
   return (
-    <Card id={`rule-${rule.id}`} isInCharge={isInCharge} title={rule.title} note={rule.ruleNumber}>
+    <Card
+      id={`rule-${rule.id}`}
+      isInCharge={isInCharge}
+      title={<span className="wrap-anywhere hyphens-auto">{rule.title}</span>}
+      note={rule.ruleNumber}
+    >
       <div className="grid gap-6">
         <Facts columns={2}>
           <Fact term={t("inForce")}>{formatDay(rule.validFrom, locale)}</Fact>

@@ -71,7 +71,11 @@ function Fractions({ terms: { coverFraction } }: { terms: Terms }) {
   return (
     <ul>
       {coverFraction.steps.map(({ fromMonth, fraction }) => (
-        <li key={fromMonth}>{t("fractionStep", { month: fromMonth, fraction })}</li>
+        <li key={fromMonth}>
+          {fraction === "1"
+            ? t("fractionWhole", { month: fromMonth })
+            : t("fractionStep", { month: fromMonth, fraction })}
+        </li>
       ))}
     </ul>
   );

@@ -14,10 +14,13 @@ type LineCardProps = SheetProps & { line: LineView; isInCharge: boolean };
 /** One line of the claim: the unit, its days and its price, and whether it is covered, step by step. */
 export function LineCard({ line, sheet, locale, isInCharge }: LineCardProps) {
   const t = useTranslations("sheet.line");
+  // The card of the part called in is what the workshop has to do now.
+  const isToSend =
+    sheet.side === "workshop" && sheet.lines.some(({ returnState }) => returnState === "awaited");
   const day = (text: string | null) => (text ? formatDay(calendarDay(text), locale) : t("notGiven"));
   return (
     <Card
-      isInCharge={isInCharge}
+      isInCharge={isInCharge && !isToSend}
       title={line.partName}
       note={line.partNumber}
       actions={line.verdict ? <ClaimMark state={line.verdict} /> : undefined}

@@ -16,17 +16,27 @@ type ReasonDrawerProps = {
   label: string;
   field: "reason" | "question";
   submit: string;
+  kind?: "secondary" | "quiet";
   choices?: { name: string; label: string; options: readonly { value: string; label: string }[] };
 };
 
 /** A move that needs words: they open under the button, without script too, and stay after a refusal. */
-export function ReasonDrawer({ action, number, trigger, label, field, submit, choices }: ReasonDrawerProps) {
+export function ReasonDrawer({
+  action,
+  number,
+  trigger,
+  label,
+  field,
+  submit,
+  kind = "quiet",
+  choices,
+}: ReasonDrawerProps) {
   const [state, send] = useActionState(action, null);
   const refused = state && !state.ok ? state : null;
   const typed = refused?.typed[field];
   return (
     <details className="group" open={refused !== null} onKeyDown={closeOnEscape}>
-      <summary className={`${buttonStyle({ kind: "quiet" })} list-none [&::-webkit-details-marker]:hidden`}>
+      <summary className={`${buttonStyle({ kind })} list-none [&::-webkit-details-marker]:hidden`}>
         {trigger}
       </summary>
       <form

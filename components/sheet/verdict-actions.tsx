@@ -17,6 +17,7 @@ export function VerdictActions({ sheet, actions }: { sheet: SheetView; actions: 
           action={actions.contest}
           number={number}
           trigger={t("contest")}
+          kind="secondary"
           label={t("contestReason")}
           field="reason"
           submit={t("contest")}

@@ -3,8 +3,10 @@ import { Card } from "@/components/ui/card";
 import { Fact, Facts } from "@/components/ui/facts";
 import { ClaimMark } from "@/components/ui/status-mark";
 import type { VerdictView } from "@/lib/claims/sheet/view";
+import { CAUSES, type Attribution } from "@/lib/claims/verdict";
 import { calendarDay } from "@/lib/kernel/calendar-day";
 import { formatDay, formatInstant } from "@/lib/kernel/format";
+import { equalFractions, ONE, parseFraction, printFraction, ZERO } from "@/lib/kernel/fraction";
 import { CoverageSteps } from "./coverage-steps";
 import type { SheetProps } from "./shared";
 
@@ -27,7 +29,8 @@ export function VerdictCard({ verdict, sheet, locale, timeZone }: SheetProps & {
       {verdict.lines.map((line) => (
         <section key={line.lineNumber} className="mb-4 border-t border-rule pt-4">
           <h3 className="mb-2 flex flex-wrap items-center gap-3 text-18">
-            {t("line", { line: line.lineNumber })} <ClaimMark state={line.outcome} />
+            {t("line", { line: line.lineNumber })}
+            {verdict.lines.length > 1 ? <ClaimMark state={line.outcome} /> : null}
           </h3>
           <Facts>
             <Fact term={t("reason")}>
@@ -44,9 +47,7 @@ export function VerdictCard({ verdict, sheet, locale, timeZone }: SheetProps & {
                 : t("noRule")}
             </Fact>
             <Fact term={t("shares")}>
-              {Object.entries(line.attribution)
-                .map(([cause, share]) => `${words(`causes.${cause}`)} ${share}`)
-                .join(", ")}
+              <Shares attribution={line.attribution} />
             </Fact>
             {line.returnWaivedReason ? <Fact term={t("returnWaived")}>{line.returnWaivedReason}</Fact> : null}
           </Facts>
@@ -64,5 +65,25 @@ export function VerdictCard({ verdict, sheet, locale, timeZone }: SheetProps & {
         </p>
       ) : null}
     </Card>
+  );
+}
+
+/** Whose doing it was, always in the same order of causes; those without a share are left out. */
+function Shares({ attribution }: { attribution: Attribution }) {
+  const t = useTranslations("sheet.verdict");
+  const words = useTranslations("verdicts");
+  const shares = CAUSES.map((cause) => ({ cause, share: parseFraction(attribution[cause] ?? "0") ?? ZERO }));
+  return (
+    <ul>
+      {shares
+        .filter(({ share }) => !equalFractions(share, ZERO))
+        .map(({ cause, share }) => (
+          <li key={cause}>
+            {equalFractions(share, ONE)
+              ? t("shareWhole", { cause: words(`causes.${cause}`) })
+              : t("share", { cause: words(`causes.${cause}`), share: printFraction(share) })}
+          </li>
+        ))}
+    </ul>
   );
 }

@@ -17,7 +17,7 @@ export function Wordmark() {
   return (
     <span translate="no" className="inline-flex items-center gap-2.5">
       <HouseMark />
-      <span className="font-heading text-20 leading-none font-semibold tracking-[-0.01em] text-ink">
+      <span className="font-heading text-20 leading-none font-semibold tracking-[-0.01em] text-ink max-[24rem]:hidden">
         Partproof
       </span>
     </span>

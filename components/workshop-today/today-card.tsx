@@ -1,3 +1,4 @@
+import clsx from "clsx";
 import Link from "next/link";
 import { useTranslations } from "next-intl";
 import type { ReactNode } from "react";
@@ -39,9 +40,10 @@ export function TodayCard({ today, onUs, onThem, notesPath, locale }: TodayProps
             {formatMoney(amount, locale)}
           </span>
         ));
+  const asked = today.asked.map((amount) => formatMoney(amount, locale)).join(" + ");
   return (
-    <Card isInCharge title={t("title")} note={t("asked", { count: today.openCount })}>
-      <ul className="grid gap-px border-y border-rule bg-rule sm:grid-cols-2 xl:grid-cols-4">
+    <Card title={t("title")} note={t("asked", { count: today.openCount, amount: asked || "none" })}>
+      <ul className="grid grid-cols-2 gap-px border-y border-rule bg-rule xl:grid-cols-4">
         <Figure label={t("onUs")} href="/workshop-today?view=onUs" value={onUs} />
         <Figure label={t("onThem")} href="/workshop-today?view=onThem" value={onThem} />
         <Figure label={t("promised")} href="/workshop-today?view=decided" value={sums(today.promised)} />
@@ -61,17 +63,27 @@ function Figure({ label, value, href }: FigureProps) {
   const words = (
     <>
       <span className="block text-small text-ink-2">{label}</span>
-      <span className="block font-heading text-24 tabular-nums">{value}</span>
+      <span
+        className={clsx(
+          "block font-heading text-20 tabular-nums sm:text-24",
+          href && "text-petrol underline decoration-1 underline-offset-4 group-hover:text-petrol-deep",
+        )}
+      >
+        {value}
+      </span>
     </>
   );
   return (
     <li className="bg-card">
       {href ? (
-        <Link href={href} className="block min-h-target p-3 hover:bg-well focus-visible:-outline-offset-3">
+        <Link
+          href={href}
+          className="group flex h-full flex-col justify-between p-3 hover:bg-well focus-visible:-outline-offset-3"
+        >
           {words}
         </Link>
       ) : (
-        <div className="p-3">{words}</div>
+        <div className="flex h-full flex-col justify-between p-3">{words}</div>
       )}
     </li>
   );
@@ -87,13 +99,16 @@ function Deadlines({ today, locale }: Reader & { today: Today }) {
     <div>
       <h3 className="mb-2 text-18">{t("deadlines")}</h3>
       {due.length === 0 ? <p className="text-ink-2">{t("noDeadlines")}</p> : null}
-      <ul className="grid gap-1">
+      <ul className="grid gap-2">
         {due.map(({ number, on, what }) => (
-          <li key={`${what} ${number}`}>
+          <li
+            key={`${what} ${number}`}
+            className="grid grid-cols-[auto_minmax(0,1fr)] items-baseline gap-x-4"
+          >
             <TextLink href={`/claims/${printClaimNumber(number)}`}>
               <span className="font-mono">{printClaimNumber(number)}</span>
-            </TextLink>{" "}
-            {t(`due.${what}`, { day: formatDay(on, locale) })}
+            </TextLink>
+            <span>{t(`due.${what}`, { day: formatDay(on, locale) })}</span>
           </li>
         ))}
       </ul>

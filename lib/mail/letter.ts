@@ -49,15 +49,18 @@ type Page = {
   readonly locale: Locale;
   readonly subject: string;
   readonly paragraphs: readonly string[];
+  readonly footer: string;
   readonly link: { readonly href: string; readonly label: string } | null;
 };
 
-const htmlPage = ({ locale, subject, paragraphs, link }: Page) => `<!doctype html>
+// A link keeps the colour its reader's program gives it: one of ours would be too dark on a dark ground.
+const htmlPage = ({ locale, subject, paragraphs, footer, link }: Page) => `<!doctype html>
 <html lang="${formatTag(locale)}"><head><meta charset="utf-8"><meta name="color-scheme" content="light dark"><title>${escapeHtml(subject)}</title></head>
 <body style="margin:0;padding:24px;font:16px/1.5 Georgia,serif">
 <div style="max-width:36em;border-top:4px solid #0B5563;padding-top:16px">
 ${paragraphs.map((text) => `<p style="white-space:pre-line">${escapeHtml(text)}</p>`).join("\n")}
-${link ? `<p><a href="${escapeHtml(link.href)}" style="color:#0B5563">${escapeHtml(link.label)}</a></p>` : ""}
+${link ? `<p><a href="${escapeHtml(link.href)}" style="font-weight:bold">${escapeHtml(link.label)}</a></p>` : ""}
+<p style="font-size:14px">${escapeHtml(footer)}</p>
 </div></body></html>`;
 
 /**
@@ -98,6 +101,6 @@ export function letterFor(
   return Promise.resolve({
     subject,
     text,
-    html: htmlPage({ locale, subject, paragraphs: [...paragraphs, t("mails.footer")], link }),
+    html: htmlPage({ locale, subject, paragraphs, footer: t("mails.footer"), link }),
   });
 }

@@ -1,10 +1,13 @@
-import { clopperPearson } from "@/lib/reliability/rates";
+import { clopperPearson, compareRates } from "@/lib/reliability/rates";
 
 /** A failure counts as early within so many days of the fitting (computation of installers' early failures). */
 export const EARLY_DAYS = 90;
 
 /** Fewer fittings than these say nothing about a person: no share is printed. */
 const LEAST_WATCHED = 10;
+
+/** Three cases blame nobody. */
+const LEAST_EARLY = 4;
 
 /** What is known of one installer: parts fitted, those whose first days are over or cut short by a failure, and those. */
 export type InstallerCounts = {
@@ -33,10 +36,12 @@ export function installerRecord({ watched, early }: InstallerCounts): InstallerR
   return { kind: "share", share: early / watched, limits: clopperPearson(early, watched, 0.95) };
 }
 
-/** Whether the limits of one lie wholly above the share of all others at the workshop: worth a look together, no more. */
+/**
+ * Whether one has surely more early failures per fitting than all others at the workshop together: four or more, and exact
+ * 95 % limits of the ratio wholly above one. Worth a look together, no more.
+ */
 export function standsApart(one: InstallerCounts, all: InstallerCounts): boolean {
-  const record = installerRecord(one);
-  const [watched, early] = [all.watched - one.watched, all.early - one.early];
-  if (record.kind === "tooFew" || watched < LEAST_WATCHED) return false;
-  return record.limits[0] > early / watched;
+  const others = { failures: all.early - one.early, exposure: all.watched - one.watched };
+  if (one.watched < LEAST_WATCHED || others.exposure < LEAST_WATCHED || one.early < LEAST_EARLY) return false;
+  return compareRates({ failures: one.early, exposure: one.watched }, others, 0.95).limits[0] > 1;
 }

@@ -20,11 +20,16 @@ describe("an installer's record", () => {
     expect(record.limits[1]).toBeCloseTo(high, 4);
   });
 
-  it("stands apart only where even the lower limit is above the share of all others", () => {
-    const all = counts(220, 14);
-    expect(standsApart(counts(20, 4), all)).toBe(true);
-    expect(standsApart(counts(20, 3), all)).toBe(false);
-    expect(standsApart(counts(9, 9), all)).toBe(false);
+  it("stands apart only where the ratio to all others is surely above one", () => {
+    expect(standsApart(counts(20, 6), counts(220, 12))).toBe(true);
+    expect(standsApart(counts(20, 4), counts(220, 24))).toBe(false);
+    expect(standsApart(counts(9, 9), counts(209, 15))).toBe(false);
+  });
+
+  it("stands apart with no three cases, whatever the others' record is", () => {
+    expect(standsApart(counts(20, 3), counts(2000, 3))).toBe(false);
+    expect(standsApart(counts(313, 1), counts(751, 1))).toBe(false);
+    expect(standsApart(counts(20, 4), counts(2000, 4))).toBe(true);
   });
 
   it("compares nobody with too few others", () => {

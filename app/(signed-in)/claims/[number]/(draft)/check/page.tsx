@@ -51,6 +51,7 @@ export default async function CheckStepPage(props: StepProps) {
         lines={context.lines}
         evidence={context.evidence}
         rows={context.rows}
+        currency={context.currency}
       />
       <form action={sendAction} className="grid gap-3">
         <input type="hidden" name="number" value={claim.number} />
