@@ -20,12 +20,17 @@ export type Opens = (key: string | null, fromDays: number, toDays: number) => Ro
 
 type DrawingProps = { figure: LifeFigure; title: string; description: string; opens: Opens; locale: Locale };
 
-// Two drawings, of which one is shown: scaling a wide one down would leave its words too small to read on a phone.
+// Three drawings, of which one is shown: scaling a wide one down would leave its words too small to read on a phone.
 const SIZES = [
+  {
+    frame: { width: 1200, height: 380, left: 60, right: 180, top: 16, lineHeight: 18 },
+    signs: 20,
+    className: "hidden @6xl:block",
+  },
   {
     frame: { width: 760, height: 300, left: 60, right: 172, top: 16, lineHeight: 18 },
     signs: 20,
-    className: "hidden @2xl:block max-w-4xl",
+    className: "hidden @2xl:block @6xl:hidden max-w-4xl",
   },
   {
     frame: { width: 360, height: 240, left: 52, right: 104, top: 16, lineHeight: 18 },

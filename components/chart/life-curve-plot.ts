@@ -100,10 +100,7 @@ export function lifePlot({ series, rest, isZoomed }: LifeFigure, frame: LifeFram
       x: scales.x(at * step * MONTH_DAYS),
       months: at * step,
     })),
-    shareTicks: [0, 0.25, 0.5, 0.75, 1].map((part) => {
-      const share = floor + part * (1 - floor);
-      return { y: scales.y(share), share };
-    }),
+    shareTicks: shareTicks(floor).map((share) => ({ y: scales.y(share), share })),
     isBroken: floor > 0,
   };
 }
@@ -115,6 +112,13 @@ function floorOf(all: readonly Series[]): number {
     0,
     Math.floor(Math.min(1, ...lowest) * 10 - 0.001) / 10 - 0.1 * Number(lowest.length === 0),
   );
+}
+
+/** Shares to draw a line at, down from all: round ones, six at most, whatever the axis begins at. */
+export function shareTicks(floor: number): number[] {
+  const percents = Math.round((1 - floor) * 100);
+  const step = [2, 5, 10].find((one) => percents / one <= 5) ?? 25;
+  return Array.from({ length: Math.floor(percents / step) + 1 }, (_, at) => (100 - at * step) / 100);
 }
 
 /** Months from one tick to the next: a step people count in. */

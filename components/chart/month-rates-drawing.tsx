@@ -21,8 +21,12 @@ const SIZES = [
     className: "hidden @2xl:block max-w-4xl",
   },
   {
+    frame: { width: 600, height: 210, left: 60, right: 20, top: 30, lineHeight: 18 },
+    className: "hidden @lg:block @2xl:hidden",
+  },
+  {
     frame: { width: 360, height: 190, left: 58, right: 12, top: 30, lineHeight: 18 },
-    className: "@2xl:hidden max-w-lg",
+    className: "@lg:hidden max-w-lg",
   },
 ] as const;
 

@@ -27,11 +27,13 @@ export function RateDot({ rate, expected, most, ink, isFilled, href, label }: Ra
   if (!rate) return null;
   const end = x(rate.upper ?? most);
   const isCut = (rate.upper ?? Infinity) > most;
+  // A dot past the end of the scale is not drawn at it: the arrow says that it lies beyond, the words say where.
+  const isOff = rate.value > most;
   return (
     <a href={href} aria-label={label} className="inline-block align-middle">
       <svg viewBox={`0 0 ${WIDTH} ${HEIGHT}`} width={WIDTH} height={HEIGHT} className="h-7 w-55 print:w-36">
         <line x1={PAD} x2={WIDTH - PAD} y1={middle} y2={middle} stroke="var(--rule)" />
-        {expected === null ? null : (
+        {expected === null || expected > most ? null : (
           <line
             x1={x(expected)}
             x2={x(expected)}
@@ -41,15 +43,24 @@ export function RateDot({ rate, expected, most, ink, isFilled, href, label }: Ra
             strokeWidth={1.5}
           />
         )}
-        <line x1={x(rate.lower)} x2={end} y1={middle} y2={middle} stroke={ink} strokeWidth={2.5} />
         <line
-          x1={x(rate.lower)}
-          x2={x(rate.lower)}
-          y1={middle - 5}
-          y2={middle + 5}
+          x1={Math.min(x(rate.lower), end - 6)}
+          x2={end}
+          y1={middle}
+          y2={middle}
           stroke={ink}
-          strokeWidth={1.5}
+          strokeWidth={2.5}
         />
+        {rate.lower > most ? null : (
+          <line
+            x1={x(rate.lower)}
+            x2={x(rate.lower)}
+            y1={middle - 5}
+            y2={middle + 5}
+            stroke={ink}
+            strokeWidth={1.5}
+          />
+        )}
         {isCut ? (
           <path
             d={`M${end - 6} ${middle - 5}L${end} ${middle}L${end - 6} ${middle + 5}`}
@@ -60,14 +71,16 @@ export function RateDot({ rate, expected, most, ink, isFilled, href, label }: Ra
         ) : (
           <line x1={end} x2={end} y1={middle - 5} y2={middle + 5} stroke={ink} strokeWidth={1.5} />
         )}
-        <circle
-          cx={x(rate.value)}
-          cy={middle}
-          r={5.5}
-          fill={isFilled ? ink : CHART_INK.ground}
-          stroke={ink}
-          strokeWidth={2}
-        />
+        {isOff ? null : (
+          <circle
+            cx={x(rate.value)}
+            cy={middle}
+            r={5.5}
+            fill={isFilled ? ink : CHART_INK.ground}
+            stroke={ink}
+            strokeWidth={2}
+          />
+        )}
       </svg>
     </a>
   );

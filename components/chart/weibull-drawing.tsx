@@ -26,9 +26,14 @@ const SIZES = [
     className: "hidden @2xl:block max-w-4xl",
   },
   {
+    frame: { width: 600, height: 260, left: 64, right: 130, top: 16, lineHeight: 19 },
+    signs: 15,
+    className: "hidden @lg:block @2xl:hidden",
+  },
+  {
     frame: { width: 360, height: 230, left: 58, right: 92, top: 16, lineHeight: 19 },
     signs: 10,
-    className: "@2xl:hidden max-w-lg",
+    className: "@lg:hidden max-w-lg",
   },
 ] as const;
 

@@ -85,7 +85,16 @@ function DueRow({ item, locale }: { item: DueItem; locale: Locale }) {
         {item.isCountered ? <span className="block text-small text-wanting">{t("wasCountered")}</span> : null}
       </RowHead>
       <Td label={t("workshop")}>{item.workshopName}</Td>
-      <Td label={t("part")}>{item.parts}</Td>
+      <Td label={t("part")}>
+        {item.parts}
+        {credit.elsewhere.map(({ settledBy, netMinor }) =>
+          settledBy === "creditNote" ? null : (
+            <span key={settledBy} className="block text-small text-ink-2">
+              {elsewhere(settledBy, { amount: amount(netMinor) })}
+            </span>
+          ),
+        )}
+      </Td>
       <Td label={t("decidedOn")}>
         {formatDay(item.decidedOn, locale)}
         {item.contestUntil ? (
@@ -99,13 +108,6 @@ function DueRow({ item, locale }: { item: DueItem; locale: Locale }) {
       </Td>
       <Td label={t("total")} isNumeric>
         {amount(credit.totalMinor)}
-        {credit.elsewhere.map(({ settledBy, netMinor }) =>
-          settledBy === "creditNote" ? null : (
-            <span key={settledBy} className="block max-w-64 text-small whitespace-normal text-ink-2">
-              {elsewhere(settledBy, { amount: amount(netMinor) })}
-            </span>
-          ),
-        )}
       </Td>
     </Row>
   );

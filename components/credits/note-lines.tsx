@@ -12,7 +12,7 @@ export function NoteLines({ note, locale }: Props) {
   const t = useTranslations("credits.document");
   const kinds = useTranslations("creditSteps.kinds");
   return (
-    <Table caption={t("lines")}>
+    <Table caption={t(note.kind === "credit" ? "lines" : "linesBack")}>
       <TableHead>
         <Th>{t("position")}</Th>
         <Th>{t("what")}</Th>
@@ -57,7 +57,7 @@ export function TaxGroups({ note, locale }: Props) {
   const t = useTranslations("credits.document");
   const amount = (minor: bigint) => formatMoney(money(minor, note.currency), locale);
   return (
-    <Table caption={t("taxGroups")} isCaptionShown>
+    <Table caption={t("taxGroups")}>
       <TableHead>
         <Th>{t("category")}</Th>
         <Th isNumeric>{t("rate")}</Th>

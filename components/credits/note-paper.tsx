@@ -47,7 +47,10 @@ export function NotePaper({ note, locale }: NotePaperProps) {
             note={t(`direction.${note.kind}`)}
           />
         </div>
-        <TaxGroups note={note} locale={locale} />
+        <div>
+          <h3 className="mb-2 text-18">{t("taxGroups")}</h3>
+          <TaxGroups note={note} locale={locale} />
+        </div>
         {note.elsewhere.map(({ settledBy, netMinor }) =>
           settledBy === "creditNote" ? null : (
             <p key={settledBy}>{elsewhere(settledBy, { amount: amount(netMinor) })}</p>
@@ -64,7 +67,7 @@ function Party({ label, party }: { label: string; party: NoteParty }) {
   const t = useTranslations("credits.document");
   return (
     <div>
-      <h3 className="text-small text-ink-2">{label}</h3>
+      <h3 className="font-text text-small font-normal text-ink-2">{label}</h3>
       <p className="font-semibold">{party.legalName}</p>
       <p className="whitespace-pre-line">{party.address}</p>
       <p>{party.country}</p>

@@ -12,6 +12,7 @@ export type NoteRow = {
   readonly sellerId: string;
   readonly kind: "credit" | "counter";
   readonly issuedOn: CalendarDay;
+  readonly side: "issued" | "received";
   readonly partner: string;
   readonly claimNumber: string;
   readonly total: Money;
@@ -20,20 +21,27 @@ export type NoteRow = {
   readonly isCountered: boolean;
 };
 
-const COLUMNS = ["number", "issuedOn", "partner", "claim", "total", "allocated", "open"] as const;
-const NUMERIC: readonly string[] = ["total", "allocated", "open"];
+/** Whom the notes of a list are with: workshops, distributors, or some of each. */
+const partnersOf = (notes: readonly NoteRow[]): "workshop" | "distributor" | "partner" => {
+  const isIssued = notes.some(({ side }) => side === "issued");
+  if (isIssued && notes.some(({ side }) => side === "received")) return "partner";
+  return isIssued ? "workshop" : "distributor";
+};
 
 /** Notes, newest first: what they come to, what of it is allocated, what is open. */
 export function NoteTable({ notes, locale }: { notes: readonly NoteRow[]; locale: Locale }) {
   const t = useTranslations("credits.issued");
+  const partners = partnersOf(notes);
   return (
     <Table caption={t("caption")} isHeadSticky>
       <TableHead>
-        {COLUMNS.map((column) => (
-          <Th key={column} isNumeric={NUMERIC.includes(column)}>
-            {t(column)}
-          </Th>
-        ))}
+        <Th>{t("number")}</Th>
+        <Th>{t("issuedOn")}</Th>
+        <Th>{t(partners)}</Th>
+        <Th>{t("claim")}</Th>
+        <Th isNumeric>{t("total")}</Th>
+        <Th isNumeric>{t("allocated")}</Th>
+        <Th isNumeric>{t("open")}</Th>
       </TableHead>
       <TableBody>
         {notes.map((note) => (
@@ -45,7 +53,12 @@ export function NoteTable({ notes, locale }: { notes: readonly NoteRow[]; locale
               <NoteKind note={note} />
             </RowHead>
             <Td label={t("issuedOn")}>{formatDay(note.issuedOn, locale)}</Td>
-            <Td label={t("partner")}>{note.partner}</Td>
+            <Td label={t(partners)}>
+              {note.partner}
+              {partners === "partner" && note.side === "received" ? (
+                <span className="block text-small text-ink-2">{t("received")}</span>
+              ) : null}
+            </Td>
             <Td label={t("claim")}>
               <TextLink href={`/claims/${note.claimNumber}`}>
                 <span className="font-mono">{note.claimNumber}</span>

@@ -25,12 +25,14 @@ export function Why({ explained, steps, locale }: WhyProps) {
       <div className="grid gap-4 pt-2">
         {explained.map((line) => (
           <section key={`${line.lineNumber} ${line.kind}`} className="grid gap-1">
-            <h4 className="font-semibold">{t("line", { line: line.lineNumber, kind: words(line.kind) })}</h4>
+            <h4 className="font-text font-semibold">
+              {t("line", { line: line.lineNumber, kind: words(line.kind) })}
+            </h4>
             <CreditSteps steps={line.steps} locale={locale} />
           </section>
         ))}
         <section className="grid gap-1">
-          <h4 className="font-semibold">{t("document")}</h4>
+          <h4 className="font-text font-semibold">{t("document")}</h4>
           <CreditSteps steps={steps} locale={locale} />
         </section>
       </div>
@@ -47,7 +49,7 @@ export function NotGivenList({ notGiven, currency, locale }: NotGivenProps) {
   if (notGiven.length === 0) return null;
   return (
     <div>
-      <h3 className="mb-1 font-semibold">{t("notGiven")}</h3>
+      <h3 className="mb-1 font-text font-semibold">{t("notGiven")}</h3>
       <ul className="grid list-disc gap-1 pl-5 text-small">
         {notGiven.map((one) => {
           const values = {

@@ -84,13 +84,16 @@ const Counter = ({ words }: { words: string }) => (
 function Postings({ entry, locale }: { entry: RunningEntry; locale: Locale }) {
   const t = useTranslations("dayBook");
   return (
-    <ul className="grid gap-0.5 text-small">
+    // Where the row is a list, an account keeps a line of its own: beside the sum its long words would break anywhere.
+    <ul className="grid max-w-80 grid-cols-[1fr_auto_auto] gap-x-3 gap-y-0.5 text-small @max-lg/ledger:grid-cols-[1fr_auto] @max-lg/ledger:gap-y-2">
       {entry.postings.map(({ account, amountMinor, currency }) => {
         const side = amountMinor > 0n ? "debit" : "credit";
         const amount = money(amountMinor > 0n ? amountMinor : -amountMinor, currency);
         return (
-          <li key={`${account} ${side}`}>
-            {t(side, { account: t(`accounts.${account}`), amount: formatMoney(amount, locale) })}
+          <li key={`${account} ${side}`} className="col-span-full grid grid-cols-subgrid items-baseline">
+            <span className="@max-lg/ledger:col-span-full">{t(`accounts.${account}`)}</span>{" "}
+            <span className="text-ink-2">{t(side)}</span>{" "}
+            <span className="text-right tabular-nums">{formatMoney(amount, locale)}</span>
           </li>
         );
       })}

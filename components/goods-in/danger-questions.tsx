@@ -4,6 +4,7 @@ import { Button } from "@/components/ui/button";
 import { buttonStyle } from "@/components/ui/button-style";
 import { Card } from "@/components/ui/card";
 import { CheckboxGroup } from "@/components/ui/choice-group";
+import { SubmitRow } from "@/components/ui/submit-button";
 import { DANGER_SIGNS } from "@/lib/returns/kinds";
 
 type DangerQuestionsProps = { path: string; parcelId: string | undefined };
@@ -23,14 +24,14 @@ export function DangerQuestions({ path, parcelId }: DangerQuestionsProps) {
           label={t("ask")}
           choices={DANGER_SIGNS.map((value) => ({ value, label: signs(value) }))}
         />
-        <p className="flex flex-wrap gap-2">
+        <SubmitRow>
           <Button type="submit" kind="primary">
             {t("some")}
           </Button>
           <a href={`${path}?looked=yes${parcel}`} className={buttonStyle({ kind: "secondary" })}>
             {t("none")}
           </a>
-        </p>
+        </SubmitRow>
       </form>
     </Card>
   );

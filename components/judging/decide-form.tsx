@@ -74,40 +74,52 @@ export function DecideForm({ action, number, revision, lines, asksWhyNoFinding }
       ) : null}
       {lines.map((line, place) => (
         <div key={line.lineId} className={BESIDE}>
-          <LineVerdict line={line} place={place} typed={refused?.typed} fields={fields} />
+          <div className="grid min-w-0 gap-6">
+            <LineVerdict line={line} place={place} typed={refused?.typed} fields={fields} />
+            {/* Under the last line, not under what stands beside it: a drawn log is far longer than the questions. */}
+            {place === lines.length - 1 ? (
+              <LetterCard typed={refused?.typed} fields={fields} asksWhyNoFinding={asksWhyNoFinding} />
+            ) : null}
+          </div>
           {/* On a phone it is read before the verdict is given. */}
           <div className="min-w-0 max-xl:order-first">{line.beside}</div>
         </div>
       ))}
-      <div className={BESIDE}>
-        <Card title={t("letterTitle")}>
-          <div className="grid gap-5">
-            <TextArea
-              name="letter"
-              label={t("letter")}
-              hint={t("letterHint")}
-              rows={6}
-              limit={4000}
-              defaultValue={textIn(refused?.typed, "letter") ?? ""}
-              error={fields.letter}
-            />
-            {asksWhyNoFinding ? (
-              <TextField
-                name="returnWaivedReason"
-                label={t("returnWaived")}
-                hint={t("returnWaivedHint")}
-                maxLength={1000}
-                defaultValue={textIn(refused?.typed, "returnWaivedReason") ?? ""}
-                error={fields.returnWaivedReason}
-              />
-            ) : null}
-            <SubmitRow>
-              <SubmitButton>{t("submit")}</SubmitButton>
-            </SubmitRow>
-          </div>
-        </Card>
-      </div>
     </form>
+  );
+}
+
+type LetterProps = Pick<LineProps, "typed" | "fields"> & Pick<DecideFormProps, "asksWhyNoFinding">;
+
+function LetterCard({ typed, fields, asksWhyNoFinding }: LetterProps) {
+  const t = useTranslations("live.decide");
+  return (
+    <Card title={t("letterTitle")}>
+      <div className="grid gap-5">
+        <TextArea
+          name="letter"
+          label={t("letter")}
+          hint={t("letterHint")}
+          rows={6}
+          limit={4000}
+          defaultValue={textIn(typed, "letter") ?? ""}
+          error={fields.letter}
+        />
+        {asksWhyNoFinding ? (
+          <TextField
+            name="returnWaivedReason"
+            label={t("returnWaived")}
+            hint={t("returnWaivedHint")}
+            maxLength={1000}
+            defaultValue={textIn(typed, "returnWaivedReason") ?? ""}
+            error={fields.returnWaivedReason}
+          />
+        ) : null}
+        <SubmitRow>
+          <SubmitButton>{t("submit")}</SubmitButton>
+        </SubmitRow>
+      </div>
+    </Card>
   );
 }
 

@@ -9,6 +9,7 @@ import type { Locale } from "@/lib/kernel/locale";
 import { claimsAddress, curvesAddress } from "@/lib/reports/life-curves/address";
 import { GRADE_LIMITS, type Grade } from "@/lib/reliability/batch-grade";
 import { MOST_DRAWN } from "@/lib/reports/life-curves/schema";
+import { rateScale } from "@/lib/reports/life-curves/rate-scale";
 import type { BatchLine, LifeCurvesView } from "@/lib/reports/life-curves/view";
 import { figure, inMonths, pValue, withLimits } from "./figures";
 
@@ -22,18 +23,10 @@ const INK: Readonly<Record<Grade, string>> = {
   notYetKnown: "var(--ink-3)",
 };
 
-/** The scale of the dots: all rates, and the intervals as far as they do not flatten everything else. */
-function mostOf(batches: readonly BatchLine[]): number {
-  const rates = batches.flatMap(({ rate }) => (rate ? [rate.value] : []));
-  const highest = Math.max(1, ...rates);
-  const uppers = batches.flatMap(({ rate }) => (rate?.upper ? [rate.upper] : []));
-  return Math.ceil(Math.min(highest * 2, Math.max(highest, ...uppers)));
-}
-
 /** Every batch of the part, the one furthest above the others first. */
 export function BatchTable({ view, locale }: Props) {
   const t = useTranslations("lifeCurves.batches");
-  const most = mostOf(view.batches);
+  const most = rateScale(view.batches);
   return (
     <Card
       id="batches"
@@ -194,7 +187,7 @@ function RatioCell({ batch, view, locale }: Props & { batch: BatchLine }) {
 function DrawLink({ batch, view: { query, series } }: { batch: BatchLine; view: LifeCurvesView }) {
   const t = useTranslations("lifeCurves.batches");
   const drawn = series.flatMap(({ key }) => (key === null ? [] : [key]));
-  if (batch.units === 0) return null;
+  if (batch.units === 0) return "–";
   if (batch.style !== null)
     return drawn.length > 1 ? (
       <TextLink
@@ -203,7 +196,9 @@ function DrawLink({ batch, view: { query, series } }: { batch: BatchLine; view: 
       >
         {t("remove")}
       </TextLink>
-    ) : null;
+    ) : (
+      <span className="text-small text-ink-2">{t("drawn")}</span>
+    );
   if (drawn.length >= MOST_DRAWN) return <span className="text-small text-ink-2">{t("full")}</span>;
   return (
     <TextLink

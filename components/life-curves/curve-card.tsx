@@ -3,7 +3,7 @@ import { ChartFrame } from "@/components/chart/chart-frame";
 import { LifeCurveDrawing } from "@/components/chart/life-curve-drawing";
 import { Card } from "@/components/ui/card";
 import { TextLink } from "@/components/ui/link-button";
-import { formatNumber, formatPercent } from "@/lib/kernel/format";
+import { formatPercent } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
 import { claimsAddress, curvesAddress } from "@/lib/reports/life-curves/address";
 import type { LifeCurvesView } from "@/lib/reports/life-curves/view";
@@ -68,7 +68,7 @@ function Headline({ view, locale }: Props) {
   const share = (value: number) => formatPercent(value, locale, { least: 1 });
   if (compared)
     return t("headline", {
-      months: formatNumber(compared.ages.months, locale),
+      months: compared.ages.months,
       batch: compared.key,
       one: share(compared.ages.one),
       others: share(compared.ages.others),

@@ -14,40 +14,46 @@ export function RiskTable({ view, locale }: { view: LifeCurvesView; locale: Loca
   );
   const count = (value: number) => formatNumber(value, locale);
   return (
-    <Table caption={t("tableCaption")} isCaptionShown onPhone="scroll">
-      <TableHead>
-        <Th>{t("columns.curve")}</Th>
-        {longest.map(({ months }) => (
-          <Th key={months} isNumeric>
-            {count(months)}
-          </Th>
-        ))}
-      </TableHead>
-      <TableBody>
-        {all.map(({ key, risk }) => (
-          <Row key={key ?? ""}>
-            <RowHead>
-              <span className={key === null ? undefined : "font-mono font-semibold"}>
-                {key ?? t("others")}
-              </span>
-            </RowHead>
-            {longest.map(({ months }, place) => {
-              const cell = risk[place];
-              return (
-                <Td key={months} isNumeric>
-                  {cell
-                    ? t("cell", {
-                        atRisk: count(cell.atRisk),
-                        failed: count(cell.failed),
-                        ended: count(cell.ended),
-                      })
-                    : "–"}
-                </Td>
-              );
-            })}
-          </Row>
-        ))}
-      </TableBody>
-    </Table>
+    <div>
+      {/* Outside of the box that scrolls, where a phone would cut it off; the table's own caption is read out. */}
+      <p aria-hidden="true" className="pb-2 text-small text-ink-2">
+        {t("tableCaption")}
+      </p>
+      <Table caption={t("tableCaption")} onPhone="scroll">
+        <TableHead>
+          <Th>{t("columns.curve")}</Th>
+          {longest.map(({ months }) => (
+            <Th key={months} isNumeric>
+              {count(months)}
+            </Th>
+          ))}
+        </TableHead>
+        <TableBody>
+          {all.map(({ key, risk }) => (
+            <Row key={key ?? ""}>
+              <RowHead>
+                <span className={key === null ? undefined : "font-mono font-semibold"}>
+                  {key ?? t("others")}
+                </span>
+              </RowHead>
+              {longest.map(({ months }, place) => {
+                const cell = risk[place];
+                return (
+                  <Td key={months} isNumeric>
+                    {cell
+                      ? t("cell", {
+                          atRisk: count(cell.atRisk),
+                          failed: count(cell.failed),
+                          ended: count(cell.ended),
+                        })
+                      : "–"}
+                  </Td>
+                );
+              })}
+            </Row>
+          ))}
+        </TableBody>
+      </Table>
+    </div>
   );
 }

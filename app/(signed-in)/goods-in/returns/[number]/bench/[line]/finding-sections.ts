@@ -1,13 +1,39 @@
 import { getTranslations } from "next-intl/server";
 import type { FormField } from "@/components/record-form/fields";
 import type { FieldSection } from "@/components/record-form/record-form";
+import { formatNumber } from "@/lib/kernel/format";
+import type { Locale } from "@/lib/kernel/locale";
 import { familyOf } from "@/lib/parts/families";
 import { readingKindOf, type PartFamily } from "@/lib/parts/family";
 import { FINDING_KINDS } from "@/lib/returns/kinds";
-import type { BenchView } from "@/lib/returns/view";
+import type { BenchStepView, BenchView } from "@/lib/returns/view";
+
+type ReadStep = Extract<BenchStepView, { does: "read" }>;
+
+/** What the workshop measured, in words, so that it stands beside the field it is compared with. */
+async function measuredBefore({ theirs }: ReadStep, locale: Locale): Promise<string | undefined> {
+  const [t, words] = await Promise.all([
+    getTranslations("goodsIn.bench"),
+    getTranslations("returns.finding"),
+  ]);
+  if (theirs.length === 0) return undefined;
+  const values = theirs.map(({ value, unit, temperatureCelsius: celsius }) => {
+    if (value === null) return words("openCircuit");
+    const figures = { value: formatNumber(value, locale, { most: 2 }), unit };
+    return celsius === null
+      ? words("reading", figures)
+      : words("readingAt", { ...figures, celsius: formatNumber(celsius, locale, { most: 1 }) });
+  });
+  return t("theirsOf", { values: values.join(", ") });
+}
 
 /** The fields of one reading: the value with its unit, and its temperature where that belongs to it. */
-async function readingFields(family: PartFamily | null, reading: string): Promise<FormField[]> {
+async function readingFields(
+  family: PartFamily | null,
+  step: ReadStep,
+  locale: Locale,
+): Promise<FormField[]> {
+  const { reading } = step;
   const [t, names] = await Promise.all([
     getTranslations("goodsIn.bench"),
     getTranslations("ruleBook.readings"),
@@ -18,6 +44,7 @@ async function readingFields(family: PartFamily | null, reading: string): Promis
     kind: "line",
     name: `readings.${reading}.raw`,
     label: kind.unit === "" ? names(reading) : `${names(reading)}, ${kind.unit}`,
+    hint: await measuredBefore(step, locale),
     isOptional: true,
     maxLength: 60,
   };
@@ -32,10 +59,10 @@ async function readingFields(family: PartFamily | null, reading: string): Promis
 }
 
 /** The form of a finding: what it is, in words, the run, what was looked at and what was measured. */
-export async function findingSections({ line, steps }: BenchView): Promise<FieldSection[]> {
+export async function findingSections({ line, steps }: BenchView, locale: Locale): Promise<FieldSection[]> {
   const [t, words] = await Promise.all([getTranslations("goodsIn.bench"), getTranslations("returns")]);
   const family = familyOf(line.family);
-  const readings = steps.flatMap((step) => (step.does === "read" ? [step.reading] : []));
+  const readings = steps.flatMap((step) => (step.does === "read" ? [step] : []));
   return [
     {
       fields: [
@@ -58,7 +85,7 @@ export async function findingSections({ line, steps }: BenchView): Promise<Field
     },
     {
       title: t("readings"),
-      fields: (await Promise.all(readings.map((reading) => readingFields(family, reading)))).flat(),
+      fields: (await Promise.all(readings.map((step) => readingFields(family, step, locale)))).flat(),
     },
     {
       title: t("looks"),

@@ -13,6 +13,7 @@ import { TextLink } from "@/components/ui/link-button";
 import { PageHeader } from "@/components/ui/page-header";
 import { listEvidenceOfClaim } from "@/lib/evidence-files/queries";
 import { BENCH_FILES, benchRowId } from "@/lib/evidence/bench-rows";
+import type { Locale } from "@/lib/kernel/locale";
 import { familyOf } from "@/lib/parts/families";
 import { findBench } from "@/lib/returns/bench-queries";
 import { DISPOSALS } from "@/lib/returns/kinds";
@@ -49,7 +50,7 @@ export default async function BenchPage({ params }: Props) {
   const canExamine = bench.line.moves.includes("examine");
   const canDispose = bench.line.moves.includes("dispose");
   return (
-    <div className="grid max-w-3xl gap-6">
+    <div className="grid gap-6">
       <PageHeader
         eyebrow={
           <TextLink href={returnPath(bench.returned)}>
@@ -60,21 +61,28 @@ export default async function BenchPage({ params }: Props) {
         note={bench.returned.workshopName}
       />
       {family ? <Cautions family={family} isFolded={!bench.line.isQuarantined} /> : null}
-      <Card>
-        <ReturnLine line={bench.line} limits={null} locale={actor.locale} timeZone={actor.timeZone} />
-      </Card>
-      {canDispose ? <DisposeCard bench={bench} /> : null}
-      <BenchPlan bench={bench} locale={actor.locale} />
-      {canExamine ? (
-        <>
-          <BenchFiles
-            bench={bench}
-            files={(await listEvidenceOfClaim(actor, bench.returned.claimNumber)) ?? []}
-          />
-          <FindingCard bench={bench} />
-        </>
-      ) : null}
-      {canExamine || canDispose ? null : <p className="text-ink-2">{t("closed")}</p>}
+      {/* What the claim says comes first; on a desk it stands beside the form that answers it. */}
+      <div className="grid max-w-3xl items-start gap-6 xl:max-w-none xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
+        <div className="grid gap-6 xl:col-start-2 xl:row-start-1">
+          <Card>
+            <ReturnLine line={bench.line} limits={null} locale={actor.locale} timeZone={actor.timeZone} />
+          </Card>
+          <BenchPlan bench={bench} locale={actor.locale} />
+        </div>
+        <div className="grid gap-6">
+          {canDispose ? <DisposeCard bench={bench} /> : null}
+          {canExamine ? (
+            <>
+              <BenchFiles
+                bench={bench}
+                files={(await listEvidenceOfClaim(actor, bench.returned.claimNumber)) ?? []}
+              />
+              <FindingCard bench={bench} locale={actor.locale} />
+            </>
+          ) : null}
+          {canExamine || canDispose ? null : <p className="text-ink-2">{t("closed")}</p>}
+        </div>
+      </div>
     </div>
   );
 }
@@ -108,7 +116,7 @@ async function BenchFiles({ bench, files }: { bench: BenchView; files: Files }) 
   );
 }
 
-async function FindingCard({ bench }: { bench: BenchView }) {
+async function FindingCard({ bench, locale }: { bench: BenchView; locale: Locale }) {
   const [t, danger] = await Promise.all([
     getTranslations("goodsIn.bench"),
     getTranslations("goodsIn.danger"),
@@ -126,7 +134,7 @@ async function FindingCard({ bench }: { bench: BenchView }) {
           action={examineAction}
           hidden={{ number: returned.number, lineNumber: String(line.lineNumber) }}
           submit={t(line.finding ? "submitAgain" : "submit")}
-          sections={await findingSections(bench)}
+          sections={await findingSections(bench, locale)}
         />
       </div>
     </Card>
