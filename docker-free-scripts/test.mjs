@@ -1,5 +1,6 @@
 // npm test [-- --only=static,unit,database,browser] [file filters for the runners]
-import { spawnSync } from "node:child_process";
+import { spawn } from "node:child_process";
+import { once } from "node:events";
 import { existsSync, mkdtempSync, readFileSync, rmSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
@@ -27,13 +28,14 @@ const folder = mkdtempSync(join(tmpdir(), "partproof-test-"));
 const reportOf = (name) => join(folder, `${name}.json`);
 
 /** Runs a test runner to its end and counts from its report; no report at all is one failure. */
-function runTests({ name, args, env, count }) {
-  const run = spawnSync(process.execPath, args, { cwd: root, env, stdio: ["ignore", "inherit", "inherit"] });
+async function runTests({ name, args, env, count }) {
+  const run = spawn(process.execPath, args, { cwd: root, env, stdio: ["ignore", "inherit", "inherit"] });
+  const [status] = await once(run, "close");
   const report = reportOf(name);
   const counted = existsSync(report)
     ? count(JSON.parse(readFileSync(report, "utf8")))
     : { passed: 0, failed: 1 };
-  if (run.status !== 0 && counted.failed === 0) counted.failed = 1;
+  if (status !== 0 && counted.failed === 0) counted.failed = 1;
   add(counted);
   return `${counted.passed} passed, ${counted.failed} failed`;
 }
@@ -68,9 +70,10 @@ async function runWithoutServices() {
     await makeRouteTypes();
     add(await runStatic(staticSteps()));
   }
-  if (wants("unit"))
-    await step("Unit tests", () => runVitest("unit", { ...process.env, NODE_NO_WARNINGS: "1" }));
 }
+
+const runUnit = async () =>
+  wants("unit") && step("Unit tests", () => runVitest("unit", { ...process.env, NODE_NO_WARNINGS: "1" }));
 
 /** What the web said of its own faults: the first thing wanted after a failure. */
 function printFaults(log) {
@@ -111,8 +114,11 @@ async function runWithServices() {
     const { environment, ports } = await start();
     if (wants("database"))
       await step("Database and route tests", () => runVitest("database", { ...process.env, ...environment }));
-    if (wants("browser"))
-      await runInBrowser({ processes, ports, environment, log: join(log, "log", "web.log") });
+    // One browser leaves a core idle: what needs no service is done beside it.
+    await Promise.all([
+      runUnit(),
+      wants("browser") && runInBrowser({ processes, ports, environment, log: join(log, "log", "web.log") }),
+    ]);
   } finally {
     await clean();
   }
@@ -124,6 +130,7 @@ async function main() {
   await step("npm packages", needModules);
   await runWithoutServices();
   if (wants("database") || wants("browser")) await runWithServices();
+  else await runUnit();
 }
 
 main()

@@ -2,7 +2,7 @@
 
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { useTranslations } from "next-intl";
-import { useId } from "react";
+import { useEffect, useId, useRef } from "react";
 import { useDropzone } from "react-dropzone";
 import { fetchJson } from "@/components/live/fetch-json";
 import { Button } from "@/components/ui/button";
@@ -125,18 +125,26 @@ type FilePickProps = {
 
 /** A native picker under a label that looks like a button: a phone offers its camera, a desk its folders. It has no name: the form never carries the bytes. */
 function FilePick({ id, label, accept, isCamera = false, onTake }: FilePickProps) {
+  const picker = useRef<HTMLInputElement>(null);
+  const takeFrom = (input: HTMLInputElement) => {
+    const chosen = [...(input.files ?? [])];
+    input.value = "";
+    if (chosen.length > 0) onTake(chosen);
+  };
+  // What was chosen before the page could listen is still in the picker, and nobody would ask for it again.
+  useEffect(() => {
+    if (picker.current?.files?.length) takeFrom(picker.current);
+  });
   return (
     <span className="relative grid">
       <input
+        ref={picker}
         id={id}
         type="file"
         accept={accept}
         multiple={!isCamera}
         capture={isCamera ? "environment" : undefined}
-        onChange={(event) => {
-          onTake([...(event.target.files ?? [])]);
-          event.target.value = "";
-        }}
+        onChange={(event) => takeFrom(event.target)}
         className="peer absolute inset-0 size-full cursor-pointer opacity-0"
       />
       <label
