@@ -1,4 +1,3 @@
-import clsx from "clsx";
 import type { Route } from "next";
 import { useTranslations } from "next-intl";
 import { formatNumber, formatPercent } from "@/lib/kernel/format";
@@ -13,6 +12,7 @@ import {
 } from "./life-curve-plot";
 import { cutTo } from "./run-log-labels";
 import { SeriesMark } from "./run-log-marker";
+import { ChartSvg } from "./chart-svg";
 import { CHART_INK, SERIES } from "./series-style";
 
 /** The address of the claims behind a point: whose curve (null: the others), from one age in days to another. */
@@ -62,15 +62,7 @@ type Sized = DrawingProps & { plot: LifePlot; width: number; signs: number; clas
 function Drawing({ plot, title, description, opens, locale, width, signs, className }: Sized) {
   const t = useTranslations("lifeCurves.curve");
   return (
-    <svg
-      role="group"
-      aria-label={title}
-      viewBox={`0 0 ${width} ${plot.bottom + 52}`}
-      className={clsx("h-auto w-full font-text tabular-nums", className)}
-      fontSize={15}
-    >
-      <title>{title}</title>
-      <desc>{description}</desc>
+    <ChartSvg {...{ title, description, width, className }} height={plot.bottom + 52}>
       <Axes plot={plot} locale={locale} />
       {plot.curves.map((curve) => (
         <Curve key={curve.key ?? ""} curve={curve} />
@@ -101,7 +93,7 @@ function Drawing({ plot, title, description, opens, locale, width, signs, classN
           </a>
         )),
       )}
-    </svg>
+    </ChartSvg>
   );
 }
 

@@ -1,10 +1,10 @@
-import clsx from "clsx";
 import type { Route } from "next";
 import { useTranslations } from "next-intl";
 import { formatNumber } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
 import type { MonthLine } from "@/lib/reports/life-curves/view";
 import { monthPlot, type MonthBar, type MonthPlot } from "./month-rates-plot";
+import { ChartSvg } from "./chart-svg";
 import { CHART_INK, SERIES } from "./series-style";
 
 type DrawingProps = {
@@ -53,15 +53,7 @@ function Drawing({ plot, months, title, description, opens, locale, width, class
   const t = useTranslations("lifeCurves.months");
   const byMonth = new Map(months.map((line) => [line.month, line]));
   return (
-    <svg
-      role="group"
-      aria-label={title}
-      viewBox={`0 0 ${width} ${plot.bottom + 52}`}
-      className={clsx("h-auto w-full font-text tabular-nums", className)}
-      fontSize={15}
-    >
-      <title>{title}</title>
-      <desc>{description}</desc>
+    <ChartSvg {...{ title, description, width, className }} height={plot.bottom + 52}>
       <Axes plot={plot} locale={locale} />
       {plot.bars.map((bar) => {
         const line = byMonth.get(bar.month);
@@ -82,7 +74,7 @@ function Drawing({ plot, months, title, description, opens, locale, width, class
           <Bar key={bar.month} bar={bar} plot={plot} />
         );
       })}
-    </svg>
+    </ChartSvg>
   );
 }
 

@@ -1,4 +1,3 @@
-import clsx from "clsx";
 import { useTranslations } from "next-intl";
 import { useId } from "react";
 import { formatNumber, formatPercent } from "@/lib/kernel/format";
@@ -7,6 +6,7 @@ import type { Series } from "@/lib/reports/life-curves/view";
 import type { Opens } from "./life-curve-drawing";
 import { cutTo } from "./run-log-labels";
 import { SeriesMark } from "./run-log-marker";
+import { ChartSvg } from "./chart-svg";
 import { CHART_INK, SERIES } from "./series-style";
 import { weibullPlot, type ProbabilityLine, type ProbabilityPoint, type WeibullPlot } from "./weibull-plot";
 
@@ -57,15 +57,7 @@ function Drawing({ plot, title, description, opens, locale, width, signs, classN
   const id = useId();
   const { left, right, top, bottom } = plot;
   return (
-    <svg
-      role="group"
-      aria-label={title}
-      viewBox={`0 0 ${width} ${bottom + 52}`}
-      className={clsx("h-auto w-full font-text tabular-nums", className)}
-      fontSize={15}
-    >
-      <title>{title}</title>
-      <desc>{description}</desc>
+    <ChartSvg {...{ title, description, width, className }} height={bottom + 52}>
       <clipPath id={id}>
         <rect x={left} y={top - 6} width={right - left} height={bottom - top + 12} />
       </clipPath>
@@ -84,7 +76,7 @@ function Drawing({ plot, title, description, opens, locale, width, signs, classN
         </g>
       ))}
       <EndLabels plot={plot} signs={signs} />
-    </svg>
+    </ChartSvg>
   );
 }
 

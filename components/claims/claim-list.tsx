@@ -13,7 +13,6 @@ import { Pagination } from "@/components/ui/pagination";
 import { Serial } from "@/components/ui/serial";
 import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
 import { TextField } from "@/components/ui/text-field";
-import { isCurrency } from "@/lib/kernel/currency";
 import { formatMoney } from "@/lib/kernel/format";
 import { money } from "@/lib/kernel/money";
 import type { ClaimItem, ClaimItems } from "@/lib/claims/lists/view";
@@ -194,7 +193,6 @@ function ListTable({ path, query, list, side, locale, timeZone }: ClaimListProps
 
 function ClaimRow({ item, side, locale, timeZone }: Reader & { item: ClaimItem; side: Side }) {
   const t = useTranslations("live.lists");
-  const currency = isCurrency(item.currency) ? item.currency : "EUR";
   return (
     <Row isAlarming={side === "distributor" && item.safetyReported}>
       <RowHead>
@@ -219,7 +217,7 @@ function ClaimRow({ item, side, locale, timeZone }: Reader & { item: ClaimItem; 
       </Td>
       <Td label={t(`columns.${side === "distributor" ? "workshop" : "distributor"}`)}>{item.otherParty}</Td>
       <Td label={t("columns.asked")} isNumeric>
-        {formatMoney(money(BigInt(item.askedMinor), currency), locale)}
+        {formatMoney(money(BigInt(item.askedMinor), item.currency), locale)}
       </Td>
     </Row>
   );

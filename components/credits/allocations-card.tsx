@@ -1,5 +1,6 @@
 import { useTranslations } from "next-intl";
 import type { ReactNode } from "react";
+import { ActionButton } from "@/components/record-form/action-button";
 import { Card } from "@/components/ui/card";
 import { MoneyLine, MoneyTotal } from "@/components/ui/money-total";
 import { Row, RowHead, Table, TableBody, TableHead, Td, Th } from "@/components/ui/table";
@@ -9,7 +10,6 @@ import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { formatDay, formatMoney } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
 import type { Money } from "@/lib/kernel/money";
-import { TakeBackButton } from "./take-back-button";
 
 export type AllocationItem = {
   readonly id: string;
@@ -90,11 +90,12 @@ function AllocationTable({ number, allocations, takeBack, locale }: TableProps) 
             <Td label={t("reference")}>
               {one.reference}
               {takeBack && !one.isTakenBack && !one.isTakingBack ? (
-                <TakeBackButton
+                <ActionButton
                   action={takeBack}
-                  number={number}
-                  allocationId={one.id}
+                  fields={{ number, allocationId: one.id }}
                   label={t("takeBack")}
+                  kind="quiet"
+                  small
                 />
               ) : null}
             </Td>

@@ -1,5 +1,5 @@
 import { useTranslations } from "next-intl";
-import { MatchButton } from "./match-button";
+import { ActionButton } from "@/components/record-form/action-button";
 import { Card } from "@/components/ui/card";
 import { Serial } from "@/components/ui/serial";
 import type { FormAction } from "@/lib/kernel/action-result";
@@ -22,10 +22,11 @@ export function MatchCard({ match, parcelId, isInCharge, action }: MatchCardProp
           </li>
         ))}
       </ul>
-      <MatchButton
+      <ActionButton
         action={action}
         fields={{ parcelId, number: match.number }}
         label={t("submit", { printed: match.printed })}
+        isWideOnPhone
         kind={isInCharge ? "primary" : "secondary"}
       />
     </Card>

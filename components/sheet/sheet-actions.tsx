@@ -1,8 +1,8 @@
 import { useTranslations } from "next-intl";
 import { LinkButton } from "@/components/ui/link-button";
+import { ActionButton } from "@/components/record-form/action-button";
 import type { SheetView } from "@/lib/claims/sheet/view";
 import type { FormAction } from "@/lib/kernel/action-result";
-import { MoveButton } from "./move-button";
 import { ReasonDrawer } from "./reason-drawer";
 import { VerdictActions, type AfterVerdict } from "./verdict-actions";
 
@@ -28,7 +28,7 @@ export function SheetActions({ sheet, base, colleagues, actions }: SheetActionsP
   if (sheet.moves.length === 0 && !sheet.canTakeOver) return null;
   return (
     <div className="flex flex-wrap items-start gap-2 print:hidden">
-      {can("take") ? <MoveButton action={actions.take} number={number} label={t("take")} /> : null}
+      {can("take") ? <ActionButton action={actions.take} fields={{ number }} label={t("take")} /> : null}
       {can("decide") ? (
         <LinkButton href={`${base}/decide`} kind="primary">
           {t("decide")}
@@ -83,7 +83,12 @@ export function SheetActions({ sheet, base, colleagues, actions }: SheetActionsP
       {sheet.canTakeOver ? (
         <span className="flex flex-wrap items-center gap-3">
           <span className="text-ink-2">{t("heldBy", { name: sheet.holderName ?? "" })}</span>
-          <MoveButton action={actions.takeOver} number={number} label={t("takeOver")} kind="secondary" />
+          <ActionButton
+            action={actions.takeOver}
+            fields={{ number }}
+            label={t("takeOver")}
+            kind="secondary"
+          />
         </span>
       ) : null}
     </div>

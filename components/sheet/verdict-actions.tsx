@@ -1,7 +1,7 @@
 import { useTranslations } from "next-intl";
+import { ActionButton } from "@/components/record-form/action-button";
 import type { SheetView } from "@/lib/claims/sheet/view";
 import type { FormAction } from "@/lib/kernel/action-result";
-import { MoveButton } from "./move-button";
 import { ReasonDrawer } from "./reason-drawer";
 
 export type AfterVerdict = { contest: FormAction; accept: FormAction; reopen: FormAction };
@@ -24,7 +24,7 @@ export function VerdictActions({ sheet, actions }: { sheet: SheetView; actions: 
         />
       ) : null}
       {sheet.canAccept ? (
-        <MoveButton action={actions.accept} number={number} label={t("accept")} kind="secondary" />
+        <ActionButton action={actions.accept} fields={{ number }} label={t("accept")} kind="secondary" />
       ) : null}
       {moves.includes("reopen") ? (
         <ReasonDrawer

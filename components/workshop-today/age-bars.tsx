@@ -1,16 +1,8 @@
 import { useTranslations } from "next-intl";
-
-export type AgesShown = {
-  readonly bands: readonly {
-    readonly code: "week" | "month" | "twoMonths" | "older";
-    readonly count: number;
-  }[];
-  readonly openDays: number;
-  readonly oldestDays: number;
-};
+import type { Ages } from "@/lib/reports/workshop-today/ages";
 
 /** Open claims by age: the numbers stand beside the bars, which only repeat them. */
-export function AgeBars({ ages }: { ages: AgesShown }) {
+export function AgeBars({ ages }: { ages: Ages }) {
   const t = useTranslations("workshopToday");
   const most = Math.max(1, ...ages.bands.map(({ count }) => count));
   return (

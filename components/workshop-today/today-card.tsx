@@ -5,24 +5,15 @@ import type { ReactNode } from "react";
 import { Card } from "@/components/ui/card";
 import { TextLink } from "@/components/ui/link-button";
 import { printClaimNumber } from "@/lib/claims/number";
-import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { formatDay, formatMoney } from "@/lib/kernel/format";
 import type { Locale } from "@/lib/kernel/locale";
 import type { Money } from "@/lib/kernel/money";
-import { AgeBars, type AgesShown } from "./age-bars";
+import type { WorkshopToday } from "@/lib/reports/workshop-today/view";
+import { AgeBars } from "./age-bars";
 
-type Today = {
-  readonly ages: AgesShown;
-  readonly openCount: number;
-  readonly asked: readonly Money[];
-  readonly promised: readonly Money[];
-  readonly creditedThisMonth: readonly Money[];
-  readonly toSend: readonly { readonly number: string; readonly dueOn: CalendarDay }[];
-  readonly contestSoon: readonly { readonly number: string; readonly until: CalendarDay }[];
-};
 type Reader = { readonly locale: Locale };
 type TodayProps = Reader & {
-  today: Today;
+  today: WorkshopToday;
   onUs: number;
   onThem: number;
   /** Where the credit notes are, for a person who may see them. */
@@ -89,7 +80,7 @@ function Figure({ label, value, href }: FigureProps) {
   );
 }
 
-function Deadlines({ today, locale }: Reader & { today: Today }) {
+function Deadlines({ today, locale }: Reader & { today: WorkshopToday }) {
   const t = useTranslations("workshopToday");
   const due = [
     ...today.toSend.map(({ number, dueOn }) => ({ number, on: dueOn, what: "toSend" as const })),

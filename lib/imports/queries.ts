@@ -1,8 +1,8 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import { todayOf } from "@/lib/access/today-queries";
 import { hasRight } from "@/lib/access/rights";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
-import { dayInZone } from "@/lib/kernel/calendar-day";
 import { LIMITS, mostBytes } from "@/lib/kernel/limits";
 import { readAll } from "@/lib/storage/objects";
 import { Organisation } from "@/models/organisation";
@@ -84,7 +84,7 @@ function keepingAwake(work: Work): () => Promise<void> {
 
 /** Every line of a file against the accounts, parts, invoice lines and units of this organisation, as of now. */
 export async function checkFile(work: Work, file: CsvFile): Promise<Check> {
-  const today = dayInZone(new Date(), work.actor.timeZone);
+  const today = todayOf(work.actor);
   const catalogue = await findCatalogue(work, file);
   const awake = keepingAwake(work);
   const read = await inSlices(readLines(file, { catalogue, today }), awake);

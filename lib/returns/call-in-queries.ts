@@ -1,7 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import type { ClaimState, ReturnState } from "@/lib/claims/lifecycle";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
 import { addDays, type CalendarDay } from "@/lib/kernel/calendar-day";
 import { partMovesOpenTo } from "./lifecycle";

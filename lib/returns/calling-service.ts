@@ -2,7 +2,7 @@ import "server-only";
 import { randomInt } from "node:crypto";
 import type { Actor } from "@/lib/access/actor";
 import { clockStanding } from "@/lib/claims/clock/distributor-clock";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { claimForChange } from "@/lib/claims/moves/service";
 import { printClaimNumber } from "@/lib/claims/number";
 import { nameOf } from "@/lib/claims/parties/queries";

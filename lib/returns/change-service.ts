@@ -2,7 +2,7 @@ import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { clockRunning } from "@/lib/claims/clock/distributor-clock";
 import type { ReturnState } from "@/lib/claims/lifecycle";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { appendToTimeline } from "@/lib/claims/timeline/service";
 import { rows, undoing, type Work } from "@/lib/db/unit-of-work";
 import type { CalendarDay } from "@/lib/kernel/calendar-day";

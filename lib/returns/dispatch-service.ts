@@ -1,6 +1,6 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { rows } from "@/lib/db/unit-of-work";
 import { isAfter } from "@/lib/kernel/calendar-day";
 import { ok, refuse } from "@/lib/kernel/outcome";

@@ -1,6 +1,6 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import { dayInZone } from "@/lib/kernel/calendar-day";
+import { todayOf } from "@/lib/access/today-queries";
 import { normaliseSerial } from "@/lib/labels/serial";
 import { familyOf } from "@/lib/parts/families";
 import type { FindingRow, ReturnLineRow, ReturnRow } from "./card-queries";
@@ -57,7 +57,7 @@ function presentLine(
 ): ReturnLineView {
   const family = familyOf(line.family);
   const isSeller = actor.organisationId === returned.sellerId;
-  const today = dayInZone(new Date(), actor.timeZone);
+  const today = todayOf(actor);
   return {
     lineId: line.lineId,
     lineNumber: line.lineNumber,

@@ -1,6 +1,6 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { claimPath } from "@/lib/claims/paths";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
 import { bestMatches } from "./match";

@@ -1,7 +1,8 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import { todayOf } from "@/lib/access/today-queries";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
-import { dayInZone, type CalendarDay } from "@/lib/kernel/calendar-day";
+import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { presentBook, type StoredRule } from "./present";
 import type { RuleView } from "./rule-view";
 
@@ -20,7 +21,7 @@ export type Book = {
  */
 export const readBook = (actor: Actor, ownerId: string): Promise<Book> =>
   unitOfWork(actor, async (work) => {
-    const day = dayInZone(new Date(), actor.timeZone);
+    const day = todayOf(actor);
     const owners = await rows<BookOwner>(
       work,
       `select o.id, o.name from organisations o

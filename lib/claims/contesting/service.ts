@@ -5,7 +5,7 @@ import { isAfter } from "@/lib/kernel/calendar-day";
 import { ok, refuse } from "@/lib/kernel/outcome";
 import { answerDueAt } from "@/lib/rule-book/queries";
 import { movesOpenTo } from "../lifecycle";
-import { todayOf } from "../judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { claimForChange, moveClaim, type Moved } from "../moves/service";
 import { appendToTimeline } from "../timeline/service";
 import { isContestOpen } from "./open";

@@ -1,5 +1,6 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import { todayOf } from "@/lib/access/today-queries";
 import { coverageOn, type Coverage } from "@/lib/coverage/coverage";
 import {
   asSeenByWorkshop,
@@ -212,7 +213,7 @@ type UnitToPreview = {
 /** The cover of a unit as it would stand if it failed today: what a technician wants to know before starting. */
 export const previewCover = (actor: Actor, unit: UnitToPreview): Promise<Coverage> =>
   unitOfWork(actor, async (work) => {
-    const today = dayInZone(new Date(), actor.timeZone);
+    const today = todayOf(actor);
     const { coverage } = await coverageOfLine(work, {
       claimId: NO_CLAIM,
       sellerId: unit.sellerId,

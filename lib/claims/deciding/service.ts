@@ -12,7 +12,7 @@ import type { Claim } from "@/models/claim";
 import { coverageForBoth, lineToCover, type CoveredLine } from "../cover/queries";
 import { claimFacts, type ClaimFacts } from "../facts-shape";
 import { nameOf } from "../parties/queries";
-import { todayOf } from "../judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { moveClaim } from "../moves/service";
 import { printClaimNumber } from "../number";
 import { claimPath } from "../paths";

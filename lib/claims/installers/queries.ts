@@ -1,7 +1,8 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import { todayOf } from "@/lib/access/today-queries";
 import { rows, unitOfWork } from "@/lib/db/unit-of-work";
-import { dayInZone, type CalendarDay } from "@/lib/kernel/calendar-day";
+import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { EARLY_DAYS, type InstallerCounts } from "./record";
 
 // A fitting counts once its first days are over, or once it has failed within them: before that nothing is known of it.
@@ -28,7 +29,7 @@ export type InstallerRow = InstallerCounts & {
   readonly leftOn: CalendarDay | null;
 };
 
-const bindings = (actor: Actor) => [actor.organisationId, EARLY_DAYS, dayInZone(new Date(), actor.timeZone)];
+const bindings = (actor: Actor) => [actor.organisationId, EARLY_DAYS, todayOf(actor)];
 
 /** Who fits parts at the actor's workshop, by name, with what became of what they fitted. */
 export const listInstallerRecords = (actor: Actor): Promise<InstallerRow[]> =>

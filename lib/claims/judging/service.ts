@@ -1,7 +1,8 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import { todayOf } from "@/lib/access/today-queries";
 import { rows, undoing, type Work } from "@/lib/db/unit-of-work";
-import { addDays, dayInZone, type CalendarDay } from "@/lib/kernel/calendar-day";
+import { addDays, type CalendarDay } from "@/lib/kernel/calendar-day";
 import { ok, refuse } from "@/lib/kernel/outcome";
 import { mailClaimPeople } from "@/lib/mail/outbox";
 import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
@@ -18,9 +19,6 @@ import { nameOf } from "../parties/queries";
 
 const HOLD_MINUTES = 10;
 const holdFromNow = () => new Date(Date.now() + HOLD_MINUTES * 60_000);
-
-/** The day it is now where the actor's organisation works. */
-export const todayOf = (actor: Actor): CalendarDay => dayInZone(new Date(), actor.timeZone);
 
 /** Takes a claim from the list: from now on this assessor holds it, for ten minutes at a time. */
 export const takeClaim = (actor: Actor, { number }: { number: string }) =>

@@ -1,3 +1,4 @@
+import type { Currency } from "@/lib/kernel/currency";
 import type { ClaimState, VerdictOutcome } from "../lifecycle";
 import type { ListView } from "./schema";
 
@@ -16,7 +17,7 @@ export type ClaimItem = {
   readonly otherParty: string;
   readonly lineCount: number;
   readonly askedMinor: string;
-  readonly currency: string;
+  readonly currency: Currency;
   readonly filedAt: string | null;
   readonly updatedAt: string;
   readonly answerDueAt: string | null;

@@ -1,8 +1,9 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import { todayOf } from "@/lib/access/today-queries";
 import type { Coverage } from "@/lib/coverage/coverage";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
-import { calendarDay, dayInZone } from "@/lib/kernel/calendar-day";
+import { calendarDay } from "@/lib/kernel/calendar-day";
 import { familyOf } from "@/lib/parts/families";
 import { evidenceListOn, findRule } from "@/lib/rule-book/queries";
 import { coverageOfLine, lineToCover } from "../cover/queries";
@@ -112,6 +113,6 @@ export const findClaimSheet = (actor: Actor, number: string): Promise<SheetView 
     if (!sheet || !seesClaim(actor, sheet.claim)) return null;
     return presentSheet(actor, sheet, {
       ...(await workOut(work, sheet)),
-      todayOn: dayInZone(new Date(), actor.timeZone),
+      todayOn: todayOf(actor),
     });
   });

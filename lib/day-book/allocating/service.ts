@@ -1,7 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { askToSettle } from "@/lib/claims/contesting/service";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { appendToTimeline } from "@/lib/claims/timeline/service";
 import { allocateNote, type AllocationRefusal, type AllocationWay } from "@/lib/credits/ledger";
 import { rows, undoing, type Work } from "@/lib/db/unit-of-work";

@@ -1,7 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { creditRulesOn, lineNumbersOwed } from "@/lib/claims/deciding/credit-service";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { appendToTimeline } from "@/lib/claims/timeline/service";
 import { counterNote } from "@/lib/credits/ledger";
 import { counterDocument, type NoteDocument } from "@/lib/credits/note-document";

@@ -1,7 +1,7 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
 import { creditRulesOn, lineNumbersOwed, standingNote } from "@/lib/claims/deciding/credit-service";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { claimForChange } from "@/lib/claims/moves/service";
 import { appendToTimeline } from "@/lib/claims/timeline/service";
 import type { Credit } from "@/lib/credits/credit";

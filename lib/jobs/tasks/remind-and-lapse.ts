@@ -6,6 +6,7 @@ import { calendarDay } from "@/lib/kernel/calendar-day";
 import type { MailParams } from "@/lib/mail/outbox";
 import { log } from "@/lib/web/log";
 import { publicUrl } from "@/lib/web/settings";
+import type { Connections } from "../connections";
 
 type Waiting = {
   query_id: string;
@@ -13,11 +14,6 @@ type Waiting = {
   lapses_on: string;
   today: string;
   reminders_sent: number;
-};
-
-/** Of what the worker hands a task, all that this one needs. */
-type Connections = {
-  readonly withPgClient: <T>(act: (client: PoolClient) => Promise<T>) => Promise<T>;
 };
 
 type Held = Waiting & {

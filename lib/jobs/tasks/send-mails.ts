@@ -4,6 +4,7 @@ import { isLocale, type Locale } from "@/lib/kernel/locale";
 import { letterFor } from "@/lib/mail/letter";
 import { sendLetter } from "@/lib/mail/transport";
 import { log } from "@/lib/web/log";
+import type { Connections } from "../connections";
 
 type Waiting = {
   id: string;
@@ -13,11 +14,6 @@ type Waiting = {
   params: Record<string, unknown>;
   request_id: string | null;
   tries: number;
-};
-
-/** Of what the worker hands a task, all that this one needs. */
-type Connections = {
-  readonly withPgClient: <T>(act: (client: PoolClient) => Promise<T>) => Promise<T>;
 };
 
 const AT_ONCE = 20;

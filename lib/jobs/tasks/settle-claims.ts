@@ -1,10 +1,6 @@
 import type { PoolClient } from "pg";
 import { log } from "@/lib/web/log";
-
-/** Of what the worker hands a task, all that this one needs. */
-type Connections = {
-  readonly withPgClient: <T>(act: (client: PoolClient) => Promise<T>) => Promise<T>;
-};
+import type { Connections } from "../connections";
 
 /** A claim on its own: asked again under its lock whether it still is due, because somebody may have contested it first. */
 const settle = async (client: PoolClient, claimId: string): Promise<boolean> => {

@@ -1,24 +1,13 @@
 import "server-only";
 import type { Actor } from "@/lib/access/actor";
+import { todayOf } from "@/lib/access/today-queries";
 import { seesSide } from "@/lib/claims/seeing";
 import { rows, unitOfWork, type Work } from "@/lib/db/unit-of-work";
-import { dayInZone, type CalendarDay } from "@/lib/kernel/calendar-day";
+import type { CalendarDay } from "@/lib/kernel/calendar-day";
 import { currencyFrom } from "@/lib/kernel/currency";
 import { money, type Money } from "@/lib/kernel/money";
-import { agesOf, sumsByCurrency, type Ages, type Sum } from "./ages";
-
-/** What a workshop's overview says above its list. Sums are by currency; none where there is nothing. */
-export type WorkshopToday = {
-  readonly ages: Ages;
-  readonly openCount: number;
-  readonly asked: readonly Money[];
-  readonly promised: readonly Money[];
-  readonly creditedThisMonth: readonly Money[];
-  /** Parts the distributor called in that are still here, by claim, the first due first. */
-  readonly toSend: readonly { readonly number: string; readonly dueOn: CalendarDay }[];
-  /** Verdicts that can be contested for a week or less. */
-  readonly contestSoon: readonly { readonly number: string; readonly until: CalendarDay }[];
-};
+import { agesOf, sumsByCurrency, type Sum } from "./ages";
+import type { WorkshopToday } from "./view";
 
 type Row = { currency: string; minor: string };
 
@@ -87,5 +76,5 @@ async function readToday(work: Work, today: CalendarDay): Promise<WorkshopToday>
 /** How the actor's workshop stands today, on its own calendar; null for a person whose roles do not go with that side. */
 export const findWorkshopToday = (actor: Actor): Promise<WorkshopToday | null> =>
   seesSide(actor, "own")
-    ? unitOfWork(actor, (work) => readToday(work, dayInZone(new Date(), actor.timeZone)))
+    ? unitOfWork(actor, (work) => readToday(work, todayOf(actor)))
     : Promise.resolve(null);

@@ -1,7 +1,7 @@
 import type { Metadata } from "next";
 import { notFound } from "next/navigation";
 import { getTranslations } from "next-intl/server";
-import { MemberButton } from "@/components/people-list/member-button";
+import { ActionButton } from "@/components/record-form/action-button";
 import { RecordForm } from "@/components/record-form/record-form";
 import { Card } from "@/components/ui/card";
 import { PageHeader } from "@/components/ui/page-header";
@@ -61,7 +61,12 @@ async function Access({ person, isReader }: { person: Person; isReader: boolean 
     return (
       <Card title={t("accessTitle")}>
         <p className="mb-4 max-w-measure">{t("onNote")}</p>
-        <MemberButton action={switchOnAction} personId={id} label={t("switchOn")} />
+        <ActionButton
+          action={switchOnAction}
+          fields={{ personId: id }}
+          label={t("switchOn")}
+          kind="secondary"
+        />
       </Card>
     );
   return (
@@ -70,12 +75,22 @@ async function Access({ person, isReader }: { person: Person; isReader: boolean 
         {state === "invited" ? (
           <div className="grid gap-3">
             <p className="max-w-measure">{t("invitedNote")}</p>
-            <MemberButton action={inviteAgainAction} personId={id} label={t("inviteAgain")} />
+            <ActionButton
+              action={inviteAgainAction}
+              fields={{ personId: id }}
+              label={t("inviteAgain")}
+              kind="secondary"
+            />
           </div>
         ) : null}
         <div className="grid gap-3">
           <p className="max-w-measure">{t("offNote")}</p>
-          <MemberButton action={switchOffAction} personId={id} label={t("switchOff")} isGrave />
+          <ActionButton
+            action={switchOffAction}
+            fields={{ personId: id }}
+            label={t("switchOff")}
+            kind="danger"
+          />
         </div>
       </div>
     </Card>

@@ -9,7 +9,7 @@ import { StepButtons } from "@/components/claims/step-buttons";
 import { StepHead } from "@/components/claims/step-head";
 import { SwapFields } from "@/components/claims/swap-fields";
 import { draftSentences } from "@/lib/web/draft-wording";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { saveStepAction } from "../actions";
 import { loadStep, type StepProps } from "../load-step";
 

@@ -8,7 +8,7 @@ import { StepHead } from "@/components/claims/step-head";
 import { VehicleFields } from "@/components/claims/vehicle-fields";
 import { listInstallers, listUnitsOfDraft } from "@/lib/claims/filing/queries";
 import { draftSentences } from "@/lib/web/draft-wording";
-import { todayOf } from "@/lib/claims/judging/service";
+import { todayOf } from "@/lib/access/today-queries";
 import { lookUpSerial } from "@/lib/parts/queries";
 import { addLineAction, removeLineAction, saveStepAction } from "../actions";
 import { loadStep, type StepProps } from "../load-step";
